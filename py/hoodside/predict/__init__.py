@@ -1,0 +1,1 @@
+"""What a structure would show on each instrument."""
