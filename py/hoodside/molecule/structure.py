@@ -55,6 +55,8 @@ class Structure:
         self.atoms: tuple[Atom, ...] = atoms
         self.bonds: tuple[Bond, ...] = bonds
         self.rings: tuple[tuple[int, ...], ...] = rings
+        #: What other modules worked out about this structure, by a name of theirs.
+        self.memo: dict[str, Any] = {}
         self._matches: dict[tuple[str, bool], Matches] = {}
 
     @cached_property
