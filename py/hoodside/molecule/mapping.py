@@ -44,6 +44,9 @@ class Framework:
                 self._units_at[point].append(unit)
         self._plans: dict[int, list[tuple[int, int, list[int], list[Unit]]]] = {}
         self.settled = Relations()
+        for unit in units:
+            if unit.parity is not None:
+                self.settled.agree(unit.centres, (), unit.parity)
 
     def operation(
         self, start: int, end: int, mirror: bool, pins: Mapping[int, int] | None = None
@@ -61,7 +64,8 @@ class Framework:
         return found
 
     def plan(self, start: int) -> list[tuple[int, int, list[int], list[Unit]]]:
-        """Points outward from ``start``: (point, point it hangs on, its other earlier neighbours, units now whole)."""
+        """Points outward from ``start``, each with the point it hangs on, its other earlier neighbours and
+        the units it makes whole."""
         if start not in self._plans:
             self._plans[start] = list(self._walk(start))
         return self._plans[start]
@@ -190,6 +194,7 @@ class _Search:
         turned = _is_odd([target.ligands.index(p) for p in landed]) ^ (self.mirror and unit.mirrored)
         if unit.parity is not None and target.parity is not None:
             return turned == unit.parity ^ target.parity
+        # One side open: what is chosen for it now must hold for every later operation.
         return self.relations.agree(unit.centres, centres, int(turned))
 
 

@@ -15,6 +15,8 @@ from hoodside.molecule.structure import Bond, Structure
 _FOUR_LIGANDS = frozenset({5, 6, 7, 14, 15, 16, 32, 33, 34, 50})
 _STABLE_PYRAMIDS = frozenset({15, 16, 33, 34})  # P, S, As, Se keep their shape; an amine does not
 _CARBON_LIKE = frozenset({6, 14, 32})
+#: Ends of a double bond, as (element, hydrogens), whose second ligand is their H or lone pair.
+_ONE_MORE = frozenset({(6, 1), (7, 0)})
 #: Largest ring whose double bonds can only be cis.
 _CIS_RING = 7
 
@@ -42,7 +44,7 @@ class Unit:
 
 
 def twin_hydrogens(structure: Structure) -> dict[int, tuple[int, int]]:
-    """CH2 carriers (sp3, and =CH2 ends) -> the two points that stand for their H, numbered after the atoms."""
+    """CH2 carriers (sp3, and =CH2 ends) -> two points for their H, numbered on after the atoms."""
     carriers = [
         atom.index
         for atom in structure.atoms
@@ -171,7 +173,7 @@ def _end_ligands(
     ligands = [b.other(end) for b in structure.bonds_of[end] if b.index not in run]
     if end in twins:
         ligands += twins[end]
-    elif len(ligands) == 1 and (atom.z == 6 and atom.hydrogens == 1 or atom.z == 7 and not atom.hydrogens):
+    elif len(ligands) == 1 and (atom.z, atom.hydrogens) in _ONE_MORE:
         ligands.append(~end)
     return ligands
 

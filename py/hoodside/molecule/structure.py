@@ -15,7 +15,7 @@ from hoodside.molecule.source import MAX_ATOMS, check_size
 
 @dataclass(frozen=True, slots=True)
 class Atom:
-    """One atom. ``hydrogens`` counts the H folded into it; ``stereo`` is "", "cw" or "ccw" (order of bonds)."""
+    """One atom. ``hydrogens`` counts the H folded in; ``stereo`` is "", "cw" or "ccw" (order of bonds)."""
 
     index: int
     symbol: str
@@ -159,7 +159,7 @@ def _read_graph(
     )
     aromatic_atoms = set(extension.get("aromaticAtoms", ()))
     aromatic_bonds = set(extension.get("aromaticBonds", ()))
-    cip = {index: code for index, code in extension.get("cipCodes", ())}
+    cip = dict(extension.get("cipCodes", ()))
     atom_defaults, bond_defaults = graph["defaults"]["atom"], graph["defaults"]["bond"]
     atoms = tuple(
         _atom(i, {**atom_defaults, **raw}, i in aromatic_atoms, cip.get(i, ""))

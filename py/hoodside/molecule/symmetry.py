@@ -13,6 +13,7 @@ from collections.abc import Callable, Iterable
 from dataclasses import dataclass
 from typing import Literal, TypeVar
 
+from hoodside.molecule.cages import opposed_bridgeheads
 from hoodside.molecule.colouring import Connectivity
 from hoodside.molecule.mapping import Framework, Operation
 from hoodside.molecule.stereo_units import Unit, stereo_units, twin_hydrogens
@@ -205,7 +206,11 @@ def _framework(structure: Structure, twins: dict[int, tuple[int, int]], units: l
             neighbours.append((carrier,))
             colours.append(~colours[carrier])
             labels[carrier, point] = labels[point, carrier] = 0
-    return Framework(neighbours, labels, colours, units)
+    frame = Framework(neighbours, labels, colours, units)
+    ring_atoms = {atom for ring in structure.rings for atom in ring}
+    for a, b, turned in opposed_bridgeheads(units, structure.neighbours, ring_atoms):
+        frame.settled.agree(a.centres, b.centres, turned)
+    return frame
 
 
 def _open_centres(units: list[Unit], lone: set[int]) -> list[int]:
