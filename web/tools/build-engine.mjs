@@ -1,0 +1,68 @@
+// Compiles the standard library and the engine to byte code inside the Pyodide that will load them.
+// usage: node build-engine.mjs OUT [--debug]
+import { copyFile, mkdir, readFile, writeFile } from 'node:fs/promises';
+import { createRequire } from 'node:module';
+import { dirname, join, resolve } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { loadPyodide } from 'pyodide';
+
+const here = dirname(fileURLToPath(import.meta.url));
+const repo = resolve(here, '../..');
+const npm = createRequire(import.meta.url);
+const pyodideFolder = dirname(npm.resolve('pyodide'));
+const rdkitFolder = dirname(npm.resolve('@rdkit/rdkit'));
+
+/** @param {string} out @param {boolean} debug */
+async function compileArchives(out, debug) {
+  const python = await loadPyodide({ indexURL: `${pyodideFolder}/` });
+  for (const [inside, outside] of [['/stock', pyodideFolder], ['/py', join(repo, 'py')], ['/tools', here],
+    ['/out', out]]) python.mountNodeFS(inside, outside);
+  python.globals.set('debug', debug);
+  python.runPython(`
+import sys
+sys.dont_write_bytecode = True
+sys.path[:0] = ["/py", "/tools"]
+import compile_bundle
+compile_bundle.standard_library("/stock/python_stdlib.zip", "/out/stdlib.zip", debug)
+compile_bundle.engine("/py/hoodside", "/out/hoodside.zip", debug)
+`);
+}
+
+/** The archives must start by themselves and hold every module that the engine imports. @param {string} out */
+async function tryArchives(out) {
+  const python = await loadPyodide({ indexURL: `${pyodideFolder}/`, stdLibURL: join(out, 'stdlib.zip') });
+  python.registerJsModule('hoodside_kernel', {});
+  python.FS.writeFile('/lib/hoodside.zip', await readFile(join(out, 'hoodside.zip')));
+  python.runPython(`
+import importlib, sys, zipimport
+sys.path.insert(0, "/lib/hoodside.zip")
+outside = {"hoodside.molecule.kernel_cpython", "hoodside.__main__"}
+for path in sorted(zipimport.zipimporter("/lib/hoodside.zip")._get_files()):
+    name = path.partition(".")[0].replace("/", ".").removesuffix(".__init__")
+    if path.endswith((".py", ".pyc")) and name not in outside:
+        importlib.import_module(name)
+`);
+}
+
+/** Pyodide asks for its package list at every start; ours is empty. @param {string} out */
+async function writeLockFile(out) {
+  const lock = JSON.parse(await readFile(join(pyodideFolder, 'pyodide-lock.json'), 'utf8'));
+  await writeFile(join(out, 'pyodide-lock.json'), JSON.stringify({ ...lock, packages: {} }));
+}
+
+/** RDKit comes as UMD, which a module worker cannot import. @param {string} out */
+async function writeRdkitModule(out) {
+  const umd = await readFile(join(rdkitFolder, 'RDKit_minimal.js'), 'utf8');
+  await writeFile(join(out, 'rdkit.mjs'), `${umd}\nexport default initRDKitModule;\n`);
+  await copyFile(join(rdkitFolder, 'RDKit_minimal.wasm'), join(out, 'RDKit_minimal.wasm'));
+}
+
+const out = resolve(process.argv[2]);
+await mkdir(out, { recursive: true });
+await compileArchives(out, process.argv.includes('--debug'));
+await tryArchives(out);
+await writeLockFile(out);
+await writeRdkitModule(out);
+for (const name of ['pyodide.mjs', 'pyodide.asm.mjs', 'pyodide.asm.wasm']) {
+  await copyFile(join(pyodideFolder, name), join(out, name));
+}
