@@ -1,0 +1,121 @@
+"""Saturated carbons: base + increments by distance + branching corrections.
+
+The additive scheme of Clerc and Pretsch for substituted alkanes (Pretsch, Buhlmann and Badertscher, Structure
+Determination of Organic Compounds), after Grant and Paul, J. Am. Chem. Soc. 1964, 86, 2984.
+"""
+
+from __future__ import annotations
+
+from functools import cache
+
+from hoodside.facts import Row, load_table
+from hoodside.molecule import Structure
+from hoodside.predict.carbon.scheme import Estimate
+from hoodside.predict.carbon.substituents import Found, Pattern, Substituents, patterns_of
+from hoodside.predict.model import Term
+
+_SET = "Pretsch"
+_REACH = ("alpha", "beta", "gamma", "delta")
+_ARYL = "phenyl"
+_MULTIPLE = ("N", "O", "S", "P", "F", "Cl", "Br", "I")
+
+
+def estimate_sp3(structure: Structure, atom: int) -> Estimate:
+    """The additive estimate for a saturated carbon, in ppm from TMS."""
+    base = _base()
+    terms = [Term("methane", float(base["delta_ppm"]), base["source"])]
+    terms += _increments(structure, atom)
+    terms += _branching(structure, atom)
+    return Estimate(_class_of(structure, atom), tuple(terms))
+
+
+def _increments(structure: Structure, atom: int) -> list[Term]:
+    """A functional group counts once, at the distance where it begins."""
+    groups = Substituents(structure, _patterns())
+    distances = structure.distances_from(atom)
+    seen, terms = {atom}, []
+    for here in sorted(range(len(distances)), key=distances.__getitem__):
+        if here in seen or not 0 < distances[here] <= len(_REACH):
+            continue
+        nearer = {n for n in structure.neighbours[here] if distances[n] < distances[here]}
+        name, members = _group_at(structure, groups, here, {atom, *nearer})
+        seen |= members
+        if (term := _term(name, _REACH[distances[here] - 1])) is not None:
+            terms.append(term)
+    return terms
+
+
+def _group_at(
+    structure: Structure, groups: Substituents, here: int, outside: set[int]
+) -> tuple[str, set[int]]:
+    """Name of the group that begins here and the atoms it takes up; any aryl counts as phenyl."""
+    found = groups.at(here, outside)
+    if found is not None:
+        return found.pattern.row["substituent"], {here} | _absorbed(structure, found, here)
+    if structure.atoms[here].aromatic:
+        ring = next(r for r in structure.rings if here in r)
+        return _ARYL, {here, *ring} - outside
+    return "", {here}
+
+
+def _absorbed(structure: Structure, found: Found, anchor: int) -> set[int]:
+    """Atoms that belong to the group itself: its heteroatoms and unsaturated carbons, not alkyl on it."""
+    return {
+        a
+        for a in found.atoms
+        if a == anchor or structure.atoms[a].symbol in _MULTIPLE or _unsaturated(structure, a)
+    }
+
+
+def _unsaturated(structure: Structure, atom: int) -> bool:
+    return any(bond.order > 1 or bond.aromatic for bond in structure.bonds_of[atom])
+
+
+def _term(name: str, reach: str) -> Term | None:
+    row = _by_name().get((name, reach))
+    return None if row is None else Term(f"{reach} {name}", float(row["delta_ppm"]), row["source"])
+
+
+def _branching(structure: Structure, atom: int) -> list[Term]:
+    own = len(structure.neighbours[atom])
+    terms = []
+    for near in structure.neighbours[atom]:
+        other = len(structure.neighbours[near])
+        row = _steric().get((own, min(other, 4)))
+        if structure.atoms[near].symbol == "C" and row is not None and float(row["delta_ppm"]):
+            terms.append(Term(f"branching {own}({other})", float(row["delta_ppm"]), row["source"]))
+    return terms
+
+
+def _class_of(structure: Structure, atom: int) -> str:
+    near = [structure.atoms[n] for n in structure.neighbours[atom]]
+    hetero = sorted({n.symbol for n in near if n.symbol != "C"})
+    rings = structure.rings_of[atom]
+    place = f"ring{min(rings)}" if rings and min(rings) < 6 else "ring" if rings else "chain"
+    return f"sp3 {place} {''.join(hetero) or 'C'}"
+
+
+@cache
+def _rows() -> tuple[Row, ...]:
+    return tuple(row for row in load_table("carbon_alkane") if row["set"] == _SET)
+
+
+@cache
+def _patterns() -> tuple[Pattern, ...]:
+    return patterns_of([row for row in _rows() if row["position"] == "alpha"])
+
+
+@cache
+def _by_name() -> dict[tuple[str, str], Row]:
+    return {(row["substituent"], row["position"]): row for row in _rows()}
+
+
+@cache
+def _steric() -> dict[tuple[int, int], Row]:
+    rows = [row for row in _rows() if row["position"] == "steric"]
+    return {(int(row["primary_of"]), int(row["neighbour"])): row for row in rows}
+
+
+@cache
+def _base() -> Row:
+    return next(row for row in _rows() if row["position"] == "base")
