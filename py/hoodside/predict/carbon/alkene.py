@@ -11,7 +11,7 @@ from functools import cache
 from hoodside.facts import Row, load_table
 from hoodside.molecule import Structure
 from hoodside.predict.carbon.scheme import Estimate
-from hoodside.predict.carbon.substituents import Pattern, Substituents, patterns_of
+from hoodside.predict.carbon.substituents import Pattern, patterns_of, substituents_in
 from hoodside.predict.model import Term
 
 _BASE = "base (ethylene)"
@@ -21,7 +21,7 @@ _CIS = "correction: alpha and alpha-prime cis (Z)"
 
 def estimate_alkene(structure: Structure, atom: int, partner: int) -> Estimate:
     """The additive estimate for ``atom`` of the double bond ``atom``=``partner``, in ppm from TMS."""
-    groups = Substituents(structure, _patterns())
+    groups = substituents_in(structure, "carbon_alkene", _patterns())
     base = _rows()[_BASE]
     terms = [Term("ethylene", float(base["z1"]), base["source"])]
     for end, far, column, where in (

@@ -13,7 +13,7 @@ from hoodside.facts import Row, load_table
 from hoodside.molecule import Structure, read_structure
 from hoodside.predict.atom_maps import atom_maps, open_pattern
 from hoodside.predict.carbon.scheme import Estimate
-from hoodside.predict.carbon.substituents import Pattern, Substituents, patterns_of
+from hoodside.predict.carbon.substituents import Pattern, Substituents, patterns_of, substituents_in
 from hoodside.predict.model import Term
 
 _POSITIONS = ("ipso", "ortho", "meta", "para")
@@ -32,7 +32,7 @@ class Parent(NamedTuple):
 def estimate_aromatic(structure: Structure, atom: int) -> Estimate:
     """Parent value + increments for an aromatic carbon, in ppm from TMS."""
     name, base = parent_value(structure, atom)
-    groups = Substituents(structure, _patterns())
+    groups = substituents_in(structure, "carbon_benzene", _patterns())
     ring_atoms = {a.index for a in structure.atoms if a.aromatic}
     terms = [base]
     for ring in structure.rings:

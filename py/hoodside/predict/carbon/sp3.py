@@ -11,7 +11,7 @@ from functools import cache
 from hoodside.facts import Row, load_table
 from hoodside.molecule import Structure
 from hoodside.predict.carbon.scheme import Estimate
-from hoodside.predict.carbon.substituents import Found, Pattern, Substituents, patterns_of
+from hoodside.predict.carbon.substituents import Found, Pattern, Substituents, patterns_of, substituents_in
 from hoodside.predict.model import Term
 
 _SET = "Pretsch"
@@ -31,7 +31,7 @@ def estimate_sp3(structure: Structure, atom: int) -> Estimate:
 
 def _increments(structure: Structure, atom: int) -> list[Term]:
     """A functional group counts once, at the distance where it begins."""
-    groups = Substituents(structure, _patterns())
+    groups = substituents_in(structure, "carbon_alkane", _patterns())
     distances = structure.distances_from(atom)
     seen, terms = {atom}, []
     for here in sorted(range(len(distances)), key=distances.__getitem__):

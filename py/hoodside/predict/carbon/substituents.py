@@ -51,5 +51,14 @@ class Substituents:
         return next((f for f in self._at.get(anchor, ()) if not f.atoms & taken), None)
 
 
+def substituents_in(structure: Structure, table: str, patterns: Sequence[Pattern]) -> Substituents:
+    """The substituents of a structure by one table, found once per structure."""
+    key = f"substituents {table}"
+    if key not in structure.memo:
+        structure.memo[key] = Substituents(structure, patterns)
+    found: Substituents = structure.memo[key]
+    return found
+
+
 def _rank(smarts: str) -> tuple[int, int]:
     return len(_SMARTS_ATOM.findall(re.sub(r"\$\([^)]*\)", "", smarts))), len(smarts)
