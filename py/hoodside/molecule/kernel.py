@@ -11,6 +11,8 @@ import sys
 from collections.abc import Sequence
 from typing import Protocol
 
+from hoodside.errors import StructureError
+
 Matches = tuple[tuple[int, ...], ...]
 
 
@@ -47,10 +49,11 @@ class Kernel(Protocol):
         """2D coordinates per atom, in units where a bond is about 1.5 long, y upward."""
         ...
 
-    def svg(
-        self, source: str, width: int, height: int, atoms: Sequence[int] = (), bonds: Sequence[int] = ()
-    ) -> str:
-        """Drawing in one ink (``currentColor``) on a clear ground, the given atoms and bonds ringed."""
+    def raw_svg(self, source: str, options: str) -> str:
+        """RDKit's own SVG, every atom marked by an ellipse, for ``drawing.in_one_ink`` to finish.
+
+        ``options``: JSON of RDKit drawing options with width and height in pixels.
+        """
         ...
 
     def matches(self, source: str, smarts: Sequence[str], unique: bool = True) -> list[Matches]:
@@ -68,6 +71,18 @@ class Kernel(Protocol):
     def close(self) -> None:
         """Free every cached handle."""
         ...
+
+
+def bad_pattern(smarts: str) -> StructureError:
+    """The error for a SMARTS that does not parse."""
+    return StructureError(f"{smarts!r} is no valid SMARTS pattern.", hint="Mend the pattern.", value=smarts)
+
+
+def bad_reaction(smarts: str) -> StructureError:
+    """The error for a reaction SMARTS that does not parse."""
+    return StructureError(
+        f"{smarts!r} is no valid reaction SMARTS.", hint="Write reactants>>products.", value=smarts
+    )
 
 
 _kernel: Kernel | None = None

@@ -2,17 +2,19 @@
 
 from __future__ import annotations
 
+import json
+import logging
 from collections import OrderedDict
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
+from contextlib import contextmanager
 from functools import lru_cache
 from typing import Any
 
-from rdkit import Chem, RDLogger, rdBase
-from rdkit.Chem import AllChem, rdDepictor
+from rdkit import Chem, rdBase
+from rdkit.Chem import rdChemReactions, rdDepictor
 from rdkit.Chem.Draw import rdMolDraw2D
 
-from hoodside.errors import StructureError
-from hoodside.molecule.kernel import Matches
+from hoodside.molecule.kernel import Matches, bad_pattern, bad_reaction
 from hoodside.molecule.source import Notation, check_size, notation_of, parse_failure
 
 _MAX_HANDLES = 256
@@ -27,7 +29,7 @@ class CPythonKernel:
     def __init__(self) -> None:
         self._open: OrderedDict[str, Any] = OrderedDict()
         Chem.SetUseLegacyStereoPerception(True)  # the browser build starts so; both must agree
-        RDLogger.DisableLog("rdApp.*")
+        _route_log()
 
     def version(self) -> str:
         return str(rdBase.rdkitVersion)
@@ -39,23 +41,24 @@ class CPythonKernel:
         return str(Chem.MolToSmiles(self._mol(source)))
 
     def inchi(self, source: str) -> str:
-        return str(Chem.MolToInchi(self._mol(source)))
+        return str(Chem.MolToInchi(self._mol(source)))  # type: ignore[no-untyped-call]
 
     def inchikey(self, source: str) -> str:
-        return str(Chem.InchiToInchiKey(self.inchi(source)) or "")
+        return str(Chem.InchiToInchiKey(self.inchi(source)) or "")  # type: ignore[no-untyped-call]
 
     def molblock(self, source: str) -> str:
-        return str(Chem.MolToMolBlock(self._laid_out(source)))
+        return str(Chem.MolToMolBlock(_laid_out(self._mol(source))))
 
     def coords(self, source: str) -> list[tuple[float, float]]:
-        conformer = self._laid_out(source).GetConformer()
+        conformer = _laid_out(self._mol(source)).GetConformer()
         return [(p[0], p[1]) for p in conformer.GetPositions()]
 
-    def svg(
-        self, source: str, width: int, height: int, atoms: Sequence[int] = (), bonds: Sequence[int] = ()
-    ) -> str:
-        drawer = rdMolDraw2D.MolDraw2DSVG(width, height)
-        drawer.DrawMolecule(self._laid_out(source), highlightAtoms=list(atoms), highlightBonds=list(bonds))
+    def raw_svg(self, source: str, options: str) -> str:
+        mol = _laid_out(self._mol(source))
+        given = json.loads(options)
+        drawer = rdMolDraw2D.MolDraw2DSVG(given["width"], given["height"])
+        rdMolDraw2D.UpdateDrawerParamsFromJSON(drawer, options)
+        drawer.DrawMolecule(mol, highlightAtoms=list(range(mol.GetNumAtoms())), highlightBonds=[])
         drawer.FinishDrawing()
         return str(drawer.GetDrawingText())
 
@@ -69,12 +72,11 @@ class CPythonKernel:
     def react(self, reaction: str, sources: Sequence[str]) -> list[list[str]]:
         found: dict[tuple[str, ...], None] = {}
         for products in _reaction(reaction).RunReactants([self._mol(s) for s in sources]):
-            try:
-                for product in products:
-                    Chem.SanitizeMol(product)
-            except ValueError:
-                continue
-            found[tuple(Chem.MolToSmiles(p) for p in products)] = None
+            # Products come unsanitised: reading their SMILES again checks valence and finds aromaticity.
+            with _captured_log():
+                cleaned = [Chem.MolFromSmiles(Chem.MolToSmiles(p)) for p in products]
+            if None not in cleaned:
+                found[tuple(Chem.MolToSmiles(p) for p in cleaned)] = None
         return [list(p) for p in found]
 
     def live_handles(self) -> int:
@@ -82,12 +84,6 @@ class CPythonKernel:
 
     def close(self) -> None:
         self._open.clear()
-
-    def _laid_out(self, source: str) -> Any:
-        mol = self._mol(source)
-        if not mol.GetNumConformers():
-            rdDepictor.Compute2DCoords(mol)
-        return mol
 
     def _mol(self, source: str) -> Any:
         mol = self._open.get(source)
@@ -100,33 +96,78 @@ class CPythonKernel:
         return mol
 
 
+def _laid_out(mol: Any) -> Any:
+    """The molecule with flat coordinates: its own, or new ones on a copy."""
+    if mol.GetNumConformers() and not mol.GetConformer().Is3D():
+        return mol
+    copy = Chem.Mol(mol)
+    rdDepictor.Compute2DCoords(copy)
+    return copy
+
+
 def _parse(source: str) -> Any:
     check_size(source)
     notation = notation_of(source)
-    try:
-        if notation is Notation.JSON:
-            mol = Chem.JSONToMols(source)[0]
-        elif notation is Notation.CTFILE:
-            mol = Chem.MolFromMolBlock(source)
-        else:
-            mol = Chem.MolFromSmiles(source)
-    except (RuntimeError, ValueError) as err:
-        raise parse_failure(source, str(err)) from err
+    mol = None
+    with _captured_log() as log:
+        try:
+            if notation is Notation.JSON:
+                mol = Chem.JSONToMols(source)[0]
+            elif notation is Notation.CTFILE:
+                mol = Chem.MolFromMolBlock(source, strictParsing=False)
+            else:
+                mol = Chem.MolFromSmiles(source)
+        except (RuntimeError, ValueError, IndexError) as err:
+            log.append(str(err))
     if mol is None:
-        raise parse_failure(source, "")
+        raise parse_failure(source, "\n".join(log))
     return mol
+
+
+class _Collector(logging.Handler):
+    """Keeps RDKit's messages while a parse listens, and drops them otherwise."""
+
+    def __init__(self) -> None:
+        super().__init__()
+        self.lines: list[str] | None = None
+
+    def emit(self, record: logging.LogRecord) -> None:
+        if self.lines is not None:
+            self.lines.append(record.getMessage())
+
+
+_collector = _Collector()
+
+
+def _route_log() -> None:
+    rdBase.LogToPythonLogger()
+    logger = logging.getLogger("rdkit")
+    logger.handlers[:] = [_collector]
+    logger.propagate = False
+
+
+@contextmanager
+def _captured_log() -> Iterator[list[str]]:
+    lines: list[str] = []
+    _collector.lines = lines
+    try:
+        yield lines
+    finally:
+        _collector.lines = None
 
 
 @lru_cache(maxsize=8192)
 def _query(smarts: str) -> Any:
     query = Chem.MolFromSmarts(smarts)
     if query is None:
-        raise StructureError(
-            f"{smarts!r} is no valid SMARTS pattern.", hint="Mend the pattern.", value=smarts
-        )
+        raise bad_pattern(smarts)
     return query
 
 
 @lru_cache(maxsize=1024)
 def _reaction(smarts: str) -> Any:
-    return AllChem.ReactionFromSmarts(smarts)
+    try:
+        reaction = rdChemReactions.ReactionFromSmarts(smarts)
+    except ValueError as err:
+        raise bad_reaction(smarts) from err
+    return reaction

@@ -10,7 +10,7 @@ from typing import Any
 
 from hoodside.molecule.elements import SYMBOLS
 from hoodside.molecule.kernel import Matches, kernel
-from hoodside.molecule.source import MAX_ATOMS, check_size
+from hoodside.molecule.source import check_atoms, check_size
 
 
 @dataclass(frozen=True, slots=True)
@@ -145,8 +145,7 @@ def read_structure(source: str) -> Structure:
     source = source.strip() if "\n" not in source.strip() else source
     graph = json.loads(kernel().graph_json(source))
     structure = Structure(source, graph)
-    if len(structure.atoms) > MAX_ATOMS:
-        check_size("C" * len(structure.atoms))
+    check_atoms(len(structure.atoms), source)
     return structure
 
 

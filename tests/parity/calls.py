@@ -1,0 +1,96 @@
+"""Calls that parity tests make on both sides: plain Python, JSON in and JSON out."""
+
+from __future__ import annotations
+
+import importlib
+import json
+import time
+from collections.abc import Callable
+from typing import Any
+
+from hoodside.errors import HoodsideError
+from hoodside.molecule import read_structure
+from hoodside.molecule.drawing import draw
+from hoodside.molecule.kernel import kernel
+from hoodside.molecule.symmetry import atom_classes, constitutional_classes, hydrogen_sets
+
+
+def answer_all(calls: str) -> str:
+    """Answers to a JSON list of calls [function, argument, ...], as a JSON list."""
+    return json.dumps([_answer(*call) for call in json.loads(calls)])
+
+
+def _answer(function: str, *arguments: Any) -> dict[str, Any]:
+    try:
+        return {"ok": _found(function)(*arguments)}
+    except HoodsideError as err:
+        return {"error": err.code, "message": str(err), "hint": err.hint}
+
+
+def _found(function: str) -> Callable[..., Any]:
+    module, _, name = function.rpartition(".")
+    return globals()[name] if module == "calls" else getattr(importlib.import_module(module), name)
+
+
+def describe(source: str) -> dict[str, Any]:
+    """Everything the kernels say of a structure that does not depend on layout."""
+    structure = read_structure(source)
+    return {
+        "smiles": structure.smiles,
+        "inchikey": structure.inchikey,
+        "formula": structure.element_counts,
+        "atoms": [[a.symbol, a.hydrogens, a.charge, a.aromatic, a.stereo, a.cip] for a in structure.atoms],
+        "bonds": [[b.a, b.b, b.order, b.aromatic, b.stereo, b.stereo_atoms] for b in structure.bonds],
+        "rings": [sorted(ring) for ring in structure.rings],
+    }
+
+
+def symmetry(source: str) -> list[Any]:
+    """Classes of atoms and sets of hydrogens."""
+    structure = read_structure(source)
+    sets = [[s.atoms, s.n, s.relation, s.slot] for s in hydrogen_sets(structure)]
+    return [constitutional_classes(structure), atom_classes(structure), sets]
+
+
+def matches(source: str, patterns: list[str], unique: bool = True) -> list[Any]:
+    """Matches of many patterns."""
+    return read_structure(source).match_all(patterns, unique)
+
+
+def drawn(source: str, width: int, height: int) -> list[Any]:
+    """A drawing and where its atoms are."""
+    drawing = draw(read_structure(source), width, height, [0], [0])
+    return [drawing.svg, drawing.coords]
+
+
+def react(reaction: str, sources: list[str]) -> list[list[str]]:
+    """Products of a reaction SMARTS."""
+    return kernel().react(reaction, sources)
+
+
+def again_from_ctfile(source: str) -> str:
+    """SMILES after a round trip through a V2000 file."""
+    return read_structure(kernel().molblock(source)).smiles
+
+
+def again_from_graph(source: str) -> str:
+    """SMILES after a round trip through the JSON graph."""
+    return kernel().smiles(kernel().graph_json(source))
+
+
+def live_handles_after(sources: list[str]) -> int:
+    """Handles held after reading many structures."""
+    for source in sources:
+        read_structure(source)
+    return kernel().live_handles()
+
+
+def seconds(function: str, repeat: int, *arguments: Any) -> list[float]:
+    """Wall-clock seconds of each of ``repeat`` calls."""
+    call = _found(function)
+    times = []
+    for _ in range(repeat):
+        start = time.perf_counter()
+        call(*arguments)
+        times.append(time.perf_counter() - start)
+    return times

@@ -1,0 +1,214 @@
+// RDKit's wasm behind a few calls of text: what hoodside/molecule/kernel_browser.py talks to.
+//
+// Every answer is a string. One that starts with "!" is RDKit's complaint about the input. Exceptions
+// mean that the module has trapped (or ran out of memory) and must be started afresh.
+
+import { atomKinds, mightMatch, patternNeeds } from './pattern-needs.js';
+
+const MAX_MOLECULES = 256;
+const MAX_PATTERNS = 6000;
+const MAX_REACTIONS = 256;
+const MAX_PATTERN_LISTS = 64;
+// RDKit stops at 1,000 matches without saying so.
+const SILENT_LIMIT = 1000;
+const MAX_MATCHES = 100_000;
+const MAX_PRODUCT_SETS = 1000;
+const NO_MATCH = '{}';
+
+class BadPattern extends Error {}
+
+/** A cache of objects that must be freed by hand, least recently used first. */
+class HandleCache {
+  #open = new Map();
+  #limit;
+
+  constructor(limit) {
+    this.#limit = limit;
+  }
+
+  get size() {
+    return this.#open.size;
+  }
+
+  obtain(key, make) {
+    let entry = this.#open.get(key);
+    if (entry === undefined) entry = make();
+    else this.#open.delete(key);
+    if (entry === null) return null;
+    this.#open.set(key, entry);
+    if (this.#open.size > this.#limit) this.#drop(this.#open.keys().next().value);
+    return entry;
+  }
+
+  clear() {
+    for (const key of [...this.#open.keys()]) this.#drop(key);
+  }
+
+  #drop(key) {
+    this.#open.get(key).handle.delete();
+    this.#open.delete(key);
+  }
+}
+
+/**
+ * @param {object} RDKit the initialised RDKit MinimalLib module
+ * @returns the object to register in Pyodide as module `hoodside_kernel`
+ */
+export function makeBridge(RDKit) {
+  RDKit.use_legacy_stereo_perception(true);
+  const molecules = new HandleCache(MAX_MOLECULES);
+  const patterns = new HandleCache(MAX_PATTERNS);
+  const reactions = new HandleCache(MAX_REACTIONS);
+  const lists = new Map();
+
+  // Runs `make` and, when nothing comes of it, keeps what RDKit said.
+  let complaint = '';
+  const listening = (make) => {
+    const log = RDKit.set_log_capture('rdApp.error');
+    try {
+      const handle = make();
+      complaint = handle ? '' : log.get_buffer();
+      return handle && { handle };
+    } finally {
+      log?.delete();
+    }
+  };
+
+  const molecule = (source) => molecules.obtain(source, () => listening(() => RDKit.get_mol(source)));
+  const withMolecule = (source, answer) => {
+    const entry = molecule(source);
+    return entry ? answer(entry.handle, entry) : `!${complaint}`;
+  };
+  const pattern = (smarts) => patterns.obtain(smarts, () => listening(() => RDKit.get_qmol(smarts)));
+  const reaction = (smarts) => reactions.obtain(smarts, () => listening(() => RDKit.get_rxn(smarts)));
+
+  const inchi = (mol) => mol.get_inchi();
+  const answers = {
+    graph: (mol) => mol.get_json(),
+    smiles: (mol) => mol.get_smiles(),
+    inchi,
+    inchikey: (mol) => RDKit.get_inchikey_for_inchi(inchi(mol)),
+    molblock: (mol) => laidOut(mol, (flat) => flat.get_molblock()),
+    coords: (mol) => laidOut(mol, (flat) => JSON.stringify([...flat.get_coords()].map(([x, y]) => [x, y]))),
+  };
+
+  const kindsOf = (entry) => (entry.kinds ??= atomKinds(JSON.parse(entry.handle.get_json())));
+
+  const matchesOf = (mol, smarts, options) => {
+    const query = pattern(smarts);
+    if (!query) throw new BadPattern(smarts);
+    let found = options ? mol.get_substruct_matches(query.handle, options) : mol.get_substruct_matches(query.handle);
+    if (found === NO_MATCH) return null;
+    found = JSON.parse(found);
+    if (!options && found.length >= SILENT_LIMIT) return matchesOf(mol, smarts, matchOptions(true));
+    return found.map((match) => match.atoms);
+  };
+
+  const matchList = (entry, list, unique) => {
+    const kinds = kindsOf(entry);
+    const options = unique ? '' : matchOptions(false);
+    const found = [];
+    list.forEach(({ smarts, needs }, index) => {
+      const matches = mightMatch(needs, kinds) ? matchesOf(entry.handle, smarts, options) : null;
+      if (matches) found.push([index, matches]);
+    });
+    return JSON.stringify(found);
+  };
+
+  return {
+    version: () => RDKit.version(),
+
+    /** One fact about a molecule: graph, smiles, inchi, inchikey, molblock or coords (JSON). */
+    ask: (what, source) => withMolecule(source, (mol) => answers[what](mol)),
+
+    /** RDKit's SVG with the given drawing options (JSON). */
+    svg: (source, options) => withMolecule(source, (mol) => markedSvg(mol, options)),
+
+    /** Remembers a list of SMARTS (JSON) under a name, so that it crosses the border once. */
+    keepPatterns(name, smartsJson) {
+      if (lists.size >= MAX_PATTERN_LISTS) lists.delete(lists.keys().next().value);
+      lists.set(name, JSON.parse(smartsJson).map((smarts) => ({ smarts, needs: patternNeeds(smarts) })));
+      return '';
+    },
+
+    /** Matches of a kept list: JSON [[index in list, [[atom, …], …]], …], patterns without any left out. */
+    matchAll(source, name, unique) {
+      const list = lists.get(name);
+      if (!list) return '?';
+      return withMolecule(source, (_, entry) => {
+        try {
+          return matchList(entry, list, unique);
+        } catch (error) {
+          if (error instanceof BadPattern) return `!SMARTS ${error.message}`;
+          throw error;
+        }
+      });
+    },
+
+    /** Product sets of a reaction SMARTS as JSON [[smiles, …], …], duplicates and impossible ones left out. */
+    react(smarts, sourcesJson) {
+      const rxn = reaction(smarts);
+      if (!rxn) return `!REACTION ${complaint}`;
+      const reactants = JSON.parse(sourcesJson).map(molecule);
+      if (reactants.includes(null)) return `!${complaint}`;
+      return JSON.stringify(runReaction(RDKit, rxn.handle, reactants.map((r) => r.handle)));
+    },
+
+    liveHandles: () => molecules.size,
+
+    close() {
+      for (const cache of [molecules, patterns, reactions]) cache.clear();
+      lists.clear();
+      return '';
+    },
+  };
+}
+
+const FLAT = 2;
+
+// Gives `use` the molecule with flat coordinates: its own, or new ones on a copy.
+function laidOut(mol, use) {
+  if (mol.has_coords() === FLAT) return use(mol);
+  const copy = mol.copy();
+  try {
+    copy.set_new_coords();
+    return use(copy);
+  } finally {
+    copy.delete();
+  }
+}
+
+// Every atom marked, so that Python can tell where it was drawn.
+function markedSvg(mol, options) {
+  const atoms = Array.from({ length: mol.get_num_atoms() }, (_, index) => index);
+  return laidOut(mol, (flat) => flat.get_svg_with_highlights(JSON.stringify({ ...JSON.parse(options), atoms })));
+}
+
+const matchOptions = (uniquify) => JSON.stringify({ uniquify, maxMatches: MAX_MATCHES });
+
+function runReaction(RDKit, rxn, reactants) {
+  const list = new RDKit.MolList();
+  reactants.forEach((mol) => list.append(mol));
+  const sets = rxn.run_reactants(list, MAX_PRODUCT_SETS);
+  const found = new Map();
+  for (let i = 0; i < sets.size(); i += 1) {
+    const products = sets.get(i);
+    const smiles = [];
+    for (let k = 0; k < products.size(); k += 1) smiles.push(cleaned(RDKit, products.at(k)));
+    if (!smiles.includes(null)) found.set(smiles.join('.'), smiles);
+    products.delete();
+  }
+  sets.delete();
+  list.delete();
+  return [...found.values()];
+}
+
+// Products come unsanitised: reading their SMILES again checks valence and finds aromaticity.
+function cleaned(RDKit, product) {
+  const raw = product.get_smiles();
+  product.delete();
+  const mol = RDKit.get_mol(raw);
+  const smiles = mol ? mol.get_smiles() : null;
+  mol?.delete();
+  return smiles;
+}
