@@ -11,8 +11,8 @@ from rdkit import Chem
 from hoodside.predict.formula import exact_mass, isotope_pattern, parse_formula
 
 # M, M+2, M+4, M+6 for Cl and Br combinations: Silverstein, Webster & Kiemle, Spectrometric Identification of
-# Organic Compounds, 7th ed. 2005, table of halogen isotope peaks (relative to M = 100); from memory. Made with
-# rounded abundances (Cl 32.5 %, Br 98.0 %): an error of 1.5 % for every heavy atom in the peak.
+# Organic Compounds, 7th ed. 2005, table of halogen isotope peaks (relative to M = 100); from memory. Made
+# with rounded abundances (Cl 32.5 %, Br 98.0 %): an error of 1.5 % for every heavy atom in the peak.
 HALOGENS = [
     ("Cl", (32.5,)),
     ("Cl2", (65.3, 10.6)),

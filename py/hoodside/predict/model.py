@@ -59,6 +59,9 @@ class IrExpectation:
     absence_counts: bool  # whether not seeing it speaks against the structure
     atoms: tuple[int, ...]
     source: str
+    sd: float = 12.0  # cm-1, standard deviation of printed about typical
+    pair: str = ""  # expectations with the same non-empty pair belong together ("nitro arene:3")
+    terms: tuple[Term, ...] = ()  # base + shifts; they sum to typical
 
 
 @dataclass(frozen=True, slots=True)
