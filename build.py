@@ -25,6 +25,7 @@ ROOT = Path(__file__).resolve().parent
 VENV = ROOT / ".venv"
 WEB = ROOT / "web"
 NPM_PACKAGES = WEB / "node_modules"
+WORKBOX_CONFIG = WEB / "workbox-config.cjs"
 DIST = ROOT / "dist"
 STAMPS = ROOT / ".build"
 ON_WINDOWS = os.name == "nt"
@@ -108,9 +109,10 @@ def build_engine(debug: bool) -> str | None:
     runtime = STAMPS / "runtime"
     if _is_stamped(STAMPS / "runtime-key", key):
         return "unchanged"
-    shutil.rmtree(runtime, ignore_errors=True)
-    _run([_node(), WEB / "tools/build-engine.mjs", runtime, *(["--debug"] if debug else [])])
-    _gzip_beside(runtime)
+    coming = _new_folder("runtime")
+    _run([_node(), WEB / "tools/build-engine.mjs", coming, *(["--debug"] if debug else [])])
+    _gzip_beside(coming)
+    _swap_in(coming, runtime)
     _stamp(STAMPS / "runtime-key", key)
     return None
 
@@ -121,13 +123,12 @@ def build_app(debug: bool) -> str | None:
     key = _hash_text([_runtime_key(debug), _hash_files([Path(__file__), *_app_sources()])])
     if DIST.exists() and _is_stamped(STAMPS / "dist", key):
         return "unchanged"
-    coming = STAMPS / "dist-coming"
-    shutil.rmtree(coming, ignore_errors=True)
+    coming = _new_folder("dist")
     _lay_out(coming)
     _run([_node(), WEB / "tools/vendor.mjs", coming / "vendor", coming / "index.html"])
-    _generate_service_worker(coming)
     _gzip_beside(coming)
-    _swap_in(coming)
+    write_service_worker(coming)
+    _swap_in(coming, DIST)
     _stamp(STAMPS / "dist", key)
     return _size_note()
 
@@ -274,14 +275,12 @@ def _lay_out(target: Path) -> None:
     shutil.copy(WEB / "sw/sw-extra.js", target)
 
 
-def _generate_service_worker(target: Path) -> None:
-    """Raises: StepError on any warning, since workbox goes on after leaving files out."""
-    command: Command = [
-        _node(),
-        NPM_PACKAGES / "workbox-cli/build/bin.js",
-        "generateSW",
-        WEB / "workbox-config.cjs",
-    ]
+def write_service_worker(target: Path) -> None:
+    """Write the service worker for the files in ``target``, all of which it will keep.
+
+    Raises: StepError on any warning, since workbox goes on after leaving files out.
+    """
+    command: Command = [_node(), NPM_PACKAGES / "workbox-cli/build/bin.js", "generateSW", WORKBOX_CONFIG]
     quiet = {"HOODSIDE_DIST": str(target), "NO_UPDATE_NOTIFIER": "1", "FORCE_COLOR": "0"}
     said = _run(command, env={**os.environ, **quiet})
     troubles = [line for line in said.splitlines() if "warn" in line.lower() or "needed offline" in line]
@@ -297,9 +296,16 @@ def _gzip_beside(folder: Path) -> None:
             packed.write_bytes(gzip.compress(path.read_bytes(), 9, mtime=0))
 
 
-def _swap_in(coming: Path) -> None:
-    shutil.rmtree(DIST, ignore_errors=True)
-    coming.rename(DIST)
+def _new_folder(name: str) -> Path:
+    """A folder that a failed or a second build cannot mistake for its own."""
+    folder = STAMPS / f"{name}-{os.getpid()}"
+    shutil.rmtree(folder, ignore_errors=True)
+    return folder
+
+
+def _swap_in(coming: Path, target: Path) -> None:
+    shutil.rmtree(target, ignore_errors=True)
+    coming.rename(target)
 
 
 def _size_note() -> str:

@@ -33,8 +33,9 @@ async function fetchMissing() {
 }
 
 worker.addEventListener('message', (event) => {
-  if (event.data?.type === 'WHAT_IS_KEPT') {
-    event.waitUntil(whatIsKept().then((kept) => event.ports[0].postMessage(kept)));
+  const asked = event.data?.type;
+  const fetched = asked === 'FETCH_MISSING' ? fetchMissing().catch(() => {}) : null;
+  if (fetched || asked === 'WHAT_IS_KEPT') {
+    event.waitUntil(Promise.resolve(fetched).then(whatIsKept).then((kept) => event.ports[0].postMessage(kept)));
   }
-  if (event.data?.type === 'FETCH_MISSING') event.waitUntil(fetchMissing().catch(() => {}));
 });

@@ -3,16 +3,18 @@
 
 const POLL_MS = 700;
 const ASK_MS = 4_000;
+const FETCH_MS = 300_000;
 const RETRY_MS = [5_000, 20_000, 60_000, 300_000];
 
-/** Ask a service worker which files of its own version the device keeps.
- * @param {ServiceWorker} worker @returns {Promise<Kept | null>} null when it gives no answer */
-function askKept(worker) {
+/** Ask a service worker which files of its own version the device keeps, or to fetch those it lacks first.
+ * @param {ServiceWorker} worker @param {'WHAT_IS_KEPT' | 'FETCH_MISSING'} type @param {number} patienceMs
+ * @returns {Promise<Kept | null>} null when it gives no answer */
+function ask(worker, type, patienceMs) {
   const { port1, port2 } = new MessageChannel();
   return new Promise((resolve) => {
-    setTimeout(() => resolve(null), ASK_MS);
+    setTimeout(() => resolve(null), patienceMs);
     port1.onmessage = ({ data }) => resolve(data);
-    worker.postMessage({ type: 'WHAT_IS_KEPT' }, [port2]);
+    worker.postMessage({ type }, [port2]);
   });
 }
 
@@ -47,17 +49,21 @@ async function register() {
 /** @param {ServiceWorkerRegistration} registration @param {(state: OfflineState, kept?: Kept) => void} onState */
 async function followUntilReady(registration, onState) {
   for (let failures = 0; ;) {
-    const worker = registration.active ?? registration.waiting ?? registration.installing;
-    const kept = worker && await askKept(worker);
-    if (kept && registration.active && kept.present === kept.total) return onState('ready', kept);
+    const { active, waiting, installing } = registration;
+    const worker = active ?? waiting ?? installing;
+    const kept = worker && await ask(worker, 'WHAT_IS_KEPT', ASK_MS);
+    if (active && isWhole(kept)) return onState('ready', kept);
     onState('fetching', kept ?? undefined);
-    const working = worker && !registration.active;
-    await pause(working ? POLL_MS : RETRY_MS[Math.min(failures++, RETRY_MS.length - 1)]);
-    // The install broke off, or the browser threw files away: fetch again what is missing.
-    if (registration.active) registration.active.postMessage({ type: 'FETCH_MISSING' });
-    else if (!working) registration = await register() ?? registration;
+    // The browser may have thrown files away.
+    if (active && isWhole(await ask(active, 'FETCH_MISSING', FETCH_MS))) continue;
+    await pause(worker && !active ? POLL_MS : RETRY_MS[Math.min(failures++, RETRY_MS.length - 1)]);
+    // A first install that broke off leaves nothing behind.
+    if (!worker) registration = await register() ?? registration;
   }
 }
+
+/** @param {Kept | null} kept @returns {kept is Kept} */
+const isWhole = (kept) => kept !== null && kept.present === kept.total;
 
 /** @param {ServiceWorkerRegistration} registration @param {(apply: () => void) => void} onUpdate */
 function offerUpdates(registration, onUpdate) {
