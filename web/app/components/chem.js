@@ -1,0 +1,25 @@
+import { html } from 'htm/preact';
+
+/** A formula with its figures lowered: C10H12O. Also takes charges and solvents such as CDCl3.
+ * @param {{ text: string }} props */
+export function Formula({ text }) {
+  const parts = text.split(/(\d+)/).map((part, i) => (i % 2 ? html`<sub>${part}</sub>` : part));
+  return html`<span class="formula">${parts}</span>`;
+}
+
+/** Running text in which nuclei stand raised (1H, 13C) and formulas of a few known shapes lowered.
+ * @param {{ text: string }} props */
+export function Words({ text }) {
+  const parts = String(text ?? '').split(/(\b(?:1H|13C|19F|31P)\b|\b[A-Z][A-Za-z0-9()]*\d[A-Za-z0-9()]*\b)/);
+  return html`${parts.map((part, i) => (i % 2 ? typeset(part) : part))}`;
+}
+
+/** @param {string} part */
+function typeset(part) {
+  const nucleus = part.match(/^(1|13|19|31)(H|C|F|P)$/);
+  if (nucleus) return html`<sup>${nucleus[1]}</sup>${nucleus[2]}`;
+  return /^([A-Z][a-z]?\d*|[()]\d*)+$/.test(part) ? html`<${Formula} text=${part} />` : part;
+}
+
+export const Proton = () => html`<sup>1</sup>H`;
+export const Carbon13 = () => html`<sup>13</sup>C`;

@@ -1,0 +1,57 @@
+import { signal } from '@preact/signals';
+import { createEngine } from '../../worker/client.js';
+
+/** @typedef {import('../types').Fault} Fault */
+
+/** @type {import('@preact/signals').Signal<'waking' | 'ready' | 'failed'>} */
+export const engineState = signal('waking');
+/** Why the engine did not start, in plain words; '' while all is well. */
+export const engineTrouble = signal('');
+export const wakingSince = signal(Date.now());
+
+/** @type {ReturnType<typeof createEngine> | null} */
+let engine = null;
+
+export function startEngine() {
+  engine = createEngine({
+    onState: (/** @type {any} */ state, /** @type {any} */ detail) => {
+      if (state === 'waking') wakingSince.value = Date.now();
+      engineTrouble.value = state === 'failed' ? asFault(detail).message : '';
+      engineState.value = state;
+    },
+  });
+}
+
+/** Any rejection as a fault with words in it. @param {any} error @returns {Fault} */
+export function asFault(error) {
+  if (typeof error === 'string') return { message: error, hint: '', field: '' };
+  return { code: error?.code, message: error?.message ?? 'The chemistry gave no answer.', hint: error?.hint ?? '',
+    field: error?.field ?? '', value: error?.value };
+}
+
+/** @param {string} method @param {object} params @param {{ signal?: AbortSignal, timeoutMs?: number }} [options]
+ * @returns {Promise<any>} */
+export function call(method, params, options) {
+  if (!engine) return Promise.reject(asFault('The chemistry has not been started.'));
+  return engine.call(method, params, options);
+}
+
+/** @type {Map<string, Promise<any>>} */
+const remembered = new Map();
+const KEEP = 400;
+
+/** Like `call`, for questions whose answer never changes: asked once, then remembered.
+ * @param {string} method @param {object} params @returns {Promise<any>} */
+export function ask(method, params) {
+  const key = method + JSON.stringify(params);
+  const known = remembered.get(key);
+  if (known) return known;
+  const answer = call(method, params);
+  remembered.set(key, answer);
+  answer.catch((error) => {
+    // A refusal of the input stays true; a crash or a stop does not.
+    if (!/^invalid/.test(error?.code ?? '')) remembered.delete(key);
+  });
+  if (remembered.size > KEEP) remembered.delete(/** @type {string} */ (remembered.keys().next().value));
+  return answer;
+}

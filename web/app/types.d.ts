@@ -1,0 +1,104 @@
+/** One 1H signal as typed; numbers stay text so that what was typed is never lost. */
+export interface ProtonRow { id: string; shift: string; mult: string; j: string; h: string; note?: string }
+/** One 13C line as typed. */
+export interface CarbonRow { id: string; ppm: string; kind: string; n: string }
+/** One IR band; `region` holds the strip region while the position is still empty. */
+export interface BandRow { id: string; cm1: string; strength: string; shape: string; region: string }
+/** A stretch of flat IR baseline, cm-1. */
+export interface ClearRow { id: string; lo: number; hi: number }
+export interface PeakRow { id: string; mz: string; rel: string }
+export interface WetRow { id: string; test: string; result: 'positive' | 'negative' }
+export interface AccurateMass { found: string; adduct: string; ppm: string }
+/** A picture of a printout; the image itself lies in the photo store under the same id. */
+export interface PhotoRef { id: string; name: string; taken: string }
+/** A candidate of the case. `smiles`, `formula` and `svg` come from the engine when it is added. */
+export interface Candidate { id: string; source: string; name: string; smiles: string; formula: string; svg: string }
+/** What the case list shows without waking the chemistry. */
+export interface Summary { verdict: Verdict; text: string; lead: string }
+
+export interface CaseDoc {
+  id: string;
+  kind: 'hoodside-case';
+  version: 1;
+  title: string;
+  created: string;
+  changed: string;
+  invented: boolean;
+  demo: string;
+  story: string;
+  /** Hazards of what was run, shown with the readings. */
+  cautions: string[];
+  formula: string;
+  solvent: string;
+  mhz: string;
+  raw: boolean;
+  h1: ProtonRow[];
+  c13: CarbonRow[];
+  irMedium: string;
+  ir: BandRow[];
+  irClear: ClearRow[];
+  ms: PeakRow[];
+  hrms: AccurateMass;
+  analysis: Record<string, string>;
+  wet: WetRow[];
+  structures: Candidate[];
+  intended: string;
+  photos: PhotoRef[];
+  last: Summary | null;
+}
+
+export type Verdict = 'fits' | 'clashes' | 'undecided' | 'none';
+
+/** An error as the engine or the worker client gives it. */
+export interface Fault { code?: string; message: string; hint: string; field: string; value?: string | null }
+
+export interface Finding {
+  kind: string; weight_db: number; text: string; readings: string[]; atoms: number[]; source: string;
+}
+export interface Assigned { reading: string; predicted: string; atoms: number[] }
+export interface Weighed {
+  smiles: string; origin: string; verdict: Verdict; weight_db: number; share: number; reason?: string;
+  findings: Finding[]; assignment: Assigned[]; formula?: string; index?: number;
+}
+export interface Advice {
+  measure: string; why: string; separates: number[][]; expected_db: number; cautions: string[];
+  effort?: string; if_then?: string[]; kind?: string; test?: string;
+}
+export interface CheckAnswer {
+  id: string; formula: string; dbe: number | null; warnings: string[]; candidates: Weighed[]; next: Advice[];
+  verdict?: Verdict; summary?: string;
+}
+
+export interface Term { label: string; value: number; source: string }
+export interface ProtonGroup {
+  ppm: number; sd: number; mult: string; j: number[]; n: number; atoms: number[]; exchangeable: boolean;
+  equivalence: string; environment?: string; terms: Term[]; lo?: number | null; hi?: number | null;
+}
+export interface CarbonGroup {
+  ppm: number; sd: number; kind: string; n: number; atoms: number[]; environment?: string; terms: Term[];
+}
+export interface IrExpectation {
+  lo: number; hi: number; typical?: number; mode: string; group: string; strength: string; shape: string;
+  absence_counts: boolean; atoms?: number[]; source?: string;
+}
+export interface MassExpectation { mz: number; label: string; weight: number; atoms: number[]; source: string }
+export interface Prediction {
+  smiles: string; formula: string; exact_mass: number; dbe: number;
+  h1: ProtonGroup[]; c13: CarbonGroup[]; ir: IrExpectation[]; ms: unknown;
+}
+
+export interface IrRegion { id: string; lo: number; hi: number; name: string; holds: string[]; absence: string }
+export interface FormulaFacts {
+  formula: string; parts: [string, number][]; exact_mass: number; average_mass: number; dbe: number;
+  isotope_pattern: { mz: number; rel: number }[]; warnings: string[];
+}
+export interface Description {
+  source: string; smiles: string; formula: string; exact_mass: number; average_mass: number; dbe: number;
+  charge: number; inchi: string; inchikey: string; svg: string; heavy_atoms: number;
+  stereocentres: { atom: number; label: string }[]; warnings: string[];
+}
+export interface Parsed {
+  readings: any;
+  unread: { text: string; start: number; end: number; why: string }[];
+  pieces: { text: string; start: number; end: number; means: string }[];
+}

@@ -1,0 +1,35 @@
+import { html } from 'htm/preact';
+import { go } from '../../state/route.js';
+import { say } from '../../state/toast.js';
+import { importCase } from '../cases/menu.js';
+import { pastedStructure } from '../structures/paste-sheet.js';
+import { pasted } from './paste-sheet.js';
+
+/** @typedef {'case' | 'structure' | 'report'} FileKind */
+
+const MAX_BYTES = 4_000_000;
+
+/** What a file is, by its content: names and types of files are not to be trusted on phones.
+ * @param {string} text @returns {FileKind} */
+export function sniff(text) {
+  if (/^\s*[{[]/.test(text)) return 'case';
+  if (/\bV[23]000\b/.test(text.slice(0, 2000)) && /M {2}END/.test(text)) return 'structure';
+  return 'report';
+}
+
+/** A file button: case, CTfile, report text or JCAMP-DX. @param {{ doc: import('../../types').CaseDoc }} props */
+export function OpenFile({ doc }) {
+  const open = async (/** @type {any} */ event) => {
+    const input = event.currentTarget;
+    const file = /** @type {File | undefined} */ (input.files?.[0]);
+    input.value = '';
+    if (!file) return;
+    if (file.size > MAX_BYTES) { say(`${file.name} is larger than 4 MB and was not read. Take the part with the peak list.`); return; }
+    const text = await file.text();
+    const kind = sniff(text);
+    if (kind === 'case') await importCase(file);
+    else if (kind === 'structure') { pastedStructure.value = text; go('case', doc.id, 'structures', 'paste'); }
+    else { pasted.value = text; go('case', doc.id, 'readings', 'paste'); }
+  };
+  return html`<label class="button file-button">Open a file<input type="file" onChange=${open} /></label>`;
+}

@@ -1,0 +1,16 @@
+import { html } from 'htm/preact';
+import { NameSheet } from './name-sheet.js';
+import { OneStructure } from './one-sheet.js';
+import { PasteStructure } from './paste-sheet.js';
+
+/** @typedef {import('../../types').CaseDoc} CaseDoc */
+
+/** @type {Record<string, (doc: CaseDoc, arg: string) => any>} */
+const SHEETS = {
+  paste: (doc) => html`<${PasteStructure} doc=${doc} />`,
+  name: (doc) => html`<${NameSheet} doc=${doc} />`,
+  one: (doc, arg) => html`<${OneStructure} doc=${doc} id=${arg} />`,
+};
+
+/** @param {CaseDoc} doc @param {string[]} steps */
+export const structureSheet = (doc, [name = '', arg = '']) => SHEETS[name]?.(doc, arg) ?? null;

@@ -1,0 +1,27 @@
+import { html } from 'htm/preact';
+import { address } from '../../state/route.js';
+import { Section } from '../../components/parts.js';
+import { currentCheck } from '../../state/check.js';
+import { CheckTrouble } from '../readings/check-trouble.js';
+import { RivalCard, StructureCard } from './card.js';
+
+/** The second station: what it could be. @param {{ doc: import('../../types').CaseDoc }} props */
+export function Structures({ doc }) {
+  const { found } = currentCheck.value;
+  const rivals = (found?.answer.candidates ?? []).map((candidate, at) => ({ candidate, at })).filter(({ at }) => !found?.order[at]);
+  return html`<div class="structures">
+    ${doc.structures.length === 0 && html`<p class="empty">Put up the structure you mean to have made, and what else it could be.
+      A structure that fits says little until its look-alikes are ruled out.</p>`}
+    <ul class="grid">
+      ${doc.structures.map((entry) => html`<${StructureCard} key=${entry.id} doc=${doc} structure=${entry} />`)}
+      ${rivals.map(({ candidate, at }) => html`<${RivalCard} key=${candidate.smiles} doc=${doc} candidate=${candidate} at=${at} />`)}
+    </ul>
+    <${CheckTrouble} />
+    <${Section} title="Add a structure">
+      <div class="two-up">
+        <a class="button primary" href=${address('case', doc.id, 'structures', 'name')}>By name</a>
+        <a class="button primary" href=${address('case', doc.id, 'structures', 'paste')}>Paste SMILES or CTfile</a>
+      </div>
+    <//>
+  </div>`;
+}

@@ -1,0 +1,23 @@
+/** @typedef {import('../types').CaseDoc} CaseDoc */
+
+/** Letter of a structure in its case: A, B, ... Z, AA. @param {number} at @returns {string} */
+export function letter(at) {
+  const last = String.fromCharCode(65 + (at % 26));
+  return at < 26 ? last : letter(Math.floor(at / 26) - 1) + last;
+}
+
+/** @param {CaseDoc} doc @param {string} id */
+export const letterOf = (doc, id) => letter(doc.structures.findIndex((entry) => entry.id === id));
+
+/** @param {CaseDoc} doc @param {string} id */
+export function nameOf(doc, id) {
+  const found = doc.structures.find((entry) => entry.id === id);
+  return found ? found.name || `structure ${letterOf(doc, id)}` : '';
+}
+
+/** Name of the weighed candidate at `at`; rivals are numbered as they stand.
+ * @param {CaseDoc} doc @param {import('../state/check.js').Checked} found @param {number} at */
+export function structureName(doc, found, at) {
+  const id = found.order[at] ?? '';
+  return id ? nameOf(doc, id) : `rival ${found.order.slice(0, at + 1).filter((entry) => !entry).length}`;
+}
