@@ -73,9 +73,9 @@ def again_from_ctfile(source: str) -> str:
     return read_structure(kernel().molblock(source)).smiles
 
 
-def again_from_graph(source: str) -> str:
-    """SMILES after a round trip through the JSON graph."""
-    return kernel().smiles(kernel().graph_json(source))
+def again_from_graph(source: str) -> dict[str, Any]:
+    """What is said of a structure after a round trip through its JSON graph."""
+    return describe(kernel().graph_json(source))
 
 
 def live_handles_after(sources: list[str]) -> int:

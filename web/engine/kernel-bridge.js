@@ -14,6 +14,7 @@ const SILENT_LIMIT = 1000;
 const MAX_MATCHES = 100_000;
 const MAX_PRODUCT_SETS = 1000;
 const NO_MATCH = '{}';
+const GRAPH_OPTIONS = JSON.stringify({ assignCIPLabels: true });
 
 class BadPattern extends Error {}
 
@@ -56,6 +57,7 @@ class HandleCache {
  */
 export function makeBridge(RDKit) {
   RDKit.use_legacy_stereo_perception(true);
+  RDKit.allow_non_tetrahedral_chirality(false);
   const molecules = new HandleCache(MAX_MOLECULES);
   const patterns = new HandleCache(MAX_PATTERNS);
   const reactions = new HandleCache(MAX_REACTIONS);
@@ -74,7 +76,18 @@ export function makeBridge(RDKit) {
     }
   };
 
-  const molecule = (source) => molecules.obtain(source, () => listening(() => RDKit.get_mol(source)));
+  // Only the newer perception reads double-bond marks from a JSON graph (and drops those that no longer hold).
+  const fromGraph = (source) => {
+    RDKit.use_legacy_stereo_perception(false);
+    try {
+      return RDKit.get_mol(source, GRAPH_OPTIONS);
+    } finally {
+      RDKit.use_legacy_stereo_perception(true);
+    }
+  };
+  const isGraph = (source) => source.trimStart().startsWith('{');
+  const parse = (source) => (isGraph(source) ? fromGraph(source) : RDKit.get_mol(source));
+  const molecule = (source) => molecules.obtain(source, () => listening(() => parse(source)));
   const withMolecule = (source, answer) => {
     const entry = molecule(source);
     return entry ? answer(entry.handle, entry) : `!${complaint}`;
@@ -82,12 +95,14 @@ export function makeBridge(RDKit) {
   const pattern = (smarts) => patterns.obtain(smarts, () => listening(() => RDKit.get_qmol(smarts)));
   const reaction = (smarts) => reactions.obtain(smarts, () => listening(() => RDKit.get_rxn(smarts)));
 
-  const inchi = (mol) => mol.get_inchi();
+  // Names are taken from the SMILES, so that one molecule has one name whatever it was read from.
+  const named = (mol, source) => (isGraph(source) ? molecule(mol.get_smiles()).handle : mol);
+  const inchi = (mol, source) => named(mol, source).get_inchi();
   const answers = {
     graph: (mol) => mol.get_json(),
-    smiles: (mol) => mol.get_smiles(),
+    smiles: (mol, source) => named(mol, source).get_smiles(),
     inchi,
-    inchikey: (mol) => RDKit.get_inchikey_for_inchi(inchi(mol)),
+    inchikey: (mol, source) => RDKit.get_inchikey_for_inchi(inchi(mol, source)),
     molblock: (mol) => laidOut(mol, (flat) => flat.get_molblock()),
     coords: (mol) => laidOut(mol, (flat) => JSON.stringify([...flat.get_coords()].map(([x, y]) => [x, y]))),
   };
@@ -119,7 +134,7 @@ export function makeBridge(RDKit) {
     version: () => RDKit.version(),
 
     /** One fact about a molecule: graph, smiles, inchi, inchikey, molblock or coords (JSON). */
-    ask: (what, source) => withMolecule(source, (mol) => answers[what](mol)),
+    ask: (what, source) => withMolecule(source, (mol) => answers[what](mol, source)),
 
     /** RDKit's SVG with the given drawing options (JSON). */
     svg: (source, options) => withMolecule(source, (mol) => markedSvg(mol, options)),

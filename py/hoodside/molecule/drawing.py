@@ -6,18 +6,25 @@ Strokes and letters are ``currentColor`` on a clear ground. What is lit wears th
 
 from __future__ import annotations
 
+import cmath
 import json
+import math
 import re
 from collections.abc import Sequence
 from dataclasses import dataclass
 
 from hoodside.molecule.kernel import kernel
+from hoodside.molecule.source import Notation, notation_of
 from hoodside.molecule.structure import Structure
 
 _STROKE = 2.0
 _RING_STROKE = 3.0
 _LEAST_RING = 9.0
 _BAND_STROKE = 12.0
+#: Room that a label takes beyond its atom, in bond lengths of 1.5.
+_LABEL_ROOM = 1.0
+#: Degrees between the usual directions of bonds.
+_STEP = 30
 
 _MARKS = re.compile(r"<ellipse cx='([-\d.]+)' cy='([-\d.]+)' rx='([-\d.]+)'[^>]*class='atom-(\d+)'[^>]*/>")
 _PATHS = re.compile(r"<path(?: class='([^']*)')? d='([^']*)'(?: style='([^']*)')?(?: fill='([^']*)')?\s*/>")
@@ -41,14 +48,17 @@ def draw(
     bonds: Sequence[int] = (),
 ) -> Drawing:
     """Draw a structure into ``width`` x ``height`` pixels with the given atoms and bonds lit."""
-    return in_one_ink(kernel().raw_svg(structure.source, drawing_options(width, height)), atoms, bonds)
+    turn = _best_turn(structure, width / height)
+    raw = kernel().raw_svg(structure.source, drawing_options(width, height, turn))
+    return in_one_ink(raw, atoms, bonds)
 
 
-def drawing_options(width: int, height: int) -> str:
-    """RDKit drawing options (JSON). Kernels add the list of all atoms, whose marks tell where they are."""
+def drawing_options(width: int, height: int, turn: float = 0.0) -> str:
+    """RDKit drawing options (JSON); ``turn`` in degrees. Kernels mark every atom, to tell where it is."""
     options = {
         "width": width,
         "height": height,
+        "rotate": turn,
         "bonds": [],
         "clearBackground": False,
         "bondLineWidth": _STROKE,
@@ -69,6 +79,39 @@ def in_one_ink(raw: str, atoms: Sequence[int] = (), bonds: Sequence[int] = ()) -
     rings = [_ring(i, *marks[i]) for i in atoms if i in marks]
     ink = "".join(_inked(*m.groups("")) for m in _PATHS.finditer(raw))
     return Drawing(f"{_opening(raw)}{''.join(bands)}{ink}{''.join(rings)}</g></svg>", coords)
+
+
+def _best_turn(structure: Structure, aspect: float) -> float:
+    """Degrees by which a fresh layout fills the frame best; a CTfile keeps the layout it came with.
+
+    Bonds come to lie in steps of 30 degrees; where two turns fill alike, heteroatoms go right and up.
+    """
+    if notation_of(structure.source) is Notation.CTFILE or len(structure.atoms) == 1:
+        return 0.0
+    points = [complex(x, y) for x, y in kernel().coords(structure.source)]
+    hetero = [atom.z not in (1, 6) for atom in structure.atoms]
+
+    def merit(turn: float) -> tuple[float, float]:
+        turned = [p * cmath.exp(-1j * math.radians(turn)) for p in points]  # RDKit turns clockwise
+        across, up = (_extent(axis) for axis in zip(*[(p.real, p.imag) for p in turned], strict=True))
+        middle = sum(turned) / len(turned)
+        leaning = [p - middle for p, is_hetero in zip(turned, hetero, strict=True) if is_hetero]
+        lean = sum(p.real + p.imag / 2 for p in leaning)
+        return round(-max(across, up * aspect), 1), round(lean, 1)
+
+    slant = _slant([points[bond.b] - points[bond.a] for bond in structure.bonds])
+    return max((slant + _STEP * k for k in range(360 // _STEP)), key=merit)
+
+
+def _extent(values: Sequence[float]) -> float:
+    return max(values) - min(values) + _LABEL_ROOM
+
+
+def _slant(bonds: list[complex]) -> float:
+    """Mean angle in degrees by which bonds stand off the grid of 30 degrees."""
+    folds = 360 // _STEP
+    pull = sum((b / abs(b)) ** folds for b in bonds if abs(b) > 0)
+    return round(math.degrees(cmath.phase(pull)) / folds, 1) if abs(pull) > 0 else 0.0
 
 
 def _opening(raw: str) -> str:

@@ -11,7 +11,7 @@ from functools import lru_cache
 from typing import Any
 
 from rdkit import Chem, rdBase
-from rdkit.Chem import rdChemReactions, rdDepictor
+from rdkit.Chem import rdChemReactions, rdCIPLabeler, rdDepictor
 from rdkit.Chem.Draw import rdMolDraw2D
 
 from hoodside.molecule.kernel import Matches, bad_pattern, bad_reaction
@@ -29,6 +29,7 @@ class CPythonKernel:
     def __init__(self) -> None:
         self._open: OrderedDict[str, Any] = OrderedDict()
         Chem.SetUseLegacyStereoPerception(True)  # the browser build starts so; both must agree
+        Chem.SetAllowNontetrahedralChirality(False)
         _route_log()
 
     def version(self) -> str:
@@ -38,10 +39,10 @@ class CPythonKernel:
         return str(Chem.MolToJSON(self._mol(source)))
 
     def smiles(self, source: str) -> str:
-        return str(Chem.MolToSmiles(self._mol(source)))
+        return str(Chem.MolToSmiles(self._named(source)))
 
     def inchi(self, source: str) -> str:
-        return str(Chem.MolToInchi(self._mol(source)))  # type: ignore[no-untyped-call]
+        return str(Chem.MolToInchi(self._named(source)))  # type: ignore[no-untyped-call]
 
     def inchikey(self, source: str) -> str:
         return str(Chem.InchiToInchiKey(self.inchi(source)) or "")  # type: ignore[no-untyped-call]
@@ -85,6 +86,11 @@ class CPythonKernel:
     def close(self) -> None:
         self._open.clear()
 
+    def _named(self, source: str) -> Any:
+        """The molecule by way of SMILES, so that one molecule has one name whatever it was read from."""
+        mol = self._mol(source)
+        return self._mol(Chem.MolToSmiles(mol)) if notation_of(source) is Notation.JSON else mol
+
     def _mol(self, source: str) -> Any:
         mol = self._open.get(source)
         if mol is None:
@@ -101,7 +107,7 @@ def _laid_out(mol: Any) -> Any:
     if mol.GetNumConformers() and not mol.GetConformer().Is3D():
         return mol
     copy = Chem.Mol(mol)
-    rdDepictor.Compute2DCoords(copy)
+    rdDepictor.Compute2DCoords(copy, canonOrient=False)  # as the wasm does it
     return copy
 
 
@@ -112,7 +118,7 @@ def _parse(source: str) -> Any:
     with _captured_log() as log:
         try:
             if notation is Notation.JSON:
-                mol = Chem.JSONToMols(source)[0]
+                mol = _from_graph(source)
             elif notation is Notation.CTFILE:
                 mol = Chem.MolFromMolBlock(source, strictParsing=False)
             else:
@@ -121,6 +127,19 @@ def _parse(source: str) -> Any:
             log.append(str(err))
     if mol is None:
         raise parse_failure(source, "\n".join(log))
+    return mol
+
+
+def _from_graph(source: str) -> Any:
+    """Only the newer perception reads double-bond marks from a JSON graph (and drops outdated ones)."""
+    Chem.SetUseLegacyStereoPerception(False)
+    try:
+        mol = Chem.JSONToMols(source)[0]
+        Chem.SanitizeMol(mol)
+        Chem.AssignStereochemistry(mol, cleanIt=True, force=True)
+        rdCIPLabeler.AssignCIPLabels(mol)
+    finally:
+        Chem.SetUseLegacyStereoPerception(True)
     return mol
 
 
@@ -144,6 +163,8 @@ def _route_log() -> None:
     logger = logging.getLogger("rdkit")
     logger.handlers[:] = [_collector]
     logger.propagate = False
+    for level in ("rdApp.warning", "rdApp.info", "rdApp.debug"):
+        rdBase.DisableLog(level)
 
 
 @contextmanager
