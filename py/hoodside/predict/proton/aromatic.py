@@ -43,7 +43,7 @@ def _by_set(view: View, atom: int, scheme: str) -> Estimate:
 
 
 def _increment(name: str, substituent: str, position: str, label: str) -> Term:
-    row = _rows().get((name, substituent))
+    row = _rows().get((name, substituent)) or _rows().get((_SETS["benzene observed"][0], substituent))
     if row is None:
         return Term(f"{position} {label}", 0.0, _NO_INCREMENT)
     return Term(f"{position} {label}", float(row[position]), row["source"])

@@ -45,6 +45,7 @@ def _by_set(view: View, atom: int, scheme: str) -> Estimate | None:
     terms = _base_terms(name, kind, place.term if place else None, place.hydrogens if place else 0)
     terms += [_increment(name, column, group, "alpha", kind) for group in alpha]
     terms += [_increment(name, column, group, "beta", kind) for group in beta]
+    terms += _beta_damping(view, atom, kind, terms)
     terms += [Term(f"gamma {g.key}", g.gamma, _GAMMA_SOURCE) for g in gamma if g.gamma]
     terms += _damping(name, kind, view, atom, alpha)
     label = scheme if place is None else f"{scheme}, ring"
@@ -113,6 +114,17 @@ def _damping(name: str, kind: str, view: View, atom: int, outside: list[Substitu
         value = -float(row["factor"]) * sizes[id(one)] * sizes[id(two)]
         terms.append(Term(f"{one.key} beside {two.key}", value, row["source"]))
     return terms
+
+
+def _beta_damping(view: View, atom: int, kind: str, terms: list[Term]) -> list[Term]:
+    """A carbon that carries a heteroatom feels groups one bond further on less."""
+    gained = sum(t.value for t in terms if t.label.startswith("beta "))
+    kinds = [view.substituent(atom, n).kind for n in view.structure.neighbours[atom]]
+    rows = [r for k in kinds if (r := _damping_rows().get(frozenset({k, f"beta {kind}"}))) is not None]
+    if not rows or not gained:
+        return []
+    row = max(rows, key=lambda r: float(r["factor"]))
+    return [Term("beta groups beside a heteroatom", -float(row["factor"]) * gained, row["source"])]
 
 
 @cache
