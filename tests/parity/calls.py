@@ -57,6 +57,12 @@ def matches(source: str, patterns: list[str], unique: bool = True) -> list[Any]:
     return read_structure(source).match_all(patterns, unique)
 
 
+def stereo_labels(source: str) -> list[Any]:
+    """CIP labels of atoms and double bonds."""
+    atoms, bonds = kernel().stereo_labels(source)
+    return [sorted(atoms.items()), sorted(bonds.items())]
+
+
 def drawn(source: str, width: int, height: int) -> list[Any]:
     """A drawing and where its atoms are."""
     drawing = draw(read_structure(source), width, height, [0], [0])

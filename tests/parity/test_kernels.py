@@ -115,6 +115,11 @@ def test_symmetry_alike(in_browser: Runner) -> None:
     same(in_browser, [["calls.symmetry", s] for s in TRUTHS])
 
 
+def test_stereo_labels_alike(in_browser: Runner) -> None:
+    marked = [s for s in SMILES if "@" in s or "/" in s]
+    same(in_browser, [["calls.stereo_labels", s] for s in marked])
+
+
 def test_substructure_matches_alike(in_browser: Runner) -> None:
     """All patterns of the facts tables on the published compounds: the same matches in the same order."""
     asked = patterns()

@@ -100,6 +100,7 @@ export function makeBridge(RDKit) {
   const inchi = (mol, source) => named(mol, source).get_inchi();
   const answers = {
     graph: (mol) => mol.get_json(),
+    stereo: (mol) => onCopy(mol, (copy) => copy.get_stereo_tags()),
     smiles: (mol, source) => named(mol, source).get_smiles(),
     inchi,
     inchikey: (mol, source) => RDKit.get_inchikey_for_inchi(inchi(mol, source)),
@@ -133,7 +134,7 @@ export function makeBridge(RDKit) {
   return {
     version: () => RDKit.version(),
 
-    /** One fact about a molecule: graph, smiles, inchi, inchikey, molblock or coords (JSON). */
+    /** One fact about a molecule: graph, stereo, smiles, inchi, inchikey, molblock or coords (JSON). */
     ask: (what, source) => withMolecule(source, (mol) => answers[what](mol, source)),
 
     /** RDKit's SVG with the given drawing options (JSON). */
@@ -184,9 +185,15 @@ const FLAT = 2;
 // Gives `use` the molecule with flat coordinates: its own, or new ones on a copy.
 function laidOut(mol, use) {
   if (mol.has_coords() === FLAT) return use(mol);
+  return onCopy(mol, (copy) => {
+    copy.set_new_coords();
+    return use(copy);
+  });
+}
+
+function onCopy(mol, use) {
   const copy = mol.copy();
   try {
-    copy.set_new_coords();
     return use(copy);
   } finally {
     copy.delete();

@@ -56,6 +56,10 @@ class Kernel(Protocol):
         """
         ...
 
+    def stereo_labels(self, source: str) -> tuple[dict[int, str], dict[tuple[int, int], str]]:
+        """CIP labels: atom -> "R", "S", "r" or "s"; (atom, atom), lower first -> "E" or "Z"."""
+        ...
+
     def matches(self, source: str, smarts: Sequence[str], unique: bool = True) -> list[Matches]:
         """All matches of each pattern, in order. ``unique``: one match per set of atoms."""
         ...

@@ -20,6 +20,8 @@ _BAD_REACTION = "!REACTION "
 #: Answer of the bridge when it no longer holds a list of patterns.
 _NOT_KEPT = "?"
 _MAX_LISTS = 64
+#: RDKit's label for a centre whose configuration the source leaves open.
+_OPEN = "(?)"
 
 
 class BrowserKernel:
@@ -65,6 +67,14 @@ class BrowserKernel:
     def raw_svg(self, source: str, options: str) -> str:
         check_size(source)
         return self._answer(source, "svg", source, options)
+
+    def stereo_labels(self, source: str) -> tuple[dict[int, str], dict[tuple[int, int], str]]:
+        tags = json.loads(self._ask("stereo", source))
+        atoms = {atom: label.strip("()") for atom, label in tags["CIP_atoms"] if label != _OPEN}
+        bonds = {
+            (min(a, b), max(a, b)): label.strip("()") for a, b, label in tags["CIP_bonds"] if label != _OPEN
+        }
+        return atoms, bonds
 
     def matches(self, source: str, smarts: Sequence[str], unique: bool = True) -> list[Matches]:
         check_size(source)

@@ -19,6 +19,7 @@ from hoodside.molecule.source import Notation, check_size, notation_of, parse_fa
 
 _MAX_HANDLES = 256
 _MAX_MATCHES = 100_000
+_CIP = "_CIPCode"
 
 
 class CPythonKernel:
@@ -63,6 +64,13 @@ class CPythonKernel:
         drawer.FinishDrawing()
         return str(drawer.GetDrawingText())
 
+    def stereo_labels(self, source: str) -> tuple[dict[int, str], dict[tuple[int, int], str]]:
+        mol = Chem.Mol(self._mol(source))
+        rdCIPLabeler.AssignCIPLabels(mol)
+        atoms = {a.GetIdx(): a.GetProp(_CIP) for a in mol.GetAtoms() if a.HasProp(_CIP)}
+        bonds = {_ends(b): b.GetProp(_CIP) for b in mol.GetBonds() if b.HasProp(_CIP)}
+        return atoms, bonds
+
     def matches(self, source: str, smarts: Sequence[str], unique: bool = True) -> list[Matches]:
         mol = self._mol(source)
         return [
@@ -100,6 +108,11 @@ class CPythonKernel:
         else:
             self._open.move_to_end(source)
         return mol
+
+
+def _ends(bond: Any) -> tuple[int, int]:
+    a, b = bond.GetBeginAtomIdx(), bond.GetEndAtomIdx()
+    return min(a, b), max(a, b)
 
 
 def _laid_out(mol: Any) -> Any:
