@@ -56,6 +56,15 @@ def hydrogen_sets(structure: Structure) -> tuple[HydrogenSet, ...]:
     return _kept(structure, "hydrogen_sets", lambda s: _kept(s, "symmetry", _Symmetry).hydrogen_sets())
 
 
+def hydrogen_members(structure: Structure) -> tuple[tuple[tuple[int, int], ...], ...]:
+    """Per set of ``hydrogen_sets``, its hydrogens as (carrier, place).
+
+    Places count from 0 on each carrier. Of the two H of a CH2, place 0 is the first and place 1 the second
+    of ``stereo_units.twin_hydrogens``.
+    """
+    return _kept(structure, "hydrogen_members", lambda s: _kept(s, "symmetry", _Symmetry).hydrogen_members())
+
+
 def _kept(structure: Structure, key: str, find: Callable[[Structure], _T]) -> _T:
     if key not in structure.memo:
         structure.memo[key] = find(structure)
@@ -128,6 +137,18 @@ class _Symmetry:
         return _numbered([self.equal.find(i) for i in range(len(self.structure.atoms))])
 
     def hydrogen_sets(self) -> tuple[HydrogenSet, ...]:
+        return tuple(
+            HydrogenSet(tuple(carriers), self._count(points), self._relation(points), slot)
+            for carriers, slot, points in self._sets()
+        )
+
+    def hydrogen_members(self) -> tuple[tuple[tuple[int, int], ...], ...]:
+        return tuple(
+            tuple(member for point in points for member in self._places(point)) for _, _, points in self._sets()
+        )
+
+    def _sets(self) -> list[tuple[list[int], int, list[int]]]:
+        """Carriers, slot and points of every set, in order."""
         grouped: dict[int, list[tuple[int, int]]] = defaultdict(list)
         for atom in self.structure.atoms:
             points = self.twins.get(atom.index, (atom.index,))
@@ -140,10 +161,13 @@ class _Symmetry:
             slot = taken.get(carriers[0], 0)
             taken[carriers[0]] = slot + 1
             sets.append((carriers, slot, [point for point, _ in entries]))
-        return tuple(
-            HydrogenSet(tuple(carriers), self._count(points), self._relation(points), slot)
-            for carriers, slot, points in sorted(sets)
-        )
+        return sorted(sets)
+
+    def _places(self, point: int) -> list[tuple[int, int]]:
+        carrier = self._carrier(point)
+        if point >= len(self.structure.atoms):
+            return [(carrier, self.twins[carrier].index(point))]
+        return [(carrier, place) for place in range(self.structure.atoms[carrier].hydrogens)]
 
     def _count(self, points: list[int]) -> int:
         atoms = self.structure.atoms
