@@ -144,7 +144,8 @@ class _Symmetry:
 
     def hydrogen_members(self) -> tuple[tuple[tuple[int, int], ...], ...]:
         return tuple(
-            tuple(member for point in points for member in self._places(point)) for _, _, points in self._sets()
+            tuple(member for point in points for member in self._places(point))
+            for _, _, points in self._sets()
         )
 
     def _sets(self) -> list[tuple[list[int], int, list[int]]]:
