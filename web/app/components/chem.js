@@ -21,5 +21,9 @@ function typeset(part) {
   return /^([A-Z][a-z]?\d*|[()]\d*)+$/.test(part) ? html`<${Formula} text=${part} />` : part;
 }
 
-export const Proton = () => html`<sup>1</sup>H`;
-export const Carbon13 = () => html`<sup>13</sup>C`;
+/** An ion such as [M+NH4]+ with its charge raised. @param {{ text: string }} props */
+export function Ion({ text }) {
+  const parts = text.match(/^(\[.*\])(.*)$/);
+  if (!parts) return html`<span>${text}</span>`;
+  return html`<span class="formula"><${Formula} text=${parts[1]?.replace('-', '\u2212') ?? ''} /><sup>${parts[2]?.replace('-', '\u2212').replace('.', '\u2022')}</sup></span>`;
+}

@@ -31,9 +31,11 @@ export function Svg({ svg, label, class: extra = '' }) {
 const spoken = (label) => (label ? { role: 'img', 'aria-label': label } : { 'aria-hidden': 'true' });
 
 /** A drawing asked of the engine, with atoms lit where `atoms` names them.
- * @param {{ structure: string, label: string, width?: number, height?: number, atoms?: number[], class?: string }} props */
-export function Drawing({ structure, label, width = 320, height = 240, atoms, class: extra = '' }) {
-  const { value } = useAnswer('draw', { structure, width, height, ...(atoms?.length && { atoms }) });
-  if (!value) return html`<span class="drawing ${extra}" ...${spoken(label)}></span>`;
-  return html`<${Svg} svg=${value.svg} label=${label} class=${extra} />`;
+ * `meanwhile` is shown until the engine has drawn it at this size.
+ * @param {{ structure: string, label: string, width?: number, height?: number, atoms?: number[], class?: string, meanwhile?: string }} props */
+export function Drawing({ structure, label, width = 320, height = 240, atoms, class: extra = '', meanwhile = '' }) {
+  const { value } = useAnswer('draw', structure ? { structure, width, height, ...(atoms?.length && { atoms }) } : null);
+  const svg = /** @type {any} */ (value)?.svg ?? meanwhile;
+  if (!svg) return html`<span class="drawing ${extra}" ...${spoken(label)}></span>`;
+  return html`<${Svg} svg=${svg} label=${label} class=${extra} />`;
 }

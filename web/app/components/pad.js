@@ -67,17 +67,18 @@ function Key({ name, done, text, extra = '' }) {
     ${text ?? name}</button>`;
 }
 
-/** The number pad. `side` is the key above *next*, `corner` the one right of the point.
+/** The number pad. `side` is the key above *next*, `corner` the one right of the point; '' leaves it out.
  * @param {{ done: () => void, next?: string, side?: string, corner?: string }} props */
-export function NumberPad({ done, next = 'next', side = '–', corner = '±' }) {
-  const digits = [['7', '8', '9'], ['4', '5', '6'], ['1', '2', '3'], ['0', '.', corner]];
+export function NumberPad({ done, next = 'next', side = '', corner = '' }) {
+  const digits = ['7', '8', '9', '4', '5', '6', '1', '2', '3', '0', '.'];
   return html`<div class="pad" role="group" aria-label="Number pad">
     <div class="pad-digits">
-      ${digits.flat().map((name) => html`<${Key} key=${name} name=${name} text=${name === 'J' ? '+ J' : undefined} />`)}
+      ${digits.map((name) => html`<${Key} key=${name} name=${name} extra=${name === '0' && !corner ? 'key-wide' : ''} />`)}
+      ${corner && html`<${Key} name=${corner} text=${corner === 'J' ? '+ J' : undefined} />`}
     </div>
-    <div class="pad-side">
+    <div class="pad-side ${side ? '' : 'pad-side-two'}">
       <${Key} name="erase" text=${html`<${Icon} name="erase" size=${28} />`} />
-      <${Key} name=${side} text=${side === 'J' ? '+ J' : undefined} />
+      ${side && html`<${Key} name=${side} text=${side === 'J' ? '+ J' : undefined} />`}
       <${Key} name="next" text=${next} done=${done} extra="key-next" />
     </div>
   </div>`;
@@ -91,7 +92,7 @@ export function FormulaPad({ done, onLetters }) {
     <button type="button" class="key key-letter" onPointerDown=${(/** @type {Event} */ e) => e.preventDefault()}
       onClick=${onLetters}>abc</button>
     <${Key} name="erase" text=${html`<${Icon} name="erase" size=${28} />`} />
-    <${Key} name="next" text="next" done=${done} extra="key-next key-wide" />
+    <${Key} name="next" text="done" done=${done} extra="key-next key-wide" />
   </div>`;
 }
 

@@ -20,11 +20,12 @@ export function Section({ title, aside, children, id, class: extra = '' }) {
   </section>`;
 }
 
-/** A row of chips of which one (or none) is chosen.
+/** A row of chips of which one (or none) is chosen. `heading` shows the label above them.
  * @param {{ label: string, options: { value: string, text: any, name?: string }[], value: string,
- *   onPick: (value: string) => void, class?: string, optional?: boolean }} props */
-export function Chips({ label, options, value, onPick, class: extra = '', optional = true }) {
+ *   onPick: (value: string) => void, class?: string, optional?: boolean, heading?: boolean }} props */
+export function Chips({ label, options, value, onPick, class: extra = '', optional = true, heading = false }) {
   return html`<div class="chips ${extra}" role="group" aria-label=${label}>
+    ${heading && html`<span class="chips-label" aria-hidden="true">${label}</span>`}
     ${options.map((option) => html`<button type="button" class="chip" key=${option.value}
       aria-pressed=${String(option.value === value)} aria-label=${option.name}
       onClick=${() => onPick(optional && option.value === value ? '' : option.value)}>${option.text}</button>`)}

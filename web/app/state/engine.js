@@ -36,22 +36,35 @@ export function call(method, params, options) {
   return engine.call(method, params, options);
 }
 
-/** @type {Map<string, Promise<any>>} */
+/** @typedef {{ promise: Promise<any>, value: any, fault: Fault | null }} Remembered */
+/** @type {Map<string, Remembered>} */
 const remembered = new Map();
 const KEEP = 400;
+
+/** What a question was answered, when it has been asked before; null while it is open.
+ * @param {string} key method and parameters as `questionKey` writes them */
+export const answered = (key) => {
+  const known = remembered.get(key);
+  return known && (known.value !== null || known.fault) ? known : null;
+};
+
+/** @param {string} method @param {object} params */
+export const questionKey = (method, params) => method + JSON.stringify(params);
 
 /** Like `call`, for questions whose answer never changes: asked once, then remembered.
  * @param {string} method @param {object} params @returns {Promise<any>} */
 export function ask(method, params) {
-  const key = method + JSON.stringify(params);
+  const key = questionKey(method, params);
   const known = remembered.get(key);
-  if (known) return known;
-  const answer = call(method, params);
-  remembered.set(key, answer);
-  answer.catch((error) => {
+  if (known) return known.promise;
+  /** @type {Remembered} */
+  const entry = { promise: call(method, params), value: null, fault: null };
+  remembered.set(key, entry);
+  entry.promise.then((value) => { entry.value = value; }, (error) => {
     // A refusal of the input stays true; a crash or a stop does not.
-    if (!/^invalid/.test(error?.code ?? '')) remembered.delete(key);
+    if (/^invalid/.test(error?.code ?? '')) entry.fault = asFault(error);
+    else remembered.delete(key);
   });
   if (remembered.size > KEEP) remembered.delete(/** @type {string} */ (remembered.keys().next().value));
-  return answer;
+  return entry.promise;
 }

@@ -12,6 +12,7 @@ import { OfflineLine } from './whisper.js';
 export function CaseList() {
   const [menu, setMenu] = useState(false);
   const own = ownCases.value;
+  const demos = DEMOS.filter((demo) => !own.some((doc) => doc.demo === demo.file));
   const start = () => go('case', addCase({ title: nextTitle() }).id, 'readings');
   return html`<main class="page list-page">
     <header class="list-head">
@@ -27,10 +28,10 @@ export function CaseList() {
       <header class="list-section"><h2 id="own-head">On this device</h2><b>${own.length}</b></header>
       <ul class="rows">${own.map((doc) => html`<${CaseRow} key=${doc.id} doc=${doc} />`)}</ul>
     </section>`}
-    <section aria-labelledby="demo-head">
+    ${demos.length > 0 && html`<section aria-labelledby="demo-head">
       <header class="list-section"><h2 id="demo-head">Invented examples</h2></header>
-      <ul class="rows">${DEMOS.map((demo) => html`<${DemoRow} key=${demo.file} demo=${demo} />`)}</ul>
-    </section>
+      <ul class="rows">${demos.map((demo) => html`<${DemoRow} key=${demo.file} demo=${demo} />`)}</ul>
+    </section>`}
     <footer class="list-foot">
       <button type="button" class="button primary" onClick=${start}>New case</button>
       <${OfflineLine} />

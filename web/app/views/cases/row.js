@@ -1,7 +1,7 @@
 import { html } from 'htm/preact';
 import { useState } from 'preact/hooks';
 import { Formula } from '../../components/chem.js';
-import { Svg } from '../../components/drawing.js';
+import { StructureDrawing } from '../../components/structure-drawing.js';
 import { Icon } from '../../components/icon.js';
 import { Sign } from '../../components/sign.js';
 import { changeWithUndo, copyCase, deleteCase } from '../../state/cases.js';
@@ -28,7 +28,7 @@ export function CaseRow({ doc }) {
   const verdict = doc.last?.verdict ?? 'none';
   return html`<li class="case-row">
     <a class="case-link" href=${address('case', doc.id, doc.last ? 'tally' : 'readings')}>
-      <span class="thumb">${drawn?.svg && html`<${Svg} svg=${drawn.svg} label="" />`}</span>
+      <span class="thumb">${drawn && html`<${StructureDrawing} structure=${drawn} label="" size="thumb" />`}</span>
       <span class="case-words"><b>${doc.title || 'Untitled'}</b><span class="case-line"><${Line} doc=${doc} /></span></span>
       <${Sign} verdict=${verdict} size=${24} />
     </a>

@@ -37,14 +37,12 @@ export function CarbonSheet({ doc, rowId }) {
   };
   const wrong = row.ppm.trim() && Number.isNaN(toNumber(row.ppm)) ? `${row.ppm} is no shift. Type 128.4.` : '';
   return html`<${Sheet} title=${html`<sup>13</sup>C line ${rows.indexOf(row) + 1} of ${rows.length}`} back=${back} class="entry-sheet"
-      sign=${html`<${CaseSign} doc=${doc} />`} foot=${html`<${NumberPad} done=${another} next=${row.ppm ? 'new' : 'next'} />`}>
+      sign=${html`<${CaseSign} doc=${doc} />`} action=${html`<button type="button" class="bar-action" onClick=${remove}>Remove</button>`}
+      foot=${html`<${NumberPad} corner="±" done=${another} next=${row.ppm ? 'new' : 'next'} />`}>
     <${Printout} doc=${doc} />
     <${PadField} key=${rowId} label="Shift" name="ppm" value=${row.ppm} unit="ppm" first fault=${wrong}
       onInput=${(/** @type {string} */ ppm) => set({ ppm })} onEnter=${another} />
-    <${Chips} label="Kind, from DEPT" class="chips-4" options=${KINDS} value=${row.kind} onPick=${(/** @type {string} */ kind) => set({ kind })} />
-    <${Chips} label="Carbons in this line" class="chips-4" options=${COUNTS} value=${row.n} onPick=${(/** @type {string} */ n) => set({ n })} />
-    <p class="hint">Leave the kind open unless a DEPT or an attached-proton spectrum told it.</p>
-    <div class="sheet-actions"><button type="button" class="button" onClick=${remove}>Remove</button>
-      <p class="running">${rows.length} so far</p></div>
+    <${Chips} label="Kind, where DEPT told it" heading class="chips-4" options=${KINDS} value=${row.kind} onPick=${(/** @type {string} */ kind) => set({ kind })} />
+    <${Chips} label="Carbons in this line" heading class="chips-4" options=${COUNTS} value=${row.n} onPick=${(/** @type {string} */ n) => set({ n })} />
   <//>`;
 }

@@ -50,6 +50,6 @@ function Isotopes({ facts }) {
   if (top.length < 2) return null;
   return html`<${Section} title="Isotope pattern" aside=${plural(top.length, 'line')}>
     <table class="plain-table"><tbody>${top.map((line) => html`<tr key=${line.mz}><td>${fixed(line.mz, 4)}</td>
-      <td><meter min="0" max="100" value=${line.rel} aria-hidden="true"></meter></td><td>${fixed(line.rel, 1)} %</td></tr>`)}</tbody></table>
+      <td><svg class="rel-bar" viewBox="0 0 100 8" preserveAspectRatio="none" aria-hidden="true"><path d="M0 4H${line.rel}" /></svg></td><td>${fixed(line.rel, 1)} %</td></tr>`)}</tbody></table>
   <//>`;
 }

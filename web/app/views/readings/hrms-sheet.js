@@ -1,5 +1,5 @@
 import { html } from 'htm/preact';
-import { Formula } from '../../components/chem.js';
+import { Formula, Ion } from '../../components/chem.js';
 import { Chips, Section, Trouble } from '../../components/parts.js';
 import { NumberPad, PadField } from '../../components/pad.js';
 import { Sheet } from '../../components/sheet.js';
@@ -24,9 +24,9 @@ export function HrmsSheet({ doc }) {
       sign=${html`<${CaseSign} doc=${doc} />`} foot=${html`<${NumberPad} done=${() => go('case', doc.id, 'readings')} next="done" />`}>
     <${PadField} label=${html`<i>m/z</i> found`} name="found" value=${found} first fault=${wrong} onInput=${(/** @type {string} */ text) => set({ found: text })} />
     <${Chips} label="Ion" class="chips-3" optional=${false} value=${adduct} onPick=${(/** @type {string} */ value) => set({ adduct: value })}
-      options=${ADDUCTS.map((value) => ({ value, text: value.replace('-H]-', '\u2212H]\u2212') }))} />
-    <${Chips} label="Within, ppm" class="chips-4" optional=${false} value=${ppm} onPick=${(/** @type {string} */ value) => set({ ppm: value })}
-      options=${TOLERANCES.map((value) => ({ value, text: `${value} ppm` }))} />
+      options=${ADDUCTS.map((value) => ({ value, text: html`<${Ion} text=${value} />`, name: value }))} />
+    <${Chips} label="Right within, ppm" heading class="chips-4" optional=${false} value=${ppm} onPick=${(/** @type {string} */ value) => set({ ppm: value })}
+      options=${TOLERANCES.map((value) => ({ value, text: value }))} />
     <${Formulas} doc=${doc} />
   <//>`;
 }

@@ -65,10 +65,10 @@ function BandFields({ doc, band, more }) {
       <${Suits} band=${band} />
     </div>
     <${Chips} label="Strength" class="chips-3" options=${STRENGTHS} value=${band.strength} onPick=${(/** @type {string} */ strength) => set({ strength })} />
-    <${Chips} label="Shape" class="chips-3" options=${SHAPES} value=${band.shape} onPick=${(/** @type {string} */ shape) => set({ shape })} />
+    <${Chips} label="Shape" class="chips-2" options=${SHAPES} value=${band.shape} onPick=${(/** @type {string} */ shape) => set({ shape })} />
     <div class="two-up">
-      <button type="button" class="button" onClick=${more}>Another band here</button>
-      <button type="button" class="button" onClick=${remove}>Remove this band</button>
+      <button type="button" class="button" onClick=${more}>Another band</button>
+      <button type="button" class="button" onClick=${remove}>Remove band</button>
     </div>`;
 }
 

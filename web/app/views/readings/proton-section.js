@@ -8,7 +8,6 @@ import { address, go } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { plural } from '../../words/numbers.js';
 import { dashed, highFirst, protonSum } from '../../words/readings.js';
-import { LineLink } from './mass-section.js';
 import { useSolventName } from './solvent-lines.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
@@ -47,7 +46,7 @@ export function ProtonSection({ doc }) {
       ${rows.map((row) => html`<${Slip} key=${row.id} doc=${doc} row=${row} named=${solvent(row)} />`)}
     </ul>
     <div class="two-up">
-      <a class="button" href=${address('case', doc.id, 'readings', 'field')}><${Conditions} doc=${doc} /></a>
+      <a class="button" href=${address('case', doc.id, 'readings', 'field')}><span><${Conditions} doc=${doc} /></span></a>
       <button type="button" class="button" onClick=${() => addSignal(doc)}>Add a signal</button>
     </div>
   <//>`;
@@ -65,5 +64,3 @@ function Slip({ doc, row, named }) {
     <span class="slip-h">${row.h && `${row.h}${doc.raw ? '' : ' H'}`}</span>
   </a></li>`;
 }
-
-export { LineLink };

@@ -6,7 +6,7 @@ import { changeCase, changeWithUndo } from '../../state/cases.js';
 import { protonFault } from '../../state/input.js';
 import { address, go, swap } from '../../state/route.js';
 import { newId } from '../../state/document.js';
-import { toNumber, toNumbers, toRange } from '../../words/numbers.js';
+import { toNumbers, toRange } from '../../words/numbers.js';
 import { dashed, highFirst } from '../../words/readings.js';
 import { CaseSign } from '../case/sign.js';
 import { Printout } from './photos.js';
@@ -45,15 +45,11 @@ export function ProtonSheet({ doc, rowId }) {
   const needsJ = !NO_J.includes(row.mult);
   const full = Boolean(row.shift.trim() && row.h.trim() && (!needsJ || row.j.trim()));
   return html`<${Sheet} title=${html`<sup>1</sup>H signal ${rows.indexOf(row) + 1} of ${rows.length}`} back=${back}
-      sign=${html`<${CaseSign} doc=${doc} />`} class="entry-sheet"
-      foot=${html`<${NumberPad} key=${rowId} done=${another} next=${full ? 'new' : 'next'} side=${needsJ ? 'J' : '–'} />`}>
+      sign=${html`<${CaseSign} doc=${doc} />`} class="entry-sheet" action=${html`<button type="button" class="bar-action" onClick=${remove}>Remove</button>`}
+      foot=${html`<${NumberPad} key=${rowId} done=${another} next=${full ? 'new' : 'next'} side="–" corner=${needsJ ? 'J' : '±'} />`}>
     <${Printout} doc=${doc} />
     <${Fields} key=${rowId} doc=${doc} row=${row} set=${set} needsJ=${needsJ} another=${another} />
-    <p class="hint">${partners(doc, row)}</p>
-    <div class="sheet-actions">
-      <button type="button" class="button" onClick=${remove}>Remove</button>
-      <p class="running"><${Sum} doc=${doc} /></p>
-    </div>
+    <p class="fields-foot"><span>${partners(doc, row)}</span><b><${Sum} doc=${doc} /></b></p>
   <//>`;
 }
 
@@ -74,20 +70,10 @@ function Fields({ doc, row, set, needsJ, another }) {
       <${PadField} label=${doc.raw ? 'Step height' : 'Protons'} name="h" value=${row.h} unit=${doc.raw ? '' : 'H'} fault=${about(/number of H/)}
         onInput=${(/** @type {string} */ h) => set({ h })} onEnter=${another} />
     </div>
-    <${Stepper} row=${row} set=${set} raw=${doc.raw} />
     <${Chips} label="Pattern" class="chips-patterns" value=${pattern} onPick=${pick}
       options=${PATTERNS.map((value) => ({ value, text: value, name: SPOKEN[value] }))} />
     ${needsJ && html`<${PadField} label=${html`<i>J</i>`} name="j" value=${row.j} unit="Hz" fault=${about(/list of J/)}
         onInput=${(/** @type {string} */ j) => set({ j })} onEnter=${another} />`}`;
-}
-
-/** H by one more, one less. @param {{ row: ProtonRow, set: (given: Partial<ProtonRow>) => void, raw: boolean }} props */
-function Stepper({ row, set, raw }) {
-  if (raw) return null;
-  const now = toNumber(row.h) || 0;
-  return html`<div class="chips chips-h" role="group" aria-label="Number of H">
-    ${[1, 2, 3, 4, 6, 9].map((n) => html`<button type="button" class="chip" key=${n} aria-pressed=${String(now === n)}
-      aria-label="${n} H" onClick=${() => set({ h: String(n) })}>${n}</button>`)}</div>`;
 }
 
 /** Signals that share a coupling with this one. @param {CaseDoc} doc @param {ProtonRow} row */

@@ -1,6 +1,6 @@
 import { html } from 'htm/preact';
 import { Formula, Words } from '../../components/chem.js';
-import { Svg } from '../../components/drawing.js';
+import { StructureDrawing } from '../../components/structure-drawing.js';
 import { Caution, Section } from '../../components/parts.js';
 import { Sheet } from '../../components/sheet.js';
 import { Sign } from '../../components/sign.js';
@@ -37,7 +37,7 @@ export function Record({ doc }) {
     <${Section} title="Structures"><ul class="record-structures">${doc.structures.map((entry) => {
       const at = found ? found.order.indexOf(entry.id) : -1;
       const candidate = found?.answer.candidates[at];
-      return html`<li key=${entry.id}><${Svg} svg=${entry.svg} label=${entry.name} />
+      return html`<li key=${entry.id}><${StructureDrawing} structure=${entry} label=${entry.name} size="card" />
         <p><b>${letterOf(doc, entry.id)}${entry.name && `, ${entry.name}`}${entry.id === doc.intended ? ', intended' : ''}</b> <${Formula} text=${entry.formula} />
           ${candidate && html` <${Sign} verdict=${candidate.verdict} size=${18} /> ${signed(candidate.weight_db)} decibans`}</p></li>`;
     })}</ul><//>

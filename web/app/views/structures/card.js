@@ -1,6 +1,7 @@
 import { html } from 'htm/preact';
 import { Formula } from '../../components/chem.js';
-import { Drawing, Svg } from '../../components/drawing.js';
+import { Drawing } from '../../components/drawing.js';
+import { StructureDrawing } from '../../components/structure-drawing.js';
 import { Sign } from '../../components/sign.js';
 import { changeWithUndo } from '../../state/cases.js';
 import { currentCheck } from '../../state/check.js';
@@ -30,7 +31,7 @@ export function StructureCard({ doc, structure }) {
   return html`<li><a class="card" href=${address('case', doc.id, 'structures', 'one', structure.id)}>
     ${doc.intended === structure.id && html`<span class="flag">intended</span>`}
     <b class="card-letter" aria-hidden="true">${letterOf(doc, structure.id)}</b>
-    <${Svg} svg=${structure.svg} label="Drawing of ${name}" />
+    <${StructureDrawing} structure=${structure} label="Drawing of ${name}" size="card" />
     <span class="card-foot"><span class="card-name">${structure.name || html`<${Formula} text=${structure.formula} />`}
       ${check.differs ? html`<span class="card-formula card-differs">${check.words}</span>`
         : structure.name && html`<span class="card-formula"><${Formula} text=${structure.formula} /></span>`}</span>
@@ -49,7 +50,7 @@ export function RivalCard({ doc, candidate, at }) {
     });
   };
   return html`<li><button type="button" class="card card-rival" onClick=${take} aria-label="Take ${name} over as a structure">
-    <${Drawing} structure=${candidate.smiles} label=${name} />
+    <${Drawing} structure=${candidate.smiles} label=${name} width=${150} height=${112} class="drawing-card" />
     <span class="card-foot"><span class="card-name">${name}</span><${Sign} verdict=${candidate.verdict} size=${22} /></span>
   </button></li>`;
 }

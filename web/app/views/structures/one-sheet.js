@@ -1,6 +1,6 @@
 import { html } from 'htm/preact';
 import { Formula } from '../../components/chem.js';
-import { Drawing, Svg } from '../../components/drawing.js';
+import { StructureDrawing } from '../../components/structure-drawing.js';
 import { Section, Trouble } from '../../components/parts.js';
 import { Sheet } from '../../components/sheet.js';
 import { Sign } from '../../components/sign.js';
@@ -34,8 +34,7 @@ export function OneStructure({ doc, id }) {
     go('case', doc.id, 'structures');
   };
   return html`<${Sheet} title="Structure ${letterOf(doc, id)}" back=${back} sign=${html`<${Sign} verdict=${verdictFor(id)} size=${26} />`}>
-    ${lit.length ? html`<${Drawing} structure=${structure.smiles} atoms=${lit} label="Drawing with atoms marked" class="drawing-big" />`
-      : html`<${Svg} svg=${structure.svg} label="Drawing of ${nameOf(doc, id)}" class="drawing-big" />`}
+    <${StructureDrawing} structure=${structure} atoms=${lit} label="Drawing of ${nameOf(doc, id)}" size="big" />
     <div class="two-up">
       <button type="button" class="toggle" aria-pressed=${String(intended)}
         onClick=${() => changeCase(doc.id, (draft) => { draft.intended = intended ? '' : id; })}>${intended ? 'Intended' : 'Mark as intended'}</button>

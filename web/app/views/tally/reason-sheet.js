@@ -31,7 +31,7 @@ export function ReasonSheet({ doc, at, rowKey }) {
       : html`<button type="button" class="button" key=${words} disabled>${words}</button>`;
   })}</div>`;
   return html`<${Sheet} title=${html`<${Words} text=${row.label} />`} back=${back} sign=${html`<${CaseSign} doc=${doc} />`} foot=${foot}>
-    <${Drawing} structure=${candidate.smiles} atoms=${row.atoms} label="${structureName(doc, found, at)}, atoms concerned marked" class="drawing-big" />
+    <${Drawing} structure=${candidate.smiles} atoms=${row.atoms} label="${structureName(doc, found, at)}, atoms concerned marked" width=${354} height=${230} class="drawing-big" />
     <p class="reason"><b>Speaks ${row.weight >= 0 ? 'for' : 'against'} ${structureName(doc, found, at)}, ${signed(row.weight)}.</b></p>
     <ul class="reasons">${row.findings.map((finding, i) => html`<li key=${i}>
       <p><${Words} text=${finding.text} /></p><b>${signed(finding.weight_db)}</b>${finding.source && html`<p class="source">${finding.source}</p>`}</li>`)}</ul>

@@ -1,5 +1,6 @@
 import { html } from 'htm/preact';
-import { Drawing, Svg } from '../../components/drawing.js';
+import { Drawing } from '../../components/drawing.js';
+import { StructureDrawing } from '../../components/structure-drawing.js';
 import { structureName } from '../../words/structures.js';
 
 /** Small drawing of a weighed candidate.
@@ -8,7 +9,7 @@ export function Thumb({ doc, found, at }) {
   const id = found.order[at];
   const own = doc.structures.find((entry) => entry.id === id);
   const name = structureName(doc, found, at);
-  if (own) return html`<${Svg} svg=${own.svg} label=${name} class="thumb-drawing" />`;
+  if (own) return html`<${StructureDrawing} structure=${own} label=${name} size="thumb" />`;
   const candidate = found.answer.candidates[at];
-  return candidate ? html`<${Drawing} structure=${candidate.smiles} label=${name} width=${160} height=${100} class="thumb-drawing" />` : null;
+  return candidate ? html`<${Drawing} structure=${candidate.smiles} label=${name} width=${100} height=${60} class="drawing-thumb" />` : null;
 }
