@@ -5,14 +5,18 @@ from __future__ import annotations
 from collections import Counter, defaultdict
 
 from bench.infrared_lists import Matched, allows, matched_cases
+from hoodside.molecule import read_structure
+from hoodside.predict.infrared import predict_bands, weigh_bands
+from hoodside.predict.model import IrExpectation
 
 DIAGNOSTIC = 1500.0  # cm-1; below lies the fingerprint
+CLEAR_DB = 3.0
 
 
 def run(verbose: bool = False) -> dict[str, float]:
     """Measure, print, and answer the figures (shares from 0 to 1, errors in cm-1)."""
     cases = list(matched_cases())
-    figures = {**_strong(cases), **_explained(cases), **_carbonyl(cases, verbose)}
+    figures = {**_strong(cases), **_explained(cases), **_carbonyl(cases, verbose), **_rivals(cases)}
     print(f"infrared, {len(cases)} published lists")
     for name, value in figures.items():
         print(f"  {name:58s} {value:8.3f}")
@@ -44,6 +48,31 @@ def _explained(cases: list[Matched]) -> dict[str, float]:
             total[part] += 1
             hits[part] += case.covered(k)
     return {f"printed bands explained, {part}": hits[part] / total[part] for part in total}
+
+
+def _rivals(cases: list[Matched]) -> dict[str, float]:
+    """How far infrared alone tells a truth from its listed rivals, where they differ in expected bands."""
+    margins = []
+    for case in cases:
+        own = _total(case.printed, case.expected)
+        for smiles in case.rivals:
+            expected = predict_bands(read_structure(smiles), case.medium)
+            if _look(expected) != _look(case.expected):
+                margins.append(own - _total(case.printed, expected))
+    clear = [margin for margin in margins if abs(margin) > CLEAR_DB]
+    return {
+        "rivals told apart by more than 3 decibans": len(clear) / len(margins),
+        "of these, truth preferred": sum(margin > 0 for margin in clear) / len(clear),
+        "mean margin of the truth, decibans": sum(margins) / len(margins),
+    }
+
+
+def _total(printed: tuple[float, ...], expected: tuple[IrExpectation, ...]) -> float:
+    return sum(evidence.weight_db for evidence in weigh_bands(printed, expected))
+
+
+def _look(expected: tuple[IrExpectation, ...]) -> set[tuple[str, float]]:
+    return {(band.group, band.typical) for band in expected}
 
 
 def _carbonyl(cases: list[Matched], verbose: bool) -> dict[str, float]:

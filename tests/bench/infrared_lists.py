@@ -27,6 +27,8 @@ class Matched:
     printed: tuple[float, ...]
     expected: tuple[IrExpectation, ...]
     taken: dict[int, int]  # index of expectation -> index of printed band
+    rivals: tuple[str, ...]  # SMILES
+    medium: str
 
     def covered(self, band: int) -> bool:
         """Whether any expectation allows this printed band."""
@@ -48,8 +50,10 @@ def matched_cases() -> Iterator[Matched]:
     for case in printed_cases():
         structure = read_structure(case["smiles"])
         printed = tuple(float(band["cm1"]) for band in case["ir"])
-        expected = predict_bands(structure, case.get("ir_medium") or "")
-        yield Matched(case["id"], structure, printed, expected, _match(expected, printed))
+        medium = case.get("ir_medium") or ""
+        expected = predict_bands(structure, medium)
+        taken = _match(expected, printed)
+        yield Matched(case["id"], structure, printed, expected, taken, tuple(case["rivals"]), medium)
 
 
 def _match(expected: tuple[IrExpectation, ...], printed: tuple[float, ...]) -> dict[int, int]:

@@ -18,6 +18,8 @@ from hoodside.predict.infrared import (
     predict_bands,
     region_of,
     seen_when_looked,
+    weigh_bands,
+    weigh_clear,
 )
 from hoodside.predict.infrared.table import band_rows, shift_rules
 from hoodside.predict.model import IrExpectation
@@ -184,6 +186,33 @@ def test_reliabilities_are_probabilities_and_favour_the_strong() -> None:
 def test_background_is_a_density() -> None:
     total = sum(background_density(cm1) for cm1 in range(400, 4000))
     assert total == pytest.approx(1, abs=0.02)
+
+
+def test_evidence_prefers_the_carbonyl_that_fits() -> None:
+    ketone = predict_bands(read_structure("CCCCC(C)=O"))
+    ester = predict_bands(read_structure("CCCC(=O)OC"))
+    for cm1, right, wrong in ((1716, ketone, ester), (1741, ester, ketone)):
+        (for_it, against) = (weigh_bands([cm1], bands)[0].weight_db for bands in (right, wrong))
+        assert for_it > against + 3
+        assert for_it > 0
+
+
+def test_evidence_names_the_band_and_the_missing_ones() -> None:
+    bands = predict_bands(read_structure("N#Cc1ccc(C=O)cc1"))
+    evidence = weigh_bands([2230, 2000, 1600], bands)
+    assert evidence[0].expected is not None
+    assert evidence[0].expected.mode == "C#N stretch"
+    missing = {e.expected.group for e in evidence if e.reading == -1 and e.expected}
+    assert "aldehyde (aryl)" in missing
+    assert all(e.weight_db < 0 for e in evidence if e.reading == -1)
+
+
+def test_a_clear_region_speaks_against_what_lives_there() -> None:
+    alcohol = predict_bands(read_structure("CCCCO"))
+    ether = predict_bands(read_structure("CCOCC"))
+    against = weigh_clear([(3120, 3600)], alcohol)
+    assert sum(e.weight_db for e in against) < -8
+    assert not weigh_clear([(3120, 3600)], ether)
 
 
 def test_every_row_is_sound() -> None:

@@ -1,6 +1,7 @@
 """Infrared: bands a structure should show, groups a band may mean, diagnostic regions, reliability."""
 
 from hoodside.predict.infrared.bands import absence_bands, predict_bands
+from hoodside.predict.infrared.evidence import BandEvidence, weigh_bands, weigh_clear
 from hoodside.predict.infrared.lookup import BandMeaning, groups_for_band
 from hoodside.predict.infrared.regions import IrRegion, ir_regions, region_of
 from hoodside.predict.infrared.reliability import (
@@ -11,6 +12,7 @@ from hoodside.predict.infrared.reliability import (
 )
 
 __all__ = [
+    "BandEvidence",
     "BandMeaning",
     "IrRegion",
     "absence_bands",
@@ -22,4 +24,6 @@ __all__ = [
     "predict_bands",
     "region_of",
     "seen_when_looked",
+    "weigh_bands",
+    "weigh_clear",
 ]
