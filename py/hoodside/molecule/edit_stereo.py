@@ -12,7 +12,7 @@ _BOTH_MARKS: tuple[Mark, Mark] = ("cw", "ccw")
 
 def is_stereocentre(structure: Structure, atom: int) -> bool:
     """Whether an atom can hold a configuration (set already or still open)."""
-    return bool(_marked(structure, atom, "cw").atoms[atom].stereo)
+    return atom in centre_labels(_marked(structure, atom, "cw"))
 
 
 def is_stereobond(structure: Structure, bond: int) -> bool:
@@ -20,7 +20,7 @@ def is_stereobond(structure: Structure, bond: int) -> bool:
     chosen = bond_at(structure, bond)
     if chosen.order != 2 or chosen.aromatic or not all(_sides(structure, chosen)):
         return False
-    return bool(_with_mark(structure, chosen, "trans").bonds[bond].stereo)
+    return bond in bond_labels(_with_mark(structure, chosen, "trans"))
 
 
 def set_stereo(structure: Structure, atom: int, label: str) -> Structure:
