@@ -30,12 +30,16 @@ export const caseById = (id) => cases.value.find((doc) => doc.id === id) ?? null
  * @type {Promise<unknown>} */
 let writing = Promise.resolve();
 
+/** Other tabs of this app on this device, told when a case has been written or deleted. */
+const tabs = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel('hoodside-cases');
+if (tabs) tabs.onmessage = () => { writing.then(loadCases); };
+
 /** @param {CaseDoc} doc */
 function keep(doc) {
   const known = cases.value.some((entry) => entry.id === doc.id);
   cases.value = known ? cases.value.map((entry) => (entry.id === doc.id ? doc : entry)) : [...cases.value, doc];
   writing = writing.then(() => writeCase(doc)).then(
-    () => { storeTrouble.value = ''; },
+    () => { storeTrouble.value = ''; tabs?.postMessage(doc.id); },
     (error) => { storeTrouble.value = `This device did not keep the last change (${error?.message ?? error}).`; },
   );
   return writing;
@@ -58,6 +62,14 @@ export function changeWithUndo(id, what, edit) {
   const before = caseById(id);
   changeCase(id, edit);
   if (before) offerUndo(what, () => keep(before));
+}
+
+/** Take out rows of one kind that were begun and left without a figure.
+ * @param {string} id @param {'h1' | 'c13' | 'ms' | 'ir'} kind @param {string} rowId */
+export function dropIfEmpty(id, kind, rowId) {
+  const row = /** @type {any} */ (caseById(id)?.[kind].find((entry) => entry.id === rowId));
+  if (!row || row.shift?.trim() || row.ppm?.trim() || row.mz?.trim() || row.cm1?.trim() || row.h?.trim() || row.j?.trim()) return;
+  changeCase(id, (draft) => { /** @type {any} */ (draft)[kind] = /** @type {any[]} */ (draft[kind]).filter((entry) => entry.id !== rowId); });
 }
 
 /** Note what the list shows; no change of the case itself. @param {string} id
@@ -85,6 +97,6 @@ export function copyCase(doc) {
 /** @param {CaseDoc} doc */
 export function deleteCase(doc) {
   cases.value = cases.value.filter((entry) => entry.id !== doc.id);
-  writing = writing.then(() => dropCase(doc.id));
+  writing = writing.then(() => dropCase(doc.id)).then(() => tabs?.postMessage(doc.id), () => {});
   offerUndo(`${doc.title || 'Case'} deleted`, () => keep(doc));
 }

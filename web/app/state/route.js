@@ -3,7 +3,16 @@ import { computed, signal } from '@preact/signals';
 export const STATIONS = /** @type {const} */ (['readings', 'structures', 'tally', 'next']);
 /** @typedef {typeof STATIONS[number]} Station */
 
-const read = () => location.hash.replace(/^#\/?/, '').split('/').filter(Boolean).map(decodeURIComponent);
+/** @param {string} step */
+function decoded(step) {
+  try {
+    return decodeURIComponent(step);
+  } catch {
+    return step; // a percent sign typed by hand
+  }
+}
+
+const read = () => location.hash.replace(/^#\/?/, '').split('/').filter(Boolean).map(decoded);
 
 /** Steps of the address: ["case", id, station, sheet, ...arguments]. */
 export const path = signal(read());

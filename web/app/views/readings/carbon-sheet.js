@@ -2,6 +2,7 @@ import { html } from 'htm/preact';
 import { Chips } from '../../components/parts.js';
 import { Formula } from '../../components/chem.js';
 import { NumberPad, PadField } from '../../components/pad.js';
+import { useLeaveEmpty } from '../../components/leave-empty.js';
 import { Sheet } from '../../components/sheet.js';
 import { changeCase, changeWithUndo } from '../../state/cases.js';
 import { newId } from '../../state/document.js';
@@ -19,6 +20,7 @@ const COUNTS = ['1', '2', '3', '4'].map((value) => ({ value, text: value === '1'
 
 /** One 13C line: shift, kind when known, how many carbons. @param {{ doc: CaseDoc, rowId: string }} props */
 export function CarbonSheet({ doc, rowId }) {
+  useLeaveEmpty(doc.id, 'c13', rowId);
   const rows = highFirst(doc.c13, (row) => row.ppm);
   const row = rows.find((entry) => entry.id === rowId) ?? null;
   const back = address('case', doc.id, 'readings');

@@ -1,10 +1,10 @@
 import { html } from 'htm/preact';
-import { useState } from 'preact/hooks';
+import { useEffect, useState } from 'preact/hooks';
 import { Chips, Section } from '../../components/parts.js';
 import { NumberPad, PadField } from '../../components/pad.js';
 import { Sheet } from '../../components/sheet.js';
 import { Formula } from '../../components/chem.js';
-import { changeCase, changeWithUndo } from '../../state/cases.js';
+import { caseById, changeCase, changeWithUndo, dropIfEmpty } from '../../state/cases.js';
 import { address, go } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { toNumber } from '../../words/numbers.js';
@@ -28,6 +28,7 @@ export function InfraredSheet({ doc, regionId }) {
   const [picked, setPicked] = useState('');
   const band = bands.find((entry) => entry.id === picked) ?? bands[bands.length - 1] ?? null;
   const back = address('case', doc.id, 'readings');
+  useEffect(() => () => caseById(doc.id)?.ir.forEach((entry) => dropIfEmpty(doc.id, 'ir', entry.id)), [regionId]);
   const leave = () => {
     const next = region && regions[regions.indexOf(region) + 1];
     if (next) touchRegion(doc, next.id);

@@ -1,5 +1,6 @@
 import { html } from 'htm/preact';
 import { NumberPad, PadField } from '../../components/pad.js';
+import { useLeaveEmpty } from '../../components/leave-empty.js';
 import { Sheet } from '../../components/sheet.js';
 import { changeCase, changeWithUndo } from '../../state/cases.js';
 import { newId } from '../../state/document.js';
@@ -12,6 +13,7 @@ import { Printout } from './photos.js';
 
 /** Peaks of the mass spectrum. @param {{ doc: CaseDoc, rowId: string }} props */
 export function MassesSheet({ doc, rowId }) {
+  useLeaveEmpty(doc.id, 'ms', rowId);
   const row = doc.ms.find((entry) => entry.id === rowId) ?? null;
   const set = (/** @type {object} */ given) => changeCase(doc.id, (draft) => { Object.assign(draft.ms.find((entry) => entry.id === rowId) ?? {}, given); });
   const another = () => {

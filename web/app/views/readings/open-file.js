@@ -1,10 +1,14 @@
 import { html } from 'htm/preact';
+import { changeWithUndo } from '../../state/cases.js';
+import { newId } from '../../state/document.js';
 import { go } from '../../state/route.js';
 import { say } from '../../state/toast.js';
 import { importCase } from '../cases/menu.js';
 import { pastedStructure } from '../structures/paste-sheet.js';
 import { pasted } from './paste-sheet.js';
+import { takeOver } from './take-over.js';
 
+/** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {'case' | 'structure' | 'report'} FileKind */
 
 const MAX_BYTES = 4_000_000;
@@ -17,7 +21,22 @@ export function sniff(text) {
   return 'report';
 }
 
-/** A file button: case, CTfile, report text or JCAMP-DX. @param {{ doc: import('../../types').CaseDoc }} props */
+const READING_KEYS = ['h1', 'c13', 'ir', 'ir_clear', 'ms', 'hrms', 'analysis', 'wet', 'formula', 'candidates'];
+
+/** A JSON file: a whole case, or a check object as the command line reads it.
+ * @param {CaseDoc} doc @param {File} file @param {string} text */
+async function openJson(doc, file, text) {
+  const given = JSON.parse(text);
+  if (given?.kind === 'hoodside-case') { await importCase(file); return; }
+  if (!READING_KEYS.some((key) => given?.[key])) throw new Error('it holds neither a case nor readings');
+  changeWithUndo(doc.id, `${file.name} taken over`, (draft) => {
+    takeOver(draft, given, false);
+    for (const source of given.candidates ?? []) draft.structures.push({ id: newId(), source, name: '', smiles: '', formula: '', svg: '' });
+  });
+  if (given.text) { pasted.value = given.text; go('case', doc.id, 'readings', 'paste'); }
+}
+
+/** A file button: case, CTfile, report text or JCAMP-DX. @param {{ doc: CaseDoc }} props */
 export function OpenFile({ doc }) {
   const open = async (/** @type {any} */ event) => {
     const input = event.currentTarget;
@@ -27,7 +46,7 @@ export function OpenFile({ doc }) {
     if (file.size > MAX_BYTES) { say(`${file.name} is larger than 4 MB and was not read. Take the part with the peak list.`); return; }
     const text = await file.text();
     const kind = sniff(text);
-    if (kind === 'case') await importCase(file);
+    if (kind === 'case') await openJson(doc, file, text).catch((error) => say(`${file.name} was not taken in: ${error.message}.`));
     else if (kind === 'structure') { pastedStructure.value = text; go('case', doc.id, 'structures', 'paste'); }
     else { pasted.value = text; go('case', doc.id, 'readings', 'paste'); }
   };

@@ -1,6 +1,7 @@
 import { html } from 'htm/preact';
 import { Chips } from '../../components/parts.js';
 import { NumberPad, PadField } from '../../components/pad.js';
+import { useLeaveEmpty } from '../../components/leave-empty.js';
 import { Sheet } from '../../components/sheet.js';
 import { changeCase, changeWithUndo } from '../../state/cases.js';
 import { protonFault } from '../../state/input.js';
@@ -26,6 +27,7 @@ const SAME_J_HZ = 0.3;
 
 /** One 1H signal: shift, pattern, J, H. @param {{ doc: CaseDoc, rowId: string }} props */
 export function ProtonSheet({ doc, rowId }) {
+  useLeaveEmpty(doc.id, 'h1', rowId);
   const rows = highFirst(doc.h1, (row) => row.shift);
   const row = rows.find((entry) => entry.id === rowId) ?? null;
   const back = address('case', doc.id, 'readings');

@@ -49,7 +49,7 @@ export function Rows({ doc, rows, at }) {
     <a class="tally-row" href=${address('case', doc.id, 'tally', 'reason', String(at), row.key)}>
       <span class="tally-words"><b><${Words} text=${row.label} /></b>
         <span>${row.predicted.map((ref) => expected(ref, predicted)).filter(Boolean).slice(0, 1)[0] || html`<${Words} text=${row.findings[0]?.text ?? ''} />`}</span></span>
-      <span class="tally-weight" aria-label="${row.weight >= 0 ? 'for' : 'against'}, ${signed(row.weight)} decibans">${signed(row.weight)}</span>
+      <span class="tally-weight"><span class="hidden">${row.weight >= 0 ? 'for' : 'against'}, decibans </span>${signed(row.weight)}</span>
       <${Balance} db=${row.weight} />
     </a></li>`)}</ul>`;
 }
