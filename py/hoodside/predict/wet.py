@@ -48,6 +48,7 @@ class _Rule:
     smarts: str
     p: float
     why: str
+    needs: frozenset[str]  # elements without which the pattern cannot match
     source: str
 
 
@@ -90,7 +91,8 @@ def expected_results(structure: Structure) -> tuple[WetExpectation, ...]:
     positive. With none, the test is negative but for its rate of false positives.
     Source: facts/wet_rules.csv (Shriner; Vogel; probabilities by common practice).
     """
-    rules, bans = _rules(), _bans()
+    rules = tuple(rule for rule in _rules() if rule.needs <= structure.element_counts.keys())
+    bans = _bans()
     patterns = [rule.smarts for rule in rules] + [smarts for _, smarts, _, _ in bans]
     found = dict(zip(patterns, structure.match_all(patterns), strict=True))
     return tuple(_expect(test, rules, bans, found) for test in wet_tests())
@@ -132,7 +134,13 @@ def _called(p: float) -> str:
 def _rules() -> tuple[_Rule, ...]:
     return tuple(
         _Rule(
-            row["test"], int(row["rank"]), row["smarts"], float(row["p_positive"]), row["why"], row["source"]
+            test=row["test"],
+            rank=int(row["rank"]),
+            smarts=row["smarts"],
+            p=float(row["p_positive"]),
+            why=row["why"],
+            needs=frozenset(row["needs"].split()),
+            source=row["source"],
         )
         for row in load_table("wet_rules")
     )

@@ -46,7 +46,7 @@ def predict_bands(structure: Structure, medium: str = "") -> tuple[IrExpectation
     atoms the most specific wins; then the shifts of facts/ir_shifts.csv that apply are added. Bands that
     symmetry forbids are left out. Equal expectations at several places are joined.
     """
-    rows = _rows_for(medium)
+    rows = [row for row in _rows_for(medium) if row.needs <= structure.element_counts.keys()]
     found = structure.match_all([row.smarts for row in rows])
     hits = [_Hit(row, atoms) for row, matches in zip(rows, found, strict=True) for atoms in matches]
     hits = [
@@ -102,7 +102,7 @@ def _geometry_fits(structure: Structure, hit: _Hit) -> bool:
 
 def _shifts_by_site(structure: Structure) -> dict[int, list[tuple[ShiftRule, int]]]:
     """Per atom, the rules that apply there and how many times."""
-    rules = shift_rules()
+    rules = [rule for rule in shift_rules() if rule.needs <= structure.element_counts.keys()]
     by_site: dict[int, list[tuple[ShiftRule, int]]] = defaultdict(list)
     for rule, matches in zip(rules, structure.match_all([rule.smarts for rule in rules]), strict=True):
         for site, times in Counter(match[0] for match in matches).items():

@@ -38,6 +38,7 @@ class BandRow:
     shifts: str  # "all": base value; "fine": only the fine rules; "": none
     geometry: str  # "cis" or "trans" of the double bond, or ""
     use: str  # "both", "lookup" (band to group only) or "artefact"
+    needs: frozenset[str]  # elements without which the pattern cannot match
     source: str
 
 
@@ -50,6 +51,7 @@ class ShiftRule:
     label: str
     smarts: str  # its first atom is the site
     deltas: tuple[float, ...]
+    needs: frozenset[str]  # elements without which the pattern cannot match
     one_sided: bool  # some rotamers are not shifted: the far end of the range moves, the near end stays
     source: str
 
@@ -76,6 +78,7 @@ def shift_rules() -> tuple[ShiftRule, ...]:
             label=row["label"],
             smarts=row["smarts"],
             deltas=tuple(float(delta) for delta in row["deltas_cm1"].split()),
+            needs=frozenset(row["needs"].split()),
             one_sided=row["one_sided"] == "yes",
             source=row["source"],
         )
@@ -104,5 +107,6 @@ def _band(row: Row) -> BandRow:
         shifts=row["shifts"],
         geometry=row["geometry"],
         use=row["use"],
+        needs=frozenset(row["needs"].split()),
         source=row["source"],
     )

@@ -23,7 +23,14 @@ class Cleavage:
     ion: Formula | None  # the whole ion, where it is one rearranged species
     weight: float  # 0..1, how often such an ion is seen where the rule applies
     prefers_largest: bool  # the largest radical is lost most readily
+    needs: frozenset[str]  # elements without which the pattern cannot match
     source: str
+
+    def possible_in(self, molecule: Formula) -> bool:
+        """Whether the molecule has the elements for the pattern and for what is expelled."""
+        if not self.needs <= molecule.elements.keys():
+            return False
+        return all(part is None or molecule.contains(part) for part in (self.minus, self.ion))
 
 
 @cache
@@ -40,6 +47,7 @@ def cleavages() -> tuple[Cleavage, ...]:
             ion=parse_formula(row["ion"]) if row["ion"] else None,
             weight=float(row["weight"]),
             prefers_largest=row["largest"] == "yes",
+            needs=frozenset(row["needs"].split()),
             source=row["source"],
         )
         for row in load_table("ms_cleavages")
