@@ -1,0 +1,19 @@
+"""What engine this is."""
+
+from __future__ import annotations
+
+import platform
+from typing import Any
+
+import hoodside
+from hoodside.molecule.kernel import kernel
+
+
+def about() -> dict[str, Any]:
+    """Versions of the engine, of Python and of the molecule kernel."""
+    return {
+        "version": hoodside.__version__,
+        "kernel": kernel().name,
+        "kernel_version": kernel().version(),
+        "python": platform.python_version(),
+    }
