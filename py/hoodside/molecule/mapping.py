@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Mapping
 from itertools import combinations
+from typing import NamedTuple
 
 from hoodside.molecule.stereo_units import Unit
 
@@ -38,11 +39,12 @@ class Framework:
         self.labels = labels
         self.colours = colours
         self.units = {unit.centres: unit for unit in units}
-        self._units_at: list[list[Unit]] = [[] for _ in neighbours]
+        self._units_at: list[list[tuple[Unit, tuple[int, ...]]]] = [[] for _ in neighbours]
         for unit in units:
-            for point in unit.points:
-                self._units_at[point].append(unit)
-        self._plans: dict[int, list[tuple[int, int, list[int], list[Unit]]]] = {}
+            points = unit.points
+            for point in points:
+                self._units_at[point].append((unit, points))
+        self._plans: dict[int, Plan] = {}
         self.settled = Relations()
         for unit in units:
             if unit.parity is not None:
@@ -63,25 +65,50 @@ class Framework:
             self.settled = search.relations
         return found
 
-    def plan(self, start: int) -> list[tuple[int, int, list[int], list[Unit]]]:
-        """Points outward from ``start``, each with the point it hangs on, its other earlier neighbours and
-        the units it makes whole."""
+    def plan(self, start: int) -> Plan:
+        """The order in which a search from ``start`` places points."""
         if start not in self._plans:
-            self._plans[start] = list(self._walk(start))
+            self._plans[start] = Plan(self._walk(start))
         return self._plans[start]
 
-    def _walk(self, start: int) -> Iterator[tuple[int, int, list[int], list[Unit]]]:
+    def _walk(self, start: int) -> Iterator[Placing]:
         seen, queue = {start}, [(start, -1)]
         placed: set[int] = set()
         for point, parent in queue:
             placed.add(point)
             closing = [j for j in self.neighbours[point] if j in placed and j != parent]
-            whole = [u for u in self._units_at[point] if placed.issuperset(u.points)]
-            yield point, parent, closing, whole
+            whole = [unit for unit, points in self._units_at[point] if placed.issuperset(points)]
+            yield Placing(point, parent, closing, whole)
             for there in self.neighbours[point]:
                 if there not in seen:
                     seen.add(there)
                     queue.append((there, point))
+
+
+class Placing(NamedTuple):
+    """A point of a plan, the one it hangs on (-1: none), its other earlier neighbours, units now whole."""
+
+    point: int
+    parent: int
+    closing: list[int]
+    whole: list[Unit]
+
+
+class Plan:
+    """Points outward from a start, worked out as far as searches have come: most fail within a few bonds."""
+
+    def __init__(self, walk: Iterator[Placing]) -> None:
+        self._walk = walk
+        self._known: list[Placing] = []
+
+    def at(self, depth: int) -> Placing | None:
+        """The placing at a depth, or None past the end."""
+        while len(self._known) <= depth:
+            placing = next(self._walk, None)
+            if placing is None:
+                return None
+            self._known.append(placing)
+        return self._known[depth]
 
 
 class Relations:
@@ -136,35 +163,37 @@ class _Search:
         self.relations = frame.settled.copy()
 
     def run(self) -> Operation | None:
-        stack: list[tuple[Iterator[int], int]] = [(self._choices(0), self.relations.mark())]
+        first = self.plan.at(0)
+        stack = [(first, self._choices(first), self.relations.mark())] if first else []
         for _ in range(_MAX_STEPS):
-            choices, mark = stack[-1]
-            self._take_back(len(stack) - 1, mark)
-            if not any(self._place(len(stack) - 1, choice, mark) for choice in choices):
-                stack.pop()
-            elif len(stack) == len(self.plan):
-                return self.image
-            else:
-                stack.append((self._choices(len(stack)), self.relations.mark()))
             if not stack:
                 return None
+            placing, choices, mark = stack[-1]
+            self._take_back(placing, mark)
+            if not any(self._place(placing, choice, mark) for choice in choices):
+                stack.pop()
+                continue
+            following = self.plan.at(len(stack))
+            if following is None:
+                return self.image
+            stack.append((following, self._choices(following), self.relations.mark()))
         return None
 
-    def _choices(self, depth: int) -> Iterator[int]:
-        point, parent, _, _ = self.plan[depth]
+    def _choices(self, placing: Placing) -> Iterator[int]:
+        point = placing.point
         if point in self.pins:
             around: tuple[int, ...] = (self.pins[point],)
         else:
-            around = self.frame.neighbours[self.image[parent]]
+            around = self.frame.neighbours[self.image[placing.parent]]
             if point in around:  # staying put first keeps operations simple
                 around = (point, *(p for p in around if p != point))
         colour = self.frame.colours[point]
         return iter([p for p in around if self.frame.colours[p] == colour])
 
-    def _place(self, depth: int, choice: int, mark: int) -> bool:
+    def _place(self, placing: Placing, choice: int, mark: int) -> bool:
         if choice in self.taken:
             return False
-        point, parent, closing, whole = self.plan[depth]
+        point, parent, closing, whole = placing
         labels, image = self.frame.labels, self.image
         if parent >= 0 and labels.get((image[parent], choice)) != labels[parent, point]:
             return False
@@ -178,10 +207,9 @@ class _Search:
         self.relations.back_to(mark)
         return False
 
-    def _take_back(self, depth: int, mark: int) -> None:
-        point = self.plan[depth][0]
-        if point in self.image:
-            self.taken.discard(self.image.pop(point))
+    def _take_back(self, placing: Placing, mark: int) -> None:
+        if placing.point in self.image:
+            self.taken.discard(self.image.pop(placing.point))
             self.relations.back_to(mark)
 
     def _keeps(self, unit: Unit) -> bool:
