@@ -176,6 +176,13 @@ class Draft:
         """The structure drafted, freshly perceived. Raises: StructureError when it is impossible."""
         return read_structure(kernel().smiles(self.source()))
 
+    def keep_order(self) -> Structure:
+        """The structure drafted, its atoms numbered as in the draft. Raises: StructureError as ``finish``.
+
+        By way of a CTfile, which keeps the order and has aromaticity perceived afresh.
+        """
+        return read_structure(kernel().molblock(self.source()))
+
     def _bond(self, a: int, b: int) -> dict[str, Any]:
         for bond in self._bonds:
             if {bond["a"], bond["b"]} == {a, b}:

@@ -1,0 +1,51 @@
+"""What to call the stereochemistry of a product drawn as one enantiomer."""
+
+from __future__ import annotations
+
+from hoodside.molecule import Structure
+from hoodside.molecule.draft import Draft
+from hoodside.molecule.symmetry import constitutional_classes
+
+
+def mirror_smiles(structure: Structure) -> str:
+    """Canonical SMILES of the mirror image."""
+    draft = Draft(structure)
+    for atom in structure.atoms:
+        draft.turn_over(atom.index)
+    return draft.finish().smiles
+
+
+def settled(structure: Structure) -> Structure:
+    """A racemic start with one open centre drawn as one of its enantiomers, so that products relate to it."""
+    open_centres = _open_centres(structure)
+    if len(open_centres) != 1 or any(atom.stereo for atom in structure.atoms):
+        return structure
+    draft = Draft(structure)
+    draft.set_mark(open_centres[0], "cw")
+    return draft.keep_order()
+
+
+def _open_centres(structure: Structure) -> list[int]:
+    """Saturated carbons with four unlike ligands that the source leaves unmarked."""
+    classes = constitutional_classes(structure)
+    found = []
+    for atom in structure.atoms:
+        ligands = [classes[n] for n in structure.neighbours[atom.index]]
+        full = len(ligands) + atom.hydrogens == 4 and atom.hydrogens <= 1
+        if atom.symbol == "C" and not atom.stereo and full and len(set(ligands)) == len(ligands):
+            found.append(atom.index)
+    return found
+
+
+def stereo_words(product: Structure, start: Structure) -> str:
+    """ "racemic", "meso" or "" for a product of an achiral start; "one diastereomer" otherwise."""
+    marked = sum(bool(atom.cip) for atom in product.atoms)
+    if not marked:
+        return ""
+    achiral_product = mirror_smiles(product) == product.smiles
+    if achiral_product:
+        return "meso"
+    achiral_start = mirror_smiles(start) == start.smiles
+    if achiral_start:
+        return "racemic" if marked < 2 else "one diastereomer, racemic"
+    return "configuration kept; new centres by the mechanism"
