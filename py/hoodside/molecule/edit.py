@@ -13,12 +13,12 @@ from typing import Any
 from hoodside.errors import InvalidInputError
 from hoodside.molecule.draft import Draft
 from hoodside.molecule.edit_common import (
-    VALENCES,
     atom_at,
     bond_at,
     finished,
     largest_piece,
     need_hydrogens,
+    normal_valences,
     refused,
 )
 from hoodside.molecule.edit_stereo import flip_double_bond, flip_stereo, set_double_bond, set_stereo
@@ -46,13 +46,16 @@ def attach(structure: Structure, atom: int, group: str, order: int = 1) -> Struc
 
 def change_element(structure: Structure, atom: int, symbol: str) -> Structure:
     """Make an atom another element, uncharged; hydrogens make up its valence."""
-    if symbol not in VALENCES:
+    if symbol not in normal_valences():
         raise refused(
-            f"{symbol!r} cannot be put in.", f"Choose one of {', '.join(VALENCES)}.", "symbol", symbol
+            f"{symbol!r} cannot be put in.",
+            f"Choose one of {', '.join(normal_valences())}.",
+            "symbol",
+            symbol,
         )
     atom_at(structure, atom)
     used = sum(bond.order for bond in structure.bonds_of[atom])
-    valence = next((v for v in VALENCES[symbol] if v >= used), None)
+    valence = next((v for v in normal_valences()[symbol] if v >= used), None)
     if valence is None:
         what = f"Atom {atom} has {used} bonds, more than {symbol} can have."
         raise refused(what, "Lower or take out a bond first.", "symbol", symbol)
@@ -90,7 +93,7 @@ def join(structure: Structure, a: int, b: int) -> Structure:
 def insert(structure: Structure, bond: int, symbol: str) -> Structure:
     """Put one atom (C, N, O, S ...) into a single bond."""
     opened = bond_at(structure, bond)
-    valence = VALENCES.get(symbol, (0,))[0]
+    valence = normal_valences().get(symbol, (0,))[0]
     if opened.order != 1 or opened.aromatic or valence <= 1:
         what = f"{symbol} cannot be put into bond {bond}."
         raise refused(what, "Choose a single bond that is not aromatic, and C, N, O or S.", "bond", bond)

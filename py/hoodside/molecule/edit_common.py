@@ -2,27 +2,21 @@
 
 from __future__ import annotations
 
-from collections.abc import Mapping
+from functools import cache
 
 from hoodside.errors import StructureError
+from hoodside.facts.table import load_table
 from hoodside.molecule.draft import Draft
 from hoodside.molecule.structure import Atom, Bond, Structure, read_structure
 
-#: Neutral valences by element, lowest first (common practice).
-VALENCES: Mapping[str, tuple[int, ...]] = {
-    "B": (3,),
-    "C": (4,),
-    "N": (3,),
-    "O": (2,),
-    "F": (1,),
-    "Si": (4,),
-    "P": (3, 5),
-    "S": (2, 4, 6),
-    "Cl": (1,),
-    "Se": (2, 4, 6),
-    "Br": (1,),
-    "I": (1,),
-}
+
+@cache
+def normal_valences() -> dict[str, tuple[int, ...]]:
+    """Element -> the valences it has without charge, lowest first (facts table normal_valences)."""
+    found: dict[str, tuple[int, ...]] = {}
+    for row in load_table("normal_valences"):
+        found[row["element"]] = (*found.get(row["element"], ()), int(row["valence"]))
+    return found
 
 
 def atom_at(structure: Structure, atom: int) -> Atom:

@@ -9,7 +9,7 @@ from typing import Any
 
 from hoodside.errors import InvalidInputError
 from hoodside.facts.table import Row, load_table
-from hoodside.molecule.edit_common import VALENCES, atom_at, bond_at
+from hoodside.molecule.edit_common import atom_at, bond_at, normal_valences
 from hoodside.molecule.edit_stereo import bond_labels, centre_labels, is_stereobond, is_stereocentre
 from hoodside.molecule.structure import Atom, Bond, Structure
 
@@ -94,7 +94,11 @@ def _ranked_groups(column: str) -> tuple[Row, ...]:
 def _elements(structure: Structure, atom: Atom) -> Iterator[Option]:
     used = sum(bond.order for bond in structure.bonds_of[atom.index])
     for symbol in _ELEMENTS:
-        if symbol != atom.symbol and max(VALENCES[symbol]) >= used and not (atom.aromatic and symbol in "OS"):
+        if (
+            symbol != atom.symbol
+            and max(normal_valences()[symbol]) >= used
+            and not (atom.aromatic and symbol in "OS")
+        ):
             yield Option(
                 symbol, f"make it {symbol}", "change_element", {"atom": atom.index, "symbol": symbol}
             )
