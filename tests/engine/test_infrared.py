@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+import json
 from itertools import pairwise
+from pathlib import Path
 
 import pytest
 from rdkit import Chem
@@ -42,6 +44,15 @@ def test_the_most_specific_row_wins_at_a_site() -> None:
 def test_two_carbonyls_of_different_kind_are_both_expected() -> None:
     groups = {band.group for band in _bands("CCOC(=O)CCC(=O)c1ccccc1", "C=O stretch")}
     assert groups == {"ester (saturated)", "aryl alkyl ketone"}
+
+
+def test_every_carbonyl_of_the_published_structures_has_a_band() -> None:
+    cases = json.loads((Path(__file__).parents[1] / "cases" / "published.json").read_text("utf-8"))
+    for smiles in {s for case in cases[::4] for s in (case["smiles"], *case["rivals"])}:
+        structure = read_structure(smiles)
+        carbonyls = {match[0] for match in structure.matches("[#6;!$([#6]=*=*);!$([#6][O-])]=[OX1]")}
+        expected = {a for b in predict_bands(structure) if "C=O" in b.mode for a in b.atoms}
+        assert carbonyls <= expected, smiles
 
 
 def test_no_carbonyl_without_one() -> None:

@@ -19,6 +19,7 @@ from hoodside.predict.infrared.table import (
 from hoodside.predict.model import IrExpectation, Term
 
 _SMALLEST_TRANS_RING = 8
+_NO_CLAIM = -9  # below any rank
 
 
 @dataclass(frozen=True, slots=True)
@@ -70,7 +71,7 @@ def _rows_for(medium: str) -> list[BandRow]:
 
 def _winners(hits: list[_Hit]) -> list[_Hit]:
     """Drop hits outranked at every site they claim."""
-    best: dict[tuple[str, int], tuple[int, int]] = defaultdict(lambda: (-1, 0))
+    best: dict[tuple[str, int], tuple[int, int]] = defaultdict(lambda: (_NO_CLAIM, 0))
     for hit in hits:
         for site in hit.sites:
             best[hit.row.family, site] = max(best[hit.row.family, site], hit.claim)
