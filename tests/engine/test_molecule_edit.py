@@ -48,6 +48,14 @@ def formula(smiles: str) -> Counter[str]:
     return Counter(atom.GetSymbol() for atom in mol.GetAtoms())
 
 
+def flat(smiles: str) -> str:
+    return Chem.MolToSmiles(Chem.MolFromSmiles(smiles), isomericSmiles=False)
+
+
+def stereo_marks(structure: Structure) -> int:
+    return sum(bool(a.stereo) for a in structure.atoms) + sum(bool(b.stereo) for b in structure.bonds)
+
+
 def bond(structure: Structure, a: int, b: int) -> int:
     found = structure.bond_between(a, b)
     assert found is not None
@@ -163,7 +171,10 @@ def test_attaching_and_cutting_again_is_no_change(smiles: str, group: str, data:
     assert [a.symbol for a in made.atoms[: len(structure.atoms)]] == [a.symbol for a in structure.atoms]
     parted = edit.cut(made, bond(made, atom, len(structure.atoms)))
     whole = [structure.smiles, read_structure(group).smiles]
-    assert parted.smiles in whole
+    if stereo_marks(made) < stereo_marks(structure):  # the group made two ligands alike
+        assert flat(parted.smiles) in [flat(s) for s in whole]
+    else:
+        assert parted.smiles in whole
 
 
 @settings(max_examples=40, deadline=None)
