@@ -1,10 +1,10 @@
 import { html } from 'htm/preact';
 import { signal } from '@preact/signals';
-import { Formula } from '../../components/chem.js';
+import { Formula, Words } from '../../components/chem.js';
 import { Icon } from '../../components/icon.js';
 import { Section } from '../../components/parts.js';
 import { changeCase, changeWithUndo } from '../../state/cases.js';
-import { address, go } from '../../state/route.js';
+import { go } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { dashed } from '../../words/readings.js';
 import { addBand, bandsIn, markClear, markOpen, stateOf, sweepWords } from './infrared.js';
@@ -87,11 +87,11 @@ function RegionMarks({ doc, regions, region }) {
       <button type="button" class="toggle" aria-pressed=${String(state === 'seen')} onClick=${see}>${state === 'seen' ? `Seen ${said}` : 'Seen here'}</button>
       <button type="button" class="toggle" aria-pressed=${String(state === 'clear')} onClick=${clear}>Clear here</button>
     </div>
-    <p class="hint">${holdsWords(region)} ${region.absence}</p>`;
+    <${RegionText} region=${region} />`;
 }
 
-/** @param {IrRegion} region */
-export const holdsWords = (region) => `Here live: ${region.holds.join('; ')}.`;
-
-/** @param {CaseDoc} doc */
-export const infraredAddress = (doc) => address('case', doc.id, 'readings', 'ir');
+/** What lives in a region and what its absence rules out. @param {{ region: IrRegion }} props */
+export const RegionText = ({ region }) => html`<dl class="region-text">
+  <div><dt>Lives here</dt><dd><${Words} text=${`${region.holds.join('. ')}.`} /></dd></div>
+  <div><dt>A clear strip rules out</dt><dd><${Words} text=${region.absence} /></dd></div>
+</dl>`;

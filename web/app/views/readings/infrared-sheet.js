@@ -9,7 +9,7 @@ import { address, go } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { toNumber } from '../../words/numbers.js';
 import { dashed } from '../../words/readings.js';
-import { holdsWords, touchRegion, useRegions } from './infrared-section.js';
+import { RegionText, touchRegion, useRegions } from './infrared-section.js';
 import { addBand, bandsIn, MEDIA } from './infrared.js';
 import { CaseSign } from '../case/sign.js';
 import { Printout } from './photos.js';
@@ -43,7 +43,7 @@ export function InfraredSheet({ doc, regionId }) {
       options=${bands.map((entry) => ({ value: entry.id, text: entry.cm1 || 'new' }))} onPick=${setPicked} />`}
     ${band ? html`<${BandFields} key=${band.id} doc=${doc} band=${band} more=${more} />`
       : html`<button type="button" class="button primary" onClick=${more}>A band is seen here</button>`}
-    <p class="hint">${holdsWords(region)} ${region.absence}</p>
+    <${RegionText} region=${region} />
     <${Section} title="Sample as">
       <${Chips} label="Sample as" class="chips-flow" value=${doc.irMedium} options=${MEDIA.map((value) => ({ value, text: html`<${Formula} text=${value} />` }))}
         onPick=${(/** @type {string} */ value) => changeCase(doc.id, (draft) => { draft.irMedium = value; })} />
@@ -81,5 +81,5 @@ function Suits({ band }) {
     ...(band.shape && { shape: band.shape }) } : null, { delay: 200 });
   const groups = /** @type {any} */ (value)?.groups ?? [];
   if (!groups.length) return null;
-  return html`<p class="suits">suits ${groups.slice(0, 3).map((/** @type {any} */ entry) => entry.group).join('; ')}</p>`;
+  return html`<p class="suits">suits ${groups.slice(0, 2).map((/** @type {any} */ entry) => entry.group).join('; ')}</p>`;
 }
