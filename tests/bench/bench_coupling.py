@@ -63,7 +63,7 @@ def _of_case(case: dict) -> list[Comparison]:  # type: ignore[type-arg]
     solvent = case.get("solvent") or "CDCl3"
     groups = predict_protons(structure, solvent)
     couplings = predict_couplings(structure, groups, solvent)
-    groups = apply_multiplets(structure, groups, couplings, float(case.get("mhz") or USUAL_FIELD))
+    groups = apply_multiplets(groups, couplings, float(case.get("mhz") or USUAL_FIELD))
     given = match([expected(g) for g in groups], read_signals(case["h1"]))
     found = []
     for k, entry in enumerate(case["h1"]):

@@ -12,7 +12,6 @@ from dataclasses import dataclass, replace
 from math import comb
 
 from hoodside.errors import InvalidInputError
-from hoodside.molecule import Structure
 from hoodside.predict.coupling.model import Coupling
 from hoodside.predict.model import ProtonGroup
 from hoodside.readings.patterns import bare, couplings_named, normalise_pattern, partner_counts
@@ -38,12 +37,11 @@ class Splitting:
 
 
 def apply_multiplets(
-    structure: Structure, groups: Sequence[ProtonGroup], couplings: Sequence[Coupling], mhz: float
+    groups: Sequence[ProtonGroup], couplings: Sequence[Coupling], mhz: float
 ) -> tuple[ProtonGroup, ...]:
     """The groups with ``mult`` and ``j`` set.
 
     Args:
-        structure: the structure of the groups.
         groups: from ``predict_protons``.
         couplings: from ``predict_couplings`` for the same groups.
         mhz: 1H observe frequency, MHz.
