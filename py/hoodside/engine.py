@@ -26,6 +26,12 @@ METHODS: dict[str, str] = {
     "ir_regions": "infrared:regions",
     "ir_lookup": "infrared:lookup",
     "names": "structures:names",
+    "tiles": "editing:tiles",
+    "canvas": "editing:canvas",
+    "options": "editing:options",
+    "edit": "editing:edit",
+    "outcomes": "steps:outcomes",
+    "reagents": "steps:reagents",
 }
 _HOME = "hoodside.methods."
 
