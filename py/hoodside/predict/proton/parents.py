@@ -108,7 +108,11 @@ def _open_atom(plain: Structure, atom: Atom) -> str:
         return _open_carbon(plain, atom)
     if atom.symbol == "N" and plain.rings_of[atom.index]:
         return "[NX3]" if _is_acylated(plain, atom) or len(plain.neighbours[atom.index]) > 2 else _AMINE
-    if atom.symbol == "O" and atom.hydrogens and any(_is_carbonyl(plain, n) for n in plain.neighbours[atom.index]):
+    if (
+        atom.symbol == "O"
+        and atom.hydrogens
+        and any(_is_carbonyl(plain, n) for n in plain.neighbours[atom.index])
+    ):
         return "[#7,#8]"
     hydroxyl = atom.symbol == "O" and atom.hydrogens
     return "[OX2H1]" if hydroxyl else f"[{atom.symbol};D{len(plain.neighbours[atom.index])}]"
@@ -125,7 +129,9 @@ def _open_carbon(plain: Structure, atom: Atom) -> str:
     if plain.rings_of[atom.index]:
         return "[CX4;R]" if orders[-1] == 1 else "[CX3;R]"
     acyl_end = any(_is_carbonyl(plain, n) for n in plain.neighbours[atom.index])
-    return "[#6,#7,#8]" if acyl_end else "[CX4]" if orders[-1] == 1 else "[CX3]" if orders[-1] == 2 else "[CX2]"
+    return (
+        "[#6,#7,#8]" if acyl_end else "[CX4]" if orders[-1] == 1 else "[CX3]" if orders[-1] == 2 else "[CX2]"
+    )
 
 
 def _is_acylated(plain: Structure, atom: Atom) -> bool:

@@ -2,19 +2,34 @@
 
 from __future__ import annotations
 
+from dataclasses import dataclass
+
 from hoodside.molecule import Structure
 from hoodside.molecule.symmetry import HydrogenSet, hydrogen_sets
 from hoodside.predict.model import ProtonGroup, Term
 from hoodside.predict.proton.alkene import estimate_alkene
 from hoodside.predict.proton.aromatic import estimate_aromatic
 from hoodside.predict.proton.classes import class_estimates
+from hoodside.predict.proton.correction import refine
 from hoodside.predict.proton.estimate import Estimate
 from hoodside.predict.proton.exchangeable import ExchangeRange, exchange_ranges
+from hoodside.predict.proton.features import hydrogen_features
 from hoodside.predict.proton.schemes import combine
 from hoodside.predict.proton.sp3 import estimate_sp3
 from hoodside.predict.proton.view import View
 
 _UNKNOWN = Estimate("unknown", "other H", (Term("middle of the usual range", 4.0, "common practice"),), 2.5)
+
+
+@dataclass(frozen=True, slots=True)
+class Site:
+    """One set of equivalent H: what the schemes say of it, and what the learned correction may hang on."""
+
+    hydrogens: HydrogenSet
+    estimate: Estimate
+    features: dict[str, float]
+    exchange: ExchangeRange | None
+    is_twin: bool = False  # one of two H on one saturated carbon that differ
 
 
 def predict_protons(structure: Structure, solvent: str = "CDCl3") -> tuple[ProtonGroup, ...]:
@@ -25,24 +40,32 @@ def predict_protons(structure: Structure, solvent: str = "CDCl3") -> tuple[Proto
         solvent: a name from facts/residual_solvents.csv; unknown solvents count as CDCl3.
     Source: schemes and tables named in the terms of each group.
     """
+    return tuple(_group(site) for site in sites(structure, solvent))
+
+
+def sites(structure: Structure, solvent: str) -> list[Site]:
+    """Every set of equivalent H with its scheme estimate, in the order of ``hydrogen_sets``."""
     view = View(structure)
     ranges = exchange_ranges(structure, solvent)
     classes = class_estimates(structure)
-    groups = []
+    found = []
     for hydrogens in hydrogen_sets(structure):
         atom = hydrogens.atoms[0]
         if atom in ranges:
-            groups.append(_exchangeable(hydrogens, ranges[atom]))
-        else:
-            groups.append(_fixed(hydrogens, scheme_estimate(view, classes, atom, hydrogens.slot)))
-    return tuple(groups)
+            found.append(Site(hydrogens, _UNKNOWN, {}, ranges[atom]))
+            continue
+        estimate = scheme_estimate(view, classes, atom, hydrogens.slot)
+        features = hydrogen_features(view, atom, hydrogens.slot, estimate, solvent)
+        is_twin = hydrogens.relation == "diastereotopic" and view.is_saturated(atom)
+        found.append(Site(hydrogens, estimate, features, None, is_twin))
+    return found
 
 
 def scheme_estimate(view: View, classes: dict[int, Estimate], atom: int, slot: int) -> Estimate:
     """The joint estimate of all schemes that apply to one H."""
-    found = [classes[atom]] if atom in classes else []
-    if not found or found[0].sd > 0:
-        found = _by_bonding(view, atom, slot) + found
+    found = _by_bonding(view, atom, slot)
+    if atom in classes:
+        found.append(classes[atom])
     return combine(found) if found else _UNKNOWN
 
 
@@ -57,18 +80,24 @@ def _by_bonding(view: View, atom: int, slot: int) -> list[Estimate]:
     return estimate_alkene(view, atom, far, slot) if far is not None else []
 
 
-def _fixed(hydrogens: HydrogenSet, estimate: Estimate) -> ProtonGroup:
+def _group(site: Site) -> ProtonGroup:
+    return _exchangeable(site.hydrogens, site.exchange) if site.exchange is not None else _fixed(site)
+
+
+def _fixed(site: Site) -> ProtonGroup:
+    refined = refine(site.features, site.estimate.environment, site.hydrogens.slot if site.is_twin else None)
+    terms = (*site.estimate.terms, *refined.terms)
     return ProtonGroup(
-        atoms=hydrogens.atoms,
-        n=hydrogens.n,
-        ppm=estimate.ppm,
-        sd=estimate.sd,
+        atoms=site.hydrogens.atoms,
+        n=site.hydrogens.n,
+        ppm=sum(term.value for term in terms),
+        sd=refined.sd,
         mult="",
         j=(),
         exchangeable=False,
-        equivalence=hydrogens.relation,
-        environment=estimate.environment,
-        terms=estimate.terms,
+        equivalence=site.hydrogens.relation,
+        environment=site.estimate.environment,
+        terms=terms,
     )
 
 

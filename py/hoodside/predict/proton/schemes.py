@@ -21,7 +21,10 @@ def scheme_sd(scheme: str) -> float:
 
 
 def combine(estimates: Sequence[Estimate]) -> Estimate:
-    """The most trusted estimate, moved to the mean of all weighted by inverse variance."""
+    """The most trusted estimate, moved to the mean of all weighted by inverse variance.
+
+    The first estimate names the class of hydrogen.
+    """
     best = min(estimates, key=lambda e: e.sd)
     if len(estimates) == 1:
         return best
@@ -30,4 +33,4 @@ def combine(estimates: Sequence[Estimate]) -> Estimate:
     others = ", ".join(e.scheme for e in estimates if e is not best)
     move = Term(f"weighted with {others}", mean - best.ppm, "mean by inverse variance")
     # The schemes rest on the same compounds, so the mean is no surer than the best of them.
-    return Estimate(best.scheme, best.environment, (*best.terms, move), best.sd)
+    return Estimate(best.scheme, estimates[0].environment, (*best.terms, move), best.sd)
