@@ -4,12 +4,22 @@ from __future__ import annotations
 
 import os
 from collections.abc import Iterator
+from contextlib import contextmanager
 from pathlib import Path
 
 import pytest
 from playwright.sync_api import Browser, BrowserContext, Page, Playwright, sync_playwright
 
-from browser.stand import ANSWER_MS, BROWSER_FLAGS, Host, OpenDevice, build, copy_of_dist, start_host
+from browser.stand import (
+    ANSWER_MS,
+    BARE_PAGE,
+    BROWSER_FLAGS,
+    Host,
+    OpenDevice,
+    build,
+    copy_of_dist,
+    start_host,
+)
 
 
 def pytest_collection_modifyitems(items: list[pytest.Item]) -> None:
@@ -68,10 +78,23 @@ def browser(playwright: Playwright, chromium_path: str) -> Iterator[Browser]:
 @pytest.fixture
 def page(browser: Browser, host: Host) -> Iterator[Page]:
     """The app, just opened by somebody who has never been here."""
+    with _visit(browser, host.address) as page:
+        yield page
+
+
+@pytest.fixture
+def bare_page(browser: Browser, host: Host) -> Iterator[Page]:
+    """A page at the app's address on which nothing has been started."""
+    with _visit(browser, f"{host.address}/{BARE_PAGE}") as page:
+        yield page
+
+
+@contextmanager
+def _visit(browser: Browser, address: str) -> Iterator[Page]:
     context = browser.new_context()
     context.set_default_timeout(ANSWER_MS)
     page = context.new_page()
-    page.goto(host.address)
+    page.goto(address)
     yield page
     context.close()
 

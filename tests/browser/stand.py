@@ -25,6 +25,9 @@ BROWSER_FLAGS = [
 ]
 ANSWER_MS = 60_000
 
+#: A page beside the app on which nothing has been started, for tests of the engine's thread alone.
+BARE_PAGE = "bare.html"
+
 #: Opens the browser of one device, whose storage outlives closing it.
 OpenDevice = Callable[[], BrowserContext]
 
@@ -85,7 +88,9 @@ def start_host(dist: Path) -> Host:
 def copy_of_dist(folder: Path) -> Path:
     """The built app, in a copy that a build going on beside the tests does not touch."""
     build.build(groups=("host", "test"))
-    return Path(shutil.copytree(build.DIST, folder / "dist"))
+    copy = Path(shutil.copytree(build.DIST, folder / "dist"))
+    (copy / BARE_PAGE).write_text("<!doctype html><title>bare</title>", "utf-8")
+    return copy
 
 
 def publish(dist: Path, name: str, text: str) -> None:

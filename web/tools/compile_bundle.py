@@ -12,13 +12,16 @@ from pathlib import Path
 
 #: Parts of the standard library that an app without terminal, processes, sockets or tests never asks for.
 DROPPED = {
-    "_pyrepl", "bdb.py", "cProfile.py", "cgi.py", "curses", "dbm", "doctest.py",
-    "ensurepip", "ftplib.py", "idlelib", "imaplib.py", "lib2to3", "mailbox.py", "modulefinder.py",
+    "_pyrepl", "bdb.py", "bz2.py", "cProfile.py", "cgi.py", "compression", "curses", "dbm", "doctest.py",
+    "ensurepip", "ftplib.py", "idlelib", "imaplib.py", "lib2to3", "lzma.py", "mailbox.py", "modulefinder.py",
     "multiprocessing", "nntplib.py", "pdb.py", "pip", "poplib.py", "profile.py", "pstats.py", "pty.py",
-    "pyclbr.py", "pydoc.py", "pydoc_data", "smtplib.py", "socketserver.py", "sqlite3", "tabnanny.py",
+    "pyclbr.py", "pydoc.py", "pydoc_data", "smtplib.py", "socketserver.py", "sqlite3", "ssl.py", "tabnanny.py",
     "test", "tkinter", "trace.py", "tty.py", "turtle.py", "turtledemo", "unittest", "venv", "wsgiref",
     "xmlrpc", "zipapp.py",
 }  # fmt: skip
+
+#: Modules that take the place of the library's own; see the note there.
+LEAN = Path(__file__).with_name("lean")
 
 #: Encodings an instrument's file can come in, beside those that Python itself needs.
 ENCODINGS = {
@@ -33,8 +36,9 @@ _EPOCH = (1980, 1, 1, 0, 0, 0)  # the same input gives the same archive, byte fo
 def standard_library(source: str, target: str, debug: bool) -> None:
     """Rewrite Pyodide's own ``python_stdlib.zip`` as byte code, less what is never used."""
     with zipfile.ZipFile(source) as stock:
-        kept = [name for name in sorted(stock.namelist()) if _is_kept(name)]
-        _write(target, {name: stock.read(name) for name in kept}, debug)
+        modules = {name: stock.read(name) for name in sorted(stock.namelist()) if _is_kept(name)}
+    modules |= {str(path.relative_to(LEAN)): path.read_bytes() for path in LEAN.rglob("*.py")}
+    _write(target, modules, debug)
 
 
 def engine(source: str, target: str, debug: bool) -> None:

@@ -1,9 +1,6 @@
 // The chemistry's own thread: Python (Pyodide) and RDKit side by side, answering one call at a time.
 // in: {id, method, params}; out: {id, result} or {id, error}, and before that {stage} ..., {ready} or {failed}.
-import { makeBridge } from '../engine/kernel-bridge.js';
-import initRDKit from '../runtime/rdkit.mjs';
-import { loadPyodide } from '../runtime/pyodide.mjs';
-import { guardCompile } from './compile-guard.js';
+import { compileAhead } from './compile.js';
 
 const ENGINE_ZIP = '/lib/hoodside.zip';
 const runtime = (/** @type {string} */ name) => new URL(`../runtime/${name}`, import.meta.url).href;
@@ -20,6 +17,8 @@ async function fetchEngine() {
 }
 
 async function startPython() {
+  import('../runtime/pyodide.asm.mjs'); // large, and Pyodide asks for it late: read it meanwhile
+  const { loadPyodide } = await import('../runtime/pyodide.mjs');
   const python = await loadPyodide({
     indexURL: runtime(''),
     lockFileURL: runtime('pyodide-lock.json'),
@@ -30,6 +29,7 @@ async function startPython() {
 }
 
 async function startMolecules() {
+  const { default: initRDKit } = await import('../runtime/rdkit.mjs');
   const molecules = await initRDKit({ locateFile: () => runtime('RDKit_minimal.wasm') });
   reached('molecules');
   return molecules;
@@ -37,30 +37,29 @@ async function startMolecules() {
 
 async function wake() {
   reached('loading');
-  const [python, molecules, archive] = await Promise.all([startPython(), startMolecules(), fetchEngine()]);
+  const [python, molecules, archive, { makeBridge }] = await Promise.all([
+    startPython(), startMolecules(), fetchEngine(), import('../engine/kernel-bridge.js')]);
   python.FS.writeFile(ENGINE_ZIP, archive);
   python.registerJsModule('hoodside_kernel', makeBridge(molecules));
   python.runPython(`import sys; sys.path.insert(0, "${ENGINE_ZIP}")`);
   const { handle } = python.pyimport('hoodside.engine');
   reached('engine');
-  return { python, molecules, handle };
+  return { handle };
 }
 
 /** @typedef {Awaited<ReturnType<typeof wake>>} Engine */
 
 /** What the thread answers about itself, beside the engine.
- * @type {Record<string, (engine: Engine) => object>} */
+ * @type {Record<string, () => object>} */
 const OWN = {
-  /** Bytes held by the two wasm memories, which grow and never shrink: so this is also their peak. */
-  'worker.memory': ({ python, molecules }) => ({
-    python: /** @type {any} */ (python)._module.HEAPU8.length,
-    molecules: molecules.HEAPU8?.length ?? null,
-  }),
+  /** Bytes held by each wasm memory. They grow and never shrink: so this is also their peak. */
+  'worker.memory': () => Object.fromEntries(
+    Object.entries(memories).map(([name, memory]) => [name, memory.buffer.byteLength])),
 };
 
 /** @param {Engine} engine @param {{ method: string, params: object }} call */
 function answer(engine, { method, params }) {
-  if (OWN[method]) return { result: OWN[method](engine) };
+  if (OWN[method]) return { result: OWN[method]() };
   try {
     return JSON.parse(engine.handle(method, JSON.stringify(params)));
   } catch (error) {
@@ -83,7 +82,7 @@ function failed(error) {
   send({ failed: lastLine(error) });
 }
 
-guardCompile(failed);
+const memories = compileAhead([runtime('pyodide.asm.wasm'), runtime('RDKit_minimal.wasm')], failed);
 const engine = wake();
 engine.then(() => send({ ready: marks() }), failed);
 self.onmessage = async ({ data }) => send({ id: data.id, ...answer(await engine, data) });

@@ -1,0 +1,1 @@
+export default function createPyodideModule(settings: object): Promise<object>;
