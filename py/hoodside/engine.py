@@ -32,6 +32,7 @@ METHODS: dict[str, str] = {
     "edit": "editing:edit",
     "outcomes": "steps:outcomes",
     "reagents": "steps:reagents",
+    "amounts": "quantities:amounts",
 }
 _HOME = "hoodside.methods."
 

@@ -1,0 +1,1 @@
+"""How much of what: ratio, conversion, yield, purity and solvent content, each with its uncertainty."""
