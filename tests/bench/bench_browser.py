@@ -11,7 +11,6 @@ from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
 
-from hoodside.engine import handle
 from playwright.sync_api import BrowserContext, Page, Playwright, sync_playwright
 
 from bench.tables import Figure, print_figures
@@ -26,6 +25,7 @@ from browser.stand import (
     copy_of_dist,
     start_host,
 )
+from hoodside.engine import handle
 
 STARTS = 5
 CHECKS = 15

@@ -15,8 +15,8 @@ DROPPED = {
     "_pyrepl", "bdb.py", "bz2.py", "cProfile.py", "cgi.py", "compression", "curses", "dbm", "doctest.py",
     "ensurepip", "ftplib.py", "idlelib", "imaplib.py", "lib2to3", "lzma.py", "mailbox.py", "modulefinder.py",
     "multiprocessing", "nntplib.py", "pdb.py", "pip", "poplib.py", "profile.py", "pstats.py", "pty.py",
-    "pyclbr.py", "pydoc.py", "pydoc_data", "smtplib.py", "socketserver.py", "sqlite3", "ssl.py", "tabnanny.py",
-    "test", "tkinter", "trace.py", "tty.py", "turtle.py", "turtledemo", "unittest", "venv", "wsgiref",
+    "pyclbr.py", "pydoc.py", "pydoc_data", "smtplib.py", "socketserver.py", "sqlite3", "ssl.py",
+    "tabnanny.py", "test", "tkinter", "trace.py", "tty.py", "turtle.py", "turtledemo", "unittest", "venv", "wsgiref",
     "xmlrpc", "zipapp.py",
 }  # fmt: skip
 
