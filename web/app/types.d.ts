@@ -84,7 +84,7 @@ export interface IrExpectation {
 export interface MassExpectation { mz: number; label: string; weight: number; atoms: number[]; source: string }
 export interface Prediction {
   smiles: string; formula: string; exact_mass: number; dbe: number;
-  h1: ProtonGroup[]; c13: CarbonGroup[]; ir: IrExpectation[]; ms: unknown;
+  h1: ProtonGroup[]; c13: CarbonGroup[]; ir: IrExpectation[]; ms: { ions?: MassExpectation[] };
 }
 
 export interface IrRegion { id: string; lo: number; hi: number; name: string; holds: string[]; absence: string }

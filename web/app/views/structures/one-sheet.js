@@ -33,7 +33,7 @@ export function OneStructure({ doc, id }) {
     });
     go('case', doc.id, 'structures');
   };
-  return html`<${Sheet} title="Structure ${letterOf(doc, id)}" back=${back} sign=${html`<${Sign} verdict=${verdictFor(id)} size=${26} />`}>
+  return html`<${Sheet} title="Structure ${letterOf(doc, id)}" back=${back} class="one-sheet" sign=${html`<${Sign} verdict=${verdictFor(id)} size=${26} />`}>
     <${StructureDrawing} structure=${structure} atoms=${lit} label="Drawing of ${nameOf(doc, id)}" size="big" />
     <div class="two-up">
       <button type="button" class="toggle" aria-pressed=${String(intended)}
