@@ -30,7 +30,7 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
     """Answer a question of kind "ratio", "conversion", "yield", "purity" or "solvent".
 
     Species are ``{"name", "signals": [{"integral", "protons", "u"?}], "formula" or "molar_mass"?}``; weighed
-    portions ``{"mass", "u"?, "formula" or "molar_mass", "purity"?, "u_purity"?}``. Fractions come in per cent.
+    portions ``{"mass", "u"?, "formula" or "molar_mass", "purity"?, "u_purity"?}``. Fractions: per cent.
 
     Raises: InvalidInputError naming the field.
     """
