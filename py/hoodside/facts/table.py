@@ -2,13 +2,11 @@
 
 from __future__ import annotations
 
-import csv
 import marshal
+import pkgutil
 from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import cache
-from importlib.resources import files
-from importlib.resources.abc import Traversable
 
 from hoodside.errors import DataFileError
 
@@ -38,9 +36,8 @@ def load_table(name: str) -> Table:
 
     Raises: DataFileError when there is no such table, or a row lacks its source.
     """
-    folder = files("hoodside.facts")
-    compact = folder / f"{name}.table"
-    rows = _from_compact(compact) if compact.is_file() else _from_csv(folder / f"{name}.csv", name)
+    compact = _data(f"{name}.table")
+    rows = _from_csv(name) if compact is None else _from_compact(compact)
     return Table(name, rows)
 
 
@@ -50,15 +47,26 @@ def pack_rows(rows: tuple[Row, ...]) -> bytes:
     return marshal.dumps((columns, [tuple(row[c] for c in columns) for row in rows]))
 
 
-def _from_compact(path: Traversable) -> tuple[Row, ...]:
-    columns, cells = marshal.loads(path.read_bytes())
+def _data(file_name: str) -> bytes | None:
+    # Not importlib.resources: it reads the directory of the browser's archive anew for every file.
+    try:
+        return pkgutil.get_data("hoodside.facts", file_name)
+    except OSError:
+        return None
+
+
+def _from_compact(data: bytes) -> tuple[Row, ...]:
+    columns, cells = marshal.loads(data)
     return tuple(dict(zip(columns, row, strict=True)) for row in cells)
 
 
-def _from_csv(path: Traversable, name: str) -> tuple[Row, ...]:
-    if not path.is_file():
+def _from_csv(name: str) -> tuple[Row, ...]:
+    import csv  # never needed in the browser
+
+    data = _data(f"{name}.csv")
+    if data is None:
         raise DataFileError(f"There is no facts table {name!r}.", hint="See py/hoodside/facts/.", value=name)
-    rows = tuple(csv.DictReader(path.read_text("utf-8").splitlines()))
+    rows = tuple(csv.DictReader(data.decode("utf-8").splitlines()))
     for number, row in enumerate(rows, start=2):
         if None in row or None in row.values():
             raise DataFileError(f"{name}.csv line {number} has the wrong number of cells.", hint="Mend it.")
