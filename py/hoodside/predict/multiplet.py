@@ -9,6 +9,7 @@ from __future__ import annotations
 from collections import defaultdict
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
+from itertools import pairwise
 from math import comb
 
 from hoodside.errors import InvalidInputError
@@ -17,13 +18,15 @@ from hoodside.predict.model import ProtonGroup
 from hoodside.readings.patterns import bare, couplings_named, normalise_pattern, partner_counts
 
 #: Hz below which a coupling is not seen as a splitting.
-RESOLVED = 1.0
+RESOLVED = 1.6
 #: Hz within which chemists read two couplings as one.
-MERGED = 0.8
+MERGED = 1.05
 #: Shift difference over J below which two groups are too strongly coupled for a first-order name.
-STRONG = 3.0
+STRONG = 1.0
 #: More lines than this are printed as "m".
 MOST_LINES = 18
+#: Hz: the coarsest reading of a pattern leaves out splittings up to the first and joins up to the second.
+COARSEST = (2.6, 2.0)
 #: Decimals of a printed J, Hz.
 _DECIMALS = 1
 
@@ -68,12 +71,52 @@ def _with_pattern(
 
 def splittings(k: int, groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]) -> tuple[Splitting, ...]:
     """What splits group ``k`` to first order, largest J first, like couplings merged."""
+    return merged(_resolved({k}, groups, couplings))
+
+
+def combined_pattern(
+    members: Sequence[int], groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]
+) -> tuple[str, tuple[float, ...]]:
+    """Name and J (Hz) of the one signal that several groups make when their shifts coincide.
+
+    Couplings within the signal do not show; those to others average over its members.
+    """
+    parts = merged(_resolved(set(members), groups, couplings))
+    return name_of(parts), tuple(round(s.hz, _DECIMALS) for s in parts)
+
+
+def readable_patterns(
+    members: Sequence[int], groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]
+) -> frozenset[str]:
+    """Every name a careful to a coarse reading gives the signal of some groups ("ddd", "td", "dd", "t").
+
+    Readings differ in the smallest splitting seen and in how near two J must be to be taken as one.
+    """
+    parts = sorted(_splittings(set(members), groups, couplings), key=lambda s: s.hz)
+    least, joined = COARSEST
+    cuts = [0.0, *[s.hz + 1e-9 for s in parts if s.hz <= least]]
+    gaps = [0.0, *[b.hz - a.hz + 1e-9 for a, b in pairwise(parts) if b.hz - a.hz <= joined]]
+    return frozenset(name_of(merged([s for s in parts if s.hz >= cut], gap)) for cut in cuts for gap in gaps)
+
+
+def _resolved(
+    inside: set[int], groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]
+) -> list[Splitting]:
+    """The splittings wide enough to be seen as such."""
+    return [s for s in _splittings(inside, groups, couplings) if s.hz >= RESOLVED]
+
+
+def _splittings(
+    inside: set[int], groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]
+) -> list[Splitting]:
+    """Couplings of the groups ``inside`` one signal to everything else, per nucleus of the signal."""
+    n = sum(groups[k].n for k in inside)
     blocks: dict[tuple[int, int, tuple[int, ...]], list[Coupling]] = defaultdict(list)
     for c in couplings:
-        if k in (c.a, c.b) and c.a != c.b:
-            blocks[c.b if c.a == k else c.a, c.bonds, c.hetero].append(c)
-    parts = [s for block in blocks.values() for s in _of_block(block, groups[k].n)]
-    return merged([s for s in parts if s.hz >= RESOLVED and s.count > 0])
+        if (c.a in inside) != (c.b in inside):
+            blocks[c.b if c.a in inside else c.a, c.bonds, c.hetero].append(c)
+    parts = [s for block in blocks.values() for s in _of_block(block, n)]
+    return [s for s in parts if s.count > 0]
 
 
 def _of_block(block: list[Coupling], n: int) -> list[Splitting]:
@@ -85,11 +128,11 @@ def _of_block(block: list[Coupling], n: int) -> list[Splitting]:
     return [Splitting(abs(mean), round(total / n))]
 
 
-def merged(parts: Sequence[Splitting]) -> tuple[Splitting, ...]:
-    """Splittings with near-equal J read as one, largest first."""
+def merged(parts: Sequence[Splitting], within: float = MERGED) -> tuple[Splitting, ...]:
+    """Splittings whose J lie ``within`` Hz of each other read as one, largest first."""
     groups: list[list[Splitting]] = []
     for part in sorted(parts, key=lambda s: -s.hz):
-        if groups and _mean(groups[-1]) - part.hz <= MERGED:
+        if groups and _mean(groups[-1]) - part.hz <= within:
             groups[-1].append(part)
         else:
             groups.append([part])

@@ -69,7 +69,7 @@ _BROAD = re.compile(r"\b(?:broadened|broad|brd(?=\s)|br|b)\b\.?")
 _APPARENT = re.compile(r"\b(?:apparent|appt|appar|app|ap|pseudo|pseud|ps|virtual|virt|v)\b\.?")
 _GLUED = re.compile(r"^(broad|br|b|app|ps|pseudo|v)(?=[sdtqm])(?!road)")
 _GLUED_END = re.compile(r"^((?:[sdtqm]|quint|sext|sept)+)(br|broad)$")
-_COUNT = re.compile(r"^\d\s*[x×*]?\s*(?=[a-z])")
+_COUNT = re.compile(r"^\d\s*[x×*]?\s*(?=[sdtqm])")
 
 
 def normalise_pattern(text: str) -> str:

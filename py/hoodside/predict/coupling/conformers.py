@@ -110,7 +110,7 @@ class Conformers:
         ring = self.structure.rings[index]
         k, m = ring.index(a), ring.index(b)
         step = 1 if ring[(k + 1) % len(ring)] == b else -1
-        before, after = ring[k - step], ring[(m + step) % len(ring)]
+        before, after = ring[(k - step) % len(ring)], ring[(m + step) % len(ring)]
         bond = k if step == 1 else m
         torsions = tuple(Torsion(w, angles[bond]) for w, angles in self._ring(index))
         return BondShape(_from(front, before), _from(rear, after), torsions, len(ring))
