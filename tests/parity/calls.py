@@ -100,3 +100,20 @@ def seconds(function: str, repeat: int, *arguments: Any) -> list[float]:
         call(*arguments)
         times.append(time.perf_counter() - start)
     return times
+
+
+def predicted(smiles: str, solvent: str, mhz: float) -> str:
+    """The whole prediction afresh, as the door answers it."""
+    from hoodside.engine import handle
+    from hoodside.predict import whole
+
+    whole._predict.cache_clear()
+    whole._structure.cache_clear()
+    return handle("predict", json.dumps({"smiles": smiles, "solvent": solvent, "mhz": mhz}))
+
+
+def outcome_list(smiles: str, reagents: str) -> list[list[str]]:
+    """Reaction outcomes as (SMILES, role)."""
+    from hoodside.rivals.outcomes import find_outcomes
+
+    return [[o.smiles, o.role] for o in find_outcomes(read_structure(smiles), reagents).outcomes]

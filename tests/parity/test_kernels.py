@@ -5,16 +5,12 @@ from __future__ import annotations
 import csv
 import json
 import math
-import os
 import re
-import shutil
-import subprocess
-from collections.abc import Callable
 from pathlib import Path
-from typing import Any
 
 import calls as here
 import pytest
+from compare import Runner, same
 
 pytestmark = pytest.mark.node
 
@@ -63,46 +59,6 @@ def patterns() -> list[str]:
         for row in csv.DictReader(path.read_text("utf-8").splitlines()):
             found |= dict.fromkeys(v for k, v in row.items() if k and "smarts" in k and v)
     return list(found)
-
-
-def node_modules() -> Path | None:
-    """Where the npm packages are: the app's own, else the folder named by HOODSIDE_NODE_MODULES."""
-    for folder in (ROOT / "web" / "node_modules", Path(os.environ.get("HOODSIDE_NODE_MODULES", "/nowhere"))):
-        if (folder / "pyodide").is_dir() and (folder / "@rdkit" / "rdkit").is_dir():
-            return folder
-    return None
-
-
-Runner = Callable[[list[list[Any]]], list[dict[str, Any]]]
-
-
-@pytest.fixture(scope="session")
-def in_browser(tmp_path_factory: pytest.TempPathFactory) -> Runner:
-    """Answers to a list of calls from Pyodide and RDKit's wasm."""
-    node, modules = shutil.which("node"), node_modules()
-    if node is None:
-        pytest.skip("needs Node 20 or later on PATH")
-    if modules is None:
-        pytest.skip("needs the npm packages pyodide and @rdkit/rdkit: run `npm ci` in web/")
-    file = tmp_path_factory.mktemp("parity") / "calls.json"
-
-    def run(calls: list[list[Any]]) -> list[dict[str, Any]]:
-        file.write_text(json.dumps(calls), "utf-8")
-        command = [node, str(FOLDER / "node_calls.mjs"), str(modules), str(file)]
-        done = subprocess.run(command, capture_output=True, text=True, timeout=300, check=False)
-        assert done.returncode == 0, done.stderr[-2000:]
-        return json.loads(done.stdout)
-
-    return run
-
-
-def same(in_browser: Runner, calls: list[list[Any]]) -> list[dict[str, Any]]:
-    """Run calls on both sides and compare; the answers."""
-    mine = json.loads(here.answer_all(json.dumps(calls)))
-    theirs = in_browser(calls)
-    apart = [(c, m, t) for c, m, t in zip(calls, mine, theirs, strict=True) if m != t]
-    assert not apart, f"{len(apart)} of {len(calls)} differ, first: {apart[0]}"
-    return mine
 
 
 def test_structures_read_alike(in_browser: Runner) -> None:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from math import fsum
 
 from hoodside.predict.model import Term
 
@@ -17,4 +18,4 @@ class Estimate:
     @property
     def ppm(self) -> float:
         """The sum of the terms in ppm."""
-        return sum(term.value for term in self.terms)
+        return fsum(term.value for term in self.terms)

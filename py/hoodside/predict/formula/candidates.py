@@ -6,6 +6,7 @@ import math
 from collections.abc import Iterator, Mapping
 from dataclasses import dataclass
 from functools import cache
+from math import fsum
 
 from hoodside.errors import InvalidInputError
 from hoodside.facts.table import load_table
@@ -101,7 +102,7 @@ def _judge(counts: dict[str, int], adduct: Adduct, mz: float, sensible: bool) ->
         return None
     if sensible and not obeys_rules(formula):
         return None
-    calculated = adduct.mz(sum(main_isotope(s)[1] * n for s, n in formula.parts))
+    calculated = adduct.mz(fsum(main_isotope(s)[1] * n for s, n in formula.parts))
     return FormulaCandidate(formula, calculated, (mz - calculated) / calculated * 1e6, degree)
 
 

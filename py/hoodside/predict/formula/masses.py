@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from functools import cache
+from math import fsum
 
 from hoodside.facts.table import load_table
 from hoodside.predict.formula.model import Formula
@@ -36,13 +37,13 @@ def exact_mass(formula: Formula) -> float:
     For an ion the electrons lost or gained are taken into account; m/z is this over the charge number.
     Source: AME2020 masses, Chin. Phys. C 2021, 45, 030003 (facts/isotopes.csv); CODATA electron mass.
     """
-    atoms = sum(main_isotope(symbol)[1] * count for symbol, count in formula.parts)
+    atoms = fsum(main_isotope(symbol)[1] * count for symbol, count in formula.parts)
     return atoms - formula.charge * ELECTRON_MASS
 
 
 def average_mass(formula: Formula) -> float:
     """Relative molecular mass (g/mol) from the IUPAC standard atomic weights; labels by their own mass."""
-    atoms = sum(atomic_weight(symbol) * count for symbol, count in formula.parts)
+    atoms = fsum(atomic_weight(symbol) * count for symbol, count in formula.parts)
     return atoms - formula.charge * ELECTRON_MASS
 
 

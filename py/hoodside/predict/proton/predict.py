@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from math import fsum
 
 from hoodside.molecule import Structure
 from hoodside.molecule.symmetry import HydrogenSet, hydrogen_sets
@@ -90,7 +91,7 @@ def _fixed(site: Site) -> ProtonGroup:
     return ProtonGroup(
         atoms=site.hydrogens.atoms,
         n=site.hydrogens.n,
-        ppm=sum(term.value for term in terms),
+        ppm=fsum(term.value for term in terms),
         sd=refined.sd,
         mult="",
         j=(),
