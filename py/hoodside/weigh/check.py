@@ -1,0 +1,174 @@
+"""The check: readings and candidates in, tallies, verdicts and advice out, all JSON-ready."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from typing import Any
+
+from hoodside.advise.next import advise
+from hoodside.errors import FormulaError, InvalidInputError, StructureError
+from hoodside.predict.formula import parse_formula, unsaturation
+from hoodside.predict.model import ProtonGroup
+from hoodside.readings import Readings
+from hoodside.readings.from_json import readings_from_json
+from hoodside.weigh.expectations import expectations
+from hoodside.weigh.sentence import name_of, sentence
+from hoodside.weigh.structure import Tally, weigh_structure
+from hoodside.weigh.verdict import Verdict, judge, shares
+
+#: More candidates than this are not weighed at once.
+MOST_CANDIDATES = 200
+
+
+@dataclass(frozen=True, slots=True)
+class Ranked:
+    """One candidate with its place in the input, verdict and share."""
+
+    index: int | None  # place among the candidates given; None for a rival
+    origin: str  # "given" or "rival"
+    tally: Tally
+    verdict: Verdict
+    share: float
+
+
+def check_case(case: dict[str, Any]) -> dict[str, Any]:
+    """Weigh all readings of a check object against its candidates.
+
+    The object and the answer are those of the command line's ``check``; per candidate the answer also holds
+    ``formula``, ``ok_formula``, ``missing``, ``unexplained``, ``expected`` (1H groups), ``reason`` and
+    ``sentence``. Raises: InvalidInputError or StructureError naming the field.
+    """
+    readings = readings_from_json(case)
+    ranked = rank(readings, candidates_of(case))
+    formula = _formula(readings, ranked)
+    warnings = [*readings.warnings, *_doubts(readings, ranked)]
+    return {
+        "id": readings.id,
+        "formula": formula[0],
+        "dbe": formula[1],
+        "warnings": warnings,
+        "candidates": [_candidate(i, ranked) for i in range(len(ranked))],
+        "next": [
+            entry.to_dict() for entry in advise(readings, [(r.tally, r.share, r.verdict) for r in ranked])
+        ],
+    }
+
+
+def candidates_of(case: dict[str, Any]) -> list[str]:
+    """The candidates of a check object as SMILES. Raises: InvalidInputError, StructureError."""
+    given = case.get("candidates") or []
+    if not isinstance(given, list | tuple):
+        raise InvalidInputError(
+            "candidates is no list.", hint="Give a list of SMILES.", field="candidates", value=given
+        )
+    if len(given) > MOST_CANDIDATES:
+        raise InvalidInputError(
+            f"{len(given)} candidates are too many.",
+            hint=f"Give at most {MOST_CANDIDATES}.",
+            field="candidates",
+            value=len(given),
+        )
+    return [_smiles(entry, f"candidates[{i}]") for i, entry in enumerate(given)]
+
+
+def _smiles(entry: object, field: str) -> str:
+    if not isinstance(entry, str) or not entry.strip():
+        raise InvalidInputError("A candidate is no text.", hint="Give a SMILES.", field=field, value=entry)
+    text = entry.strip("\r") if "\n" in entry.strip() else entry.strip()
+    if "\n" not in text:
+        return text
+    try:  # atoms are numbered by what the answer shows
+        return expectations(text, Readings()).structure.smiles
+    except StructureError as err:
+        raise StructureError(str(err), hint=err.hint, field=field, value=entry) from err
+
+
+def rank(readings: Readings, candidates: Sequence[str], origins: Sequence[str] = ()) -> list[Ranked]:
+    """All candidates weighed and judged, best first. Raises: StructureError naming the candidate."""
+    tallies = [_tally(source, readings, f"candidates[{i}]") for i, source in enumerate(candidates)]
+    verdicts, parts = judge(tallies), shares(tallies)
+    ranked = []
+    for i, tally in enumerate(tallies):
+        origin = origins[i] if origins else "given"
+        ranked.append(Ranked(i if origin == "given" else None, origin, tally, verdicts[i], parts[i]))
+    return sorted(ranked, key=lambda r: -r.tally.weight_db)
+
+
+def _tally(source: str, readings: Readings, field: str) -> Tally:
+    try:
+        return weigh_structure(expectations(source, readings), readings)
+    except StructureError as err:
+        raise StructureError(str(err), hint=err.hint, field=field, value=source) from err
+
+
+def _formula(readings: Readings, ranked: Sequence[Ranked]) -> tuple[str, float | None]:
+    """The formula of the case and its unsaturation: as given, else that all candidates share."""
+    if readings.formula:
+        try:
+            formula = parse_formula(readings.formula)
+        except FormulaError as err:
+            raise FormulaError(str(err), hint=err.hint, field="formula", value=readings.formula) from err
+        return formula.text, unsaturation(formula)
+    found = {r.tally.expected.formula for r in ranked}
+    if len(found) != 1:
+        return "", None
+    formula = found.pop()
+    return formula.text, unsaturation(formula)
+
+
+def _doubts(readings: Readings, ranked: Sequence[Ranked]) -> list[str]:
+    doubts = []
+    if not ranked:
+        doubts.append("No structure was given; put one up to have the readings weighed.")
+    if not _measured(readings):
+        doubts.append("Nothing has been measured yet, so no structure is preferred.")
+    seen: dict[str, Ranked] = {}
+    for r in sorted(ranked, key=lambda r: -1 if r.index is None else r.index):
+        key = r.tally.expected.structure.inchikey
+        if key in seen:
+            doubts.append(f"{name_of(r.index)} is the same compound as {name_of(seen[key].index)}.")
+        seen.setdefault(key, r)
+    return doubts
+
+
+def _measured(readings: Readings) -> bool:
+    kinds = (readings.h1, readings.c13, readings.ir, readings.ir_clear, readings.ms, readings.wet)
+    return any(kinds) or bool(readings.hrms or readings.analysis)
+
+
+def _candidate(at: int, ranked: Sequence[Ranked]) -> dict[str, Any]:
+    mine = ranked[at]
+    tally = mine.tally
+    return {
+        "smiles": tally.expected.structure.source,
+        "origin": mine.origin,
+        "index": mine.index,
+        "formula": tally.expected.formula.text,
+        "ok_formula": tally.ok_formula,
+        "verdict": mine.verdict.verdict,
+        "reason": mine.verdict.reason,
+        "sentence": sentence(at, [(r.index, r.tally, r.verdict) for r in ranked]),
+        "weight_db": round(tally.weight_db, 1) + 0.0,
+        "share": round(mine.share, 4),
+        "findings": [f.to_dict() for f in tally.findings],
+        "assignment": [link.to_dict() for link in tally.links],
+        "missing": [left.to_dict() for left in tally.missing],
+        "unexplained": [left.to_dict() for left in tally.unexplained],
+        "expected": [_expected(group) for group in tally.expected.h1],
+    }
+
+
+def _expected(group: ProtonGroup) -> dict[str, Any]:
+    return {
+        "ppm": round(group.ppm, 3),
+        "sd": round(group.sd, 3),
+        "mult": group.mult,
+        "j": [round(j, 2) for j in group.j],
+        "n": group.n,
+        "atoms": list(group.atoms),
+        "exchangeable": group.exchangeable,
+        "environment": group.environment,
+        "lo": group.lo,
+        "hi": group.hi,
+    }

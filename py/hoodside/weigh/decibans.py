@@ -1,0 +1,47 @@
+"""Decibans, and the one error law used for shifts and couplings: Student t with four degrees of freedom."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from math import log, log10, sqrt
+
+_PER_NAT = 10 / log(10)
+
+
+def decibans(ratio: float) -> float:
+    """10 log10 of a likelihood ratio above 0."""
+    return 10 * log10(ratio)
+
+
+def odds(db: float) -> float:
+    """The likelihood ratio of a weight."""
+    return float(10 ** (db / 10))
+
+
+def joined(weights: Iterable[float]) -> float:
+    """Weight of "any of these": 10 log10 of the sum of the ratios."""
+    listed = list(weights)
+    top = max(listed)
+    return top + decibans(sum(odds(w - top) for w in listed))
+
+
+def from_nats(nats: float) -> float:
+    """Natural logarithm of a ratio to decibans."""
+    return nats * _PER_NAT
+
+
+def t_density(x: float) -> float:
+    """Density of Student t with four degrees of freedom."""
+    return float(0.375 * (1 + x * x / 4) ** -2.5)
+
+
+def t_below(x: float) -> float:
+    """Distribution function of Student t with four degrees of freedom (closed form)."""
+    u = x * x / (4 + x * x)
+    half = 0.75 * sqrt(u) * (1 - u / 3)
+    return 0.5 + half if x > 0 else 0.5 - half
+
+
+def t_between(lo: float, hi: float, centre: float, scale: float) -> float:
+    """Probability that a value scattered by ``scale`` about ``centre`` falls between ``lo`` and ``hi``."""
+    return t_below((hi - centre) / scale) - t_below((lo - centre) / scale)

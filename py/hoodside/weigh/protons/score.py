@@ -1,0 +1,133 @@
+"""The weight of one 1H signal for one set of predicted groups, term by term, in decibans.
+
+For a signal given the groups B of a structure: log of (product over B of the chance that the group lies in
+the signal's window) x (chance of the printed number of H) x (chance of the printed pattern) x (couplings),
+over the same for the signals of published compounds at large. A group more in a signal costs its chance to
+lie just there, so that accidental overlap is allowed but not free. The two H of one CH2 share their errors and
+so count as one place when they share a signal.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+from dataclasses import dataclass
+from functools import cache
+from math import exp
+
+from hoodside.facts import load_table
+from hoodside.predict.model import ProtonGroup
+from hoodside.weigh.background import size_class
+from hoodside.weigh.decibans import decibans, odds, t_between
+from hoodside.weigh.protons.coupling import coupling_weight
+from hoodside.weigh.protons.pattern import is_pair, pattern_weight
+from hoodside.weigh.protons.signals import Signal
+
+#: Share of predictions or printed shifts that are wrong outright.
+_WRONG = 0.01
+#: Spread of a printed number of H about the true one: absolute, and relative for raw integrals.
+_COUNT_SD, _RAW_SD = 0.25, 0.08
+#: Share of numbers of H that are off by whole H, falling off by e per H.
+_MISCOUNTED = 0.08
+_COUNT_FLOOR = -30.0
+#: The two H of one CH2 in one signal, decibans beside the place of one of them.
+_PAIR = -1.0
+#: A group without signal: exchangeable H are often not listed; any other H is a gap, more so the larger.
+_MISSING_EXCHANGEABLE, _MISSING, _MISSING_PER_H = -3.0, -11.0, -1.5
+
+
+@dataclass(frozen=True, slots=True)
+class Terms:
+    """Parts of the weight of one signal, decibans."""
+
+    place: float
+    count: float
+    pattern: float
+    coupling: float
+
+    @property
+    def total(self) -> float:
+        return self.place + self.count + self.pattern + self.coupling
+
+
+@dataclass(frozen=True, slots=True)
+class Scorer:
+    """Weighs signals against the groups of one structure. ``places[g][s]``: weight of group g's place alone."""
+
+    groups: Sequence[ProtonGroup]
+    signals: Sequence[Signal]
+    raw: bool
+    places: Sequence[Sequence[float]]
+
+    @classmethod
+    def of(cls, groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: bool) -> Scorer:
+        """Prepare the places of every group in every signal."""
+        return cls(groups, signals, raw, [[_place(g, s) for s in signals] for g in groups])
+
+    def total(self, signal: int, members: tuple[int, ...]) -> float:
+        """Weight of a signal that holds ``members`` (indices of groups)."""
+        return self.terms(signal, members).total if members else self.signals[signal].stray.weight_db
+
+    def terms(self, signal: int, members: tuple[int, ...]) -> Terms:
+        """The same in parts."""
+        seen = self.signals[signal]
+        held = [self.groups[m] for m in members]
+        return Terms(
+            place=self._place(signal, members) - seen.anyhow_db,
+            count=count_weight(sum(g.n for g in held), seen.n, self.raw),
+            pattern=pattern_weight(held, seen.pattern),
+            coupling=_couplings(held, seen),
+        )
+
+    def _place(self, signal: int, members: tuple[int, ...]) -> float:
+        total, pairs = 0.0, set()
+        for m in members:
+            twin = self._twin(m, members)
+            if twin is None:
+                total += self.places[m][signal]
+            elif twin not in pairs:
+                pairs.add(m)
+                total += max(self.places[m][signal], self.places[twin][signal]) + _PAIR
+        return total
+
+    def _twin(self, m: int, members: tuple[int, ...]) -> int | None:
+        group = self.groups[m]
+        if group.equivalence != "diastereotopic":
+            return None
+        return next((k for k in members if k != m and self.groups[k].atoms == group.atoms), None)
+
+
+def missing_weight(group: ProtonGroup) -> float:
+    """Weight of a group that no signal shows, decibans."""
+    if group.exchangeable:
+        return _MISSING_EXCHANGEABLE * group.n
+    return _MISSING + _MISSING_PER_H * min(group.n, 9)
+
+
+def count_weight(expected: int, printed: float | None, raw: bool) -> float:
+    """Weight of a printed number of H against the distribution over all signals; 0 when none was printed."""
+    if printed is None:
+        return 0.0
+    off = abs(printed - expected)
+    sd = max(_COUNT_SD, _RAW_SD * expected) if raw else _COUNT_SD
+    suits = (1 - _MISCOUNTED) * exp(-((off / sd) ** 2) / 2) + _MISCOUNTED * exp(-off)
+    return max(decibans(suits), _COUNT_FLOOR) - _anyhow_count(size_class(printed))
+
+
+def _place(group: ProtonGroup, signal: Signal) -> float:
+    inside = t_between(signal.lo, signal.hi, group.ppm, group.sd)
+    return decibans((1 - _WRONG) * inside + _WRONG * odds(signal.anyhow_db))
+
+
+def _couplings(held: list[ProtonGroup], signal: Signal) -> float:
+    if not signal.j or not (len(held) == 1 or is_pair(held)):
+        return 0.0
+    expected = held[0].j
+    if is_pair(held):
+        expected = tuple(j for j in expected if j < 9.5)
+    return coupling_weight(expected, signal.j)
+
+
+@cache
+def _anyhow_count(size: str) -> float:
+    rows = load_table("h1_size_background")
+    return decibans(next(float(row["share"]) for row in rows if row["group"] == size))

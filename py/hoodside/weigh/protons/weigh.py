@@ -1,0 +1,167 @@
+"""1H signals against one structure: findings, links, and what is left over on either side."""
+
+from __future__ import annotations
+
+from collections.abc import Iterator, Sequence
+
+from hoodside.predict.model import ProtonGroup
+from hoodside.readings import Readings
+from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
+from hoodside.weigh.protons.assign import NOWHERE
+from hoodside.weigh.protons.pattern import expected_kind, is_pair
+from hoodside.weigh.protons.score import Terms, missing_weight
+from hoodside.weigh.protons.signals import prepare
+from hoodside.weigh.protons.solve import Solution, solve
+from hoodside.weigh.trust import TRUST
+from hoodside.weigh.words import amount, atoms_of, group_name, joules, plural_h, printed
+
+_COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
+_STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
+#: A part of a signal's weight is told apart from its place when it speaks against by this much, decibans.
+_TOLD_APART = -3.0
+
+
+def weigh_protons(groups: Sequence[ProtonGroup], readings: Readings) -> Weighed:
+    """All 1H signals of the readings against the predicted groups of a structure."""
+    if not readings.h1:
+        return Weighed()
+    solution = solve(groups, prepare(readings), readings.raw_integrals)
+    findings: list[Finding] = []
+    for k in range(len(solution.signals)):
+        findings += _of_signal(solution, readings, k)
+    findings += _missing_findings(solution)
+    return Weighed(
+        tuple(findings),
+        tuple(_links(solution)),
+        tuple(_missing(solution)),
+        tuple(_strays(solution, readings)),
+    )
+
+
+def _of_signal(solution: Solution, readings: Readings, k: int) -> Iterator[Finding]:
+    members = solution.members(k)
+    if not members:
+        yield _stray_finding(solution, readings, k)
+        return
+    terms = solution.scorer.terms(k, members)
+    held = [solution.groups[m] for m in members]
+    ref, atoms = (f"h1:{k}",), atoms_of(held)
+    signal = readings.h1[k]
+    yield Finding(
+        "h1.shift", TRUST["h1.shift"] * terms.place, _place_text(solution, k, held), ref, atoms, _source(held)
+    )
+    yield Finding("h1.count", TRUST["h1.count"] * terms.count, _count_text(solution, k, held), ref, atoms)
+    if signal.mult:
+        text = _pattern_text(held, signal.mult)
+        yield Finding("h1.pattern", TRUST["h1.pattern"] * terms.pattern, text, ref, atoms, _COUNTED)
+    if terms.coupling:
+        text = _coupling_text(held, signal.j, terms)
+        yield Finding(
+            "h1.coupling", TRUST["h1.coupling"] * terms.coupling, text, ref, atoms, "facts/couplings_hh.csv"
+        )
+
+
+def _source(held: list[ProtonGroup]) -> str:
+    return "; ".join(dict.fromkeys(term.source for group in held for term in group.terms))
+
+
+def _place_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
+    signal = solution.signals[k]
+    if len(held) == 1 or is_pair(held):
+        group = held[0]
+        if group.exchangeable and group.lo is not None and group.hi is not None:
+            inside = group.lo <= signal.ppm <= group.hi
+            where = "within" if inside else "outside"
+            return f"δ {printed(signal)}: {where} {group.lo:g} to {group.hi:g} ppm for {group_name(group)}."
+        off = signal.ppm - group.ppm
+        how = f"{abs(off):.2f} ppm {'higher' if off > 0 else 'lower'}" if abs(off) >= 0.1 else "as expected"
+        return (
+            f"δ {printed(signal)}: {group_name(group)} expected at {group.ppm:.2f} ± {group.sd:.2f}; {how}."
+        )
+    named = ", ".join(f"{plural_h(g.n)} at {g.ppm:.2f} ± {g.sd:.2f}" for g in held)
+    return f"δ {printed(signal)}: taken as {len(held)} overlapping sets: {named}."
+
+
+def _count_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
+    due, found = sum(g.n for g in held), solution.signals[k].n
+    if found is None:
+        return f"No number of H given; {plural_h(due)} placed here."
+    if abs(found - due) < 0.5:
+        return f"{plural_h(due)} expected and found."
+    return f"{amount(found)} H found, {due} H expected."
+
+
+def _pattern_text(held: list[ProtonGroup], seen: str) -> str:
+    kind = expected_kind(held)
+    if kind == "several":
+        return f"Printed {seen}; {len(held)} sets of H overlap here."
+    if held[0].exchangeable:
+        return f"Printed {seen}; exchangeable H usually come as one line, often broad."
+    first = held[0]
+    due = f"{first.mult}{joules(first.j)}" if first.mult else "not predicted"
+    note = " (each H of the CH₂)" if is_pair(held) else ""
+    return f"Printed {seen}; expected {due}{note}."
+
+
+def _coupling_text(held: list[ProtonGroup], seen: Sequence[float], terms: Terms) -> str:
+    verb = "agree with" if terms.coupling > 0 else "do not suit"
+    expected = ", ".join(f"{j:g}" for j in held[0].j)
+    return f"J = {', '.join(f'{j:g}' for j in seen)} Hz {verb} the {expected} Hz expected."
+
+
+def _stray_finding(solution: Solution, readings: Readings, k: int) -> Finding:
+    signal = solution.signals[k]
+    return Finding(
+        "h1.stray",
+        TRUST["h1.stray"] * signal.stray.weight_db,
+        f"{_stray_text(solution, k)}",
+        (f"h1:{k}",),
+        (),
+        _STRAY_SOURCE if signal.stray.name else "",
+    )
+
+
+def _stray_text(solution: Solution, k: int) -> str:
+    signal = solution.signals[k]
+    if signal.stray.name:
+        return f"δ {printed(signal)}: probably {signal.stray.name}."
+    size = f", {amount(signal.n)} H" if signal.n else ""
+    return f"δ {printed(signal)}{size}: nothing in the structure explains it."
+
+
+def _missing_findings(solution: Solution) -> Iterator[Finding]:
+    for g, (group, s) in enumerate(zip(solution.groups, solution.given, strict=True)):
+        if s == NOWHERE:
+            text = _missing_text(group)
+            yield Finding(
+                "h1.missing",
+                TRUST["h1.missing"] * missing_weight(group),
+                text,
+                (),
+                group.atoms,
+                _source([group]),
+            )
+
+
+def _missing_text(group: ProtonGroup) -> str:
+    if group.exchangeable:
+        return f"{group_name(group)} not seen: it may hide under another signal, be broad, or have exchanged."
+    return f"{plural_h(group.n)}, {group_name(group)}, expected near δ {group.ppm:.2f}, not seen."
+
+
+def _missing(solution: Solution) -> Iterator[Leftover]:
+    for g, (group, s) in enumerate(zip(solution.groups, solution.given, strict=True)):
+        if s == NOWHERE:
+            yield Leftover(f"h1:{g}", _missing_text(group), group_name(group), group.atoms)
+
+
+def _strays(solution: Solution, readings: Readings) -> Iterator[Leftover]:
+    for k in range(len(readings.h1)):
+        if not solution.members(k):
+            yield Leftover(f"h1:{k}", _stray_text(solution, k), solution.signals[k].stray.name)
+
+
+def _links(solution: Solution) -> Iterator[Link]:
+    for g, (group, s) in enumerate(zip(solution.groups, solution.given, strict=True)):
+        if s != NOWHERE:
+            yield Link(f"h1:{s}", f"h1:{g}", group.atoms)

@@ -1,0 +1,108 @@
+"""From tallies to verdicts: fits, clashes or undecided, each with its reason; and to shares.
+
+Two things decide. Absolute: whether the readings suit the structure as well as they suit right structures of
+published compounds. Relative: how far it lies behind the best structure put up.
+"""
+
+from __future__ import annotations
+
+from collections import defaultdict
+from collections.abc import Sequence
+from dataclasses import dataclass
+
+from hoodside.weigh.decibans import odds
+from hoodside.weigh.finding import Finding
+from hoodside.weigh.structure import Tally
+
+FITS, CLASHES, UNDECIDED = "fits", "clashes", "undecided"
+
+#: Structures nearer than this are not told apart by the readings, decibans (ten times as likely).
+TELLS_APART = 10.0
+#: This far behind the best one a structure clashes, decibans.
+BEHIND = 20.0
+#: One reading, or one expected and missing, that speaks this strongly against a structure rules it out.
+RULES_OUT = -18.0
+#: A structure whose readings, all together, suit some other compound better by this much clashes.
+TOTAL_AGAINST = -6.0
+#: Less weight than this is no fit yet: too little has been measured.
+ENOUGH = 10.0
+
+
+@dataclass(frozen=True, slots=True)
+class Verdict:
+    """A verdict on one structure, with the finding that decides where there is one."""
+
+    verdict: str
+    reason: str
+    decisive: Finding | None = None
+
+
+def judge(tallies: Sequence[Tally]) -> list[Verdict]:
+    """A verdict per tally, in order."""
+    best = max(range(len(tallies)), key=lambda i: tallies[i].weight_db, default=0)
+    clashing = [_absolute_clash(tally) for tally in tallies]
+    verdicts = []
+    for i, tally in enumerate(tallies):
+        against = clashing[i] or _relative_clash(tally, tallies[best])
+        if against is not None:
+            verdicts.append(Verdict(CLASHES, against.text, against))
+        else:
+            rest = [t for k, t in enumerate(tallies) if k != i and clashing[k] is None]
+            verdicts.append(_standing(tally, rest))
+    return verdicts
+
+
+def shares(tallies: Sequence[Tally]) -> list[float]:
+    """Posterior probability of each structure among those put up, equal before any reading."""
+    if not tallies:
+        return []
+    top = max(t.weight_db for t in tallies)
+    ratios = [odds(t.weight_db - top) for t in tallies]
+    return [ratio / sum(ratios) for ratio in ratios]
+
+
+def _standing(tally: Tally, rest: Sequence[Tally]) -> Verdict:
+    identity = tally.expected.structure.inchikey
+    others = [t for t in rest if t.expected.structure.inchikey != identity]
+    ahead = max((t.weight_db - tally.weight_db for t in others), default=-1e9)
+    if tally.weight_db < ENOUGH:
+        return Verdict(UNDECIDED, "The readings so far say too little for it.")
+    if ahead > 0:
+        return Verdict(UNDECIDED, f"Another structure is {ahead:.0f} ahead.")
+    if ahead > -TELLS_APART:
+        return Verdict(UNDECIDED, f"Another structure is only {-ahead:.0f} behind.")
+    return Verdict(FITS, "The readings suit it, and no other structure put up comes near.")
+
+
+def _absolute_clash(tally: Tally) -> Finding | None:
+    worst = min(_by_reading(tally.findings), key=lambda f: f.weight_db, default=None)
+    if worst is None:
+        return None
+    return worst if worst.weight_db <= RULES_OUT or tally.weight_db <= TOTAL_AGAINST else None
+
+
+def _relative_clash(tally: Tally, best: Tally) -> Finding | None:
+    """The finding that sets a structure back most against the best, when it is far behind."""
+    if best.weight_db - tally.weight_db < BEHIND:
+        return None
+    theirs = {_key(f): f.weight_db for f in _by_reading(best.findings)}
+    mine = _by_reading(tally.findings)
+    return min(mine, key=lambda f: f.weight_db - max(theirs.get(_key(f), 0.0), 0.0), default=None)
+
+
+def _key(finding: Finding) -> tuple[str, ...]:
+    return finding.readings or (finding.text,)
+
+
+def _by_reading(findings: Sequence[Finding]) -> list[Finding]:
+    """Findings on one reading joined: their weights summed, the text of the one most against it."""
+    joined: dict[tuple[str, ...], list[Finding]] = defaultdict(list)
+    for finding in findings:
+        joined[_key(finding)].append(finding)
+    return [_joined(members) for members in joined.values()]
+
+
+def _joined(members: list[Finding]) -> Finding:
+    worst = min(members, key=lambda f: f.weight_db)
+    total = sum(f.weight_db for f in members)
+    return Finding(worst.kind, total, worst.text, worst.readings, worst.atoms, worst.source)

@@ -1,0 +1,66 @@
+"""Turns numbers and groups into the words of the trade."""
+
+from __future__ import annotations
+
+from collections.abc import Iterable, Sequence
+from typing import Protocol
+
+from hoodside.predict.model import ProtonGroup
+
+_SUBSCRIPTS = str.maketrans("0123456789", "₀₁₂₃₄₅₆₇₈₉")
+
+
+class HasAtoms(Protocol):
+    """Any predicted group."""
+
+    @property
+    def atoms(self) -> tuple[int, ...]: ...
+
+
+class HasPlace(Protocol):
+    """Any signal with a window of places."""
+
+    @property
+    def ppm(self) -> float: ...
+
+
+def atoms_of(groups: Iterable[HasAtoms]) -> tuple[int, ...]:
+    """All atoms of some groups, ascending, each once."""
+    return tuple(sorted({atom for group in groups for atom in group.atoms}))
+
+
+def printed(signal: HasPlace) -> str:
+    """A shift with two decimals."""
+    return f"{signal.ppm:.2f}"
+
+
+def plural_h(n: int) -> str:
+    """ "3 H"."""
+    return f"{n} H"
+
+
+def amount(n: float | None) -> str:
+    """A number of H without needless decimals."""
+    return "?" if n is None else f"{n:.1f}".removesuffix(".0")
+
+
+def joules(j: Sequence[float]) -> str:
+    """ ", J = 8.2, 1.4 Hz", or nothing."""
+    return f", J = {', '.join(f'{hz:g}' for hz in j)} Hz" if j else ""
+
+
+def group_name(group: ProtonGroup) -> str:
+    """What the H are, such as "CH on aryl"."""
+    return group.environment or "H"
+
+
+def formula_text(formula: str) -> str:
+    """A formula with subscripts."""
+    return formula.translate(_SUBSCRIPTS)
+
+
+def listed(items: Sequence[str]) -> str:
+    """ "a", "a and b", "a, b and c"."""
+    if len(items) < 2:
+        return "".join(items)
+    return f"{', '.join(items[:-1])} and {items[-1]}"
