@@ -16,7 +16,7 @@ _SUPERSEDED = "alternative value"
 
 def parse(text: str) -> dict[str, Any]:
     """What a pasted report says, what could not be read, and what each stretch of it was taken for."""
-    from hoodside.readings.report_line import MOST_CHARS, parse_report
+    from hoodside.readings.report import MOST_CHARS, parse_report
 
     parsed = parse_report(short_text(text, "text", most=MOST_CHARS))
     return {

@@ -110,7 +110,7 @@ def _with_text(typed: Readings, value: object) -> Readings:
     line = text(value, "text", most=2_000_000)
     if not line:
         return typed
-    from hoodside.readings.report_line import parse_report  # only cases with a text pay for loading it
+    from hoodside.readings.report import parse_report  # only cases with a text pay for loading it
 
     parsed = parse_report(line)
     pasted = parsed.readings
