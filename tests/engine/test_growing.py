@@ -35,6 +35,37 @@ def test_an_impossible_step_is_refused_with_a_reason() -> None:
         call("edit", {"structure": "CC(C)(C)C", "step": "attach", "arguments": {"atom": 1, "group": "C"}})
 
 
+def test_canvas_says_what_is_missing_against_the_formula() -> None:
+    """Benzene on the way to a methoxybenzaldehyde: C8H8O2 less C6H6."""
+    against = call("canvas", {"structure": "c1ccccc1", "formula": "C8H8O2"})["against"]
+    assert (against["needs"], against["over"], against["dbe"]) == ("C2H2O2", "", 5)
+    against = call("canvas", {"structure": "CCCCBr", "formula": "C5H12O"})["against"]
+    assert (against["needs"], against["over"]) == ("CH3O", "Br")
+
+
+@pytest.mark.parametrize("text", ["", "C10H12Q"])
+def test_without_a_readable_formula_nothing_is_missing(text: str) -> None:
+    assert call("canvas", {"structure": "CCO", "formula": text})["against"] is None
+
+
+def test_groups_that_complete_the_formula_come_first_and_those_too_large_last() -> None:
+    asked = {"structure": "O=Cc1ccccc1", "atom": 4, "formula": "C10H12O"}
+    offered = [o for o in call("options", asked)["options"] if o["step"] == "attach"]
+    assert {o["label"] for o in offered if o["fit"] == "completes"} >= {"CH(CH3)2", "CH2CH2CH3"}
+    assert offered[0]["fit"] == "completes"
+    assert offered[-1]["fit"] == "exceeds"
+    fits = {o["label"]: o["fit"] for o in offered}
+    assert (fits["CH3"], fits["C6H5"], fits["OH"], fits["NO2"]) == ("fits", "exceeds", "exceeds", "exceeds")
+
+
+def test_canvas_tells_the_configurations_drawn() -> None:
+    """L-alanine is S; fumaric acid is E (IUPAC recommendations 1996)."""
+    alanine = call("canvas", {"structure": "C[C@H](N)C(=O)O"})
+    assert alanine["labels"] == {"atoms": {1: "S"}, "bonds": {}}
+    fumaric = call("canvas", {"structure": "OC(=O)/C=C/C(=O)O"})
+    assert fumaric["labels"]["bonds"] == {3: "E"}
+
+
 def test_outcomes_come_with_cautions_and_what_was_not_understood() -> None:
     answer = call("outcomes", {"structure": "C=Cc1ccccc1", "reagents": "OsO4, NMO, moonlight"})
     assert answer["outcomes"][0]["smiles"] == read_structure("OCC(O)c1ccccc1").smiles

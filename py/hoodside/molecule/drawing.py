@@ -18,6 +18,8 @@ from hoodside.molecule.source import Notation, notation_of
 from hoodside.molecule.structure import Structure
 
 _STROKE = 2.0
+#: RDKit lays bonds out this long and counts its scale per unit of it.
+_BOND_LENGTH = 1.5
 _RING_STROKE = 3.0
 _LEAST_RING = 9.0
 _BAND_STROKE = 12.0
@@ -46,14 +48,18 @@ def draw(
     height: int = 200,
     atoms: Sequence[int] = (),
     bonds: Sequence[int] = (),
+    longest_bond: float = 0.0,
 ) -> Drawing:
-    """Draw a structure into ``width`` x ``height`` pixels with the given atoms and bonds lit."""
+    """Draw a structure into ``width`` x ``height`` pixels with the given atoms and bonds lit.
+
+    Small structures fill the frame unless ``longest_bond`` (pixels) keeps them to a size.
+    """
     turn = _best_turn(structure, width / height)
-    raw = kernel().raw_svg(structure.source, drawing_options(width, height, turn))
+    raw = kernel().raw_svg(structure.source, drawing_options(width, height, turn, longest_bond))
     return in_one_ink(raw, atoms, bonds)
 
 
-def drawing_options(width: int, height: int, turn: float = 0.0) -> str:
+def drawing_options(width: int, height: int, turn: float = 0.0, longest_bond: float = 0.0) -> str:
     """RDKit drawing options (JSON); ``turn`` in degrees. Kernels mark every atom, to tell where it is."""
     options = {
         "width": width,
@@ -66,6 +72,7 @@ def drawing_options(width: int, height: int, turn: float = 0.0) -> str:
         "minFontSize": 9,
         "atomHighlightsAreCircles": True,
         "highlightRadius": 0.35,
+        "fixedBondLength": longest_bond / _BOND_LENGTH if longest_bond else -1.0,
     }
     return json.dumps(options)
 

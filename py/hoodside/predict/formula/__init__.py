@@ -13,14 +13,17 @@ from hoodside.predict.formula.masses import average_mass, exact_mass, nominal_ma
 from hoodside.predict.formula.model import Formula
 from hoodside.predict.formula.parse import formula_of, parse_composition, parse_formula
 from hoodside.predict.formula.pattern import IsotopePeak, isotope_pattern
+from hoodside.predict.formula.shortfall import Fit, Shortfall, fit_of, shortfall
 from hoodside.predict.formula.unsaturation import formula_doubts, nitrogen_rule, unsaturation
 
 __all__ = [
     "Adduct",
     "CombustionLine",
+    "Fit",
     "Formula",
     "FormulaCandidate",
     "IsotopePeak",
+    "Shortfall",
     "SolvateFit",
     "adduct_mz",
     "adduct_names",
@@ -28,6 +31,7 @@ __all__ = [
     "candidate_formulas",
     "combustion_check",
     "exact_mass",
+    "fit_of",
     "formula_doubts",
     "formula_of",
     "isotope_pattern",
@@ -37,6 +41,7 @@ __all__ = [
     "parse_adduct",
     "parse_composition",
     "parse_formula",
+    "shortfall",
     "solvate_fits",
     "unsaturation",
 ]
