@@ -6,9 +6,11 @@ from functools import lru_cache
 
 from hoodside.molecule import Structure, read_structure
 from hoodside.predict.carbon import predict_carbons
+from hoodside.predict.coupling import predict_couplings
 from hoodside.predict.infrared import predict_bands
 from hoodside.predict.mass import predict_ions
 from hoodside.predict.model import Prediction, ProtonGroup
+from hoodside.predict.multiplet import apply_multiplets
 from hoodside.predict.proton import predict_protons
 
 USUAL_SOLVENT = "CDCl3"
@@ -50,9 +52,4 @@ def _structure(source: str) -> Structure:
 
 def _protons(structure: Structure, solvent: str, mhz: float) -> tuple[ProtonGroup, ...]:
     groups = predict_protons(structure, solvent)
-    try:
-        from hoodside.predict.coupling import predict_couplings
-        from hoodside.predict.multiplet import apply_multiplets
-    except ImportError:
-        return groups
     return apply_multiplets(groups, predict_couplings(structure, groups), mhz)
