@@ -56,17 +56,21 @@ export interface Finding {
   kind: string; weight_db: number; text: string; readings: string[]; atoms: number[]; source: string;
 }
 export interface Assigned { reading: string; predicted: string; atoms: number[] }
+/** A prediction without a reading, or a reading without a prediction; `name` is what it probably is. */
+export interface Leftover { ref: string; text: string; name: string; atoms: number[] }
+/** A candidate as weighed. `index` is its place among the candidates asked about, null for a rival. */
 export interface Weighed {
-  smiles: string; origin: string; verdict: Verdict; weight_db: number; share: number; reason?: string;
-  findings: Finding[]; assignment: Assigned[]; formula?: string; index?: number;
+  smiles: string; origin: string; index: number | null; formula: string; ok_formula: boolean; verdict: Verdict;
+  reason: string; sentence: string; weight_db: number; share: number; findings: Finding[]; assignment: Assigned[];
+  missing: Leftover[]; unexplained: Leftover[]; expected: Omit<ProtonGroup, 'equivalence' | 'terms'>[];
 }
+/** `separates` holds pairs of places in the ranking. */
 export interface Advice {
-  measure: string; why: string; separates: number[][]; expected_db: number; cautions: string[];
-  effort?: string; if_then?: string[]; kind?: string; test?: string;
+  measure: string; why: string; separates: number[][]; expected_db: number; cautions: string[]; effort: string;
+  if_then: string[]; test?: string;
 }
 export interface CheckAnswer {
   id: string; formula: string; dbe: number | null; warnings: string[]; candidates: Weighed[]; next: Advice[];
-  verdict?: Verdict; summary?: string;
 }
 
 export interface Term { label: string; value: number; source: string }

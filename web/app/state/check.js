@@ -33,17 +33,9 @@ export function question(doc) {
 
 /** @typedef {NonNullable<ReturnType<typeof question>>} Question */
 
-/** Which structure each weighed candidate is. Duplicates in the case each get their own answer.
- * @param {Question} asked @param {CheckAnswer} answer */
-function orderOf(asked, answer) {
-  const free = asked.params.candidates.map((/** @type {string} */ smiles, /** @type {number} */ i) => ({ smiles, id: asked.ids[i] ?? '' }));
-  return answer.candidates.map((candidate) => {
-    if (candidate.origin === 'rival') return '';
-    if (candidate.index !== undefined && candidate.index !== null) return asked.ids[candidate.index] ?? '';
-    const at = free.findIndex((/** @type {any} */ entry) => entry.smiles === candidate.smiles);
-    return at < 0 ? '' : /** @type {any} */ (free.splice(at, 1)[0]).id;
-  });
-}
+/** Which structure each weighed candidate is. @param {Question} asked @param {CheckAnswer} answer */
+const orderOf = (asked, answer) =>
+  answer.candidates.map(({ index }) => (index === null ? '' : asked.ids[index] ?? ''));
 
 /** @type {AbortController | null} */
 let running = null;

@@ -1,4 +1,5 @@
 import { html } from 'htm/preact';
+import { Guard } from '../components/guard.js';
 import { Toast } from '../components/toast.js';
 import { casesLoaded, storeTrouble } from '../state/cases.js';
 import { current } from '../state/check.js';
@@ -29,5 +30,5 @@ const Hatch = () => html`<svg class="hidden" width="0" height="0" aria-hidden="t
 export function App() {
   return html`<${Hatch} /><${Notices} />
     ${storeTrouble.value && html`<p class="loud" role="alert">${storeTrouble.value} Export the case before closing this page.</p>`}
-    <${Screen} /><${Toast} />`;
+    <${Guard} at=${path.value.join('/')}><${Screen} /><//><${Toast} />`;
 }

@@ -37,16 +37,5 @@ export function signed(db) {
 /** @param {number} value @param {number} digits */
 export const signedFixed = (value, digits) => (value > 0 ? '+' : '') + fixed(value, digits);
 
-/** How many times as likely a lead of `db` decibans makes it, in words a person says.
- * @param {number} db */
-export function timesAsLikely(db) {
-  const times = 10 ** (Math.abs(db) / 10);
-  if (times < 1.5) return 'about as likely';
-  if (times > 1e6) return 'over a million times less likely';
-  const step = times >= 1000 ? 1000 : times >= 100 ? 10 : 1;
-  const rounded = Math.round(times / step) * step;
-  return `${rounded.toLocaleString('en')} times less likely`;
-}
-
 /** @param {number} count @param {string} one @param {string} [many] */
 export const plural = (count, one, many = `${one}s`) => `${count} ${count === 1 ? one : many}`;

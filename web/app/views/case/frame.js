@@ -1,4 +1,5 @@
 import { html } from 'htm/preact';
+import { Scrolled } from '../../components/scrolled.js';
 import { path } from '../../state/route.js';
 import { wide } from '../../state/screen.js';
 import { NextStation } from '../next/next.js';
@@ -45,7 +46,7 @@ function OnePane({ doc, station, sheet }) {
   const View = /** @type {any} */ (VIEWS[station]);
   return html`<div class="frame">
     <${CaseBar} doc=${doc} /><${FactsLine} doc=${doc} />
-    <main class="station" key=${station}><${View} doc=${doc} /></main>
+    <${Scrolled} key=${station} name=${`${doc.id} ${station}`} main><${View} doc=${doc} /><//>
     <${Stations} doc=${doc} active=${[station]} />
   </div>`;
 }
@@ -58,8 +59,10 @@ function TwoPanes({ doc, station, sheet }) {
   return html`<div class="frame frame-wide">
     <${CaseBar} doc=${doc} /><${FactsLine} doc=${doc} />
     <div class="panes">
-      <main class="station" key=${`l-${shown.left}`}>${onLeft && sheet ? sheet : html`<${Left} doc=${doc} />`}</main>
-      <section class="station" key=${`r-${shown.right}`}>${!onLeft && sheet ? sheet : html`<${Right} doc=${doc} />`}</section>
+      ${onLeft && sheet ? html`<main class="station" key="left-sheet">${sheet}</main>`
+        : html`<${Scrolled} key=${shown.left} name=${`${doc.id} ${shown.left}`} main><${Left} doc=${doc} /><//>`}
+      ${!onLeft && sheet ? html`<section class="station" key="right-sheet">${sheet}</section>`
+        : html`<${Scrolled} key=${shown.right} name=${`${doc.id} ${shown.right}`}><${Right} doc=${doc} /><//>`}
     </div>
     <${Stations} doc=${doc} active=${[shown.left, shown.right]} />
   </div>`;

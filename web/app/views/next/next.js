@@ -31,14 +31,14 @@ function Slip({ doc, found, advice }) {
   const [pair] = advice.separates;
   return html`<li class="next-slip">
     <button type="button" class="next-open" onClick=${() => openReading(doc, advice)}>
-      <span class="next-title"><b><${Words} text=${advice.measure} /></b><span>${advice.effort ?? ''}</span></span>
+      <span class="next-title"><b><${Words} text=${advice.measure} /></b><span>${advice.effort}</span></span>
       ${pair && pair.length >= 2 ? html`<span class="scales"><${Thumb} doc=${doc} found=${found} at=${/** @type {number} */ (pair[0])} />
         <span class="scales-beam"><svg viewBox="0 0 100 12" preserveAspectRatio="none" aria-hidden="true"><path d="M0 6H100M50 0V12" /></svg>
           <span>about <b>${Math.round(advice.expected_db)}</b> decibans</span></span>
         <${Thumb} doc=${doc} found=${found} at=${/** @type {number} */ (pair[1])} /></span>`
         : html`<span class="scales-plain">about <b>${Math.round(advice.expected_db)}</b> decibans</span>`}
       <span class="next-why"><${Words} text=${advice.why} /></span>
-      ${(advice.if_then ?? []).map((line) => html`<span class="next-why" key=${line}><${Words} text=${line} /></span>`)}
+      ${advice.if_then.map((line) => html`<span class="next-why" key=${line}><${Words} text=${line} /></span>`)}
     </button>
     ${advice.separates.length > 1 && html`<p class="hint">and ${advice.separates.length - 1} more ${advice.separates.length === 2 ? 'pair' : 'pairs'}</p>`}
     ${advice.cautions.map((line) => html`<${Caution} key=${line}>${line}<//>`)}

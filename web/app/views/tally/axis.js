@@ -1,8 +1,5 @@
 import { html } from 'htm/preact';
-import { currentCheck } from '../../state/check.js';
-import { useAnswer } from '../../state/use-answer.js';
 import { fixed, plural, toNumber, toRange } from '../../words/numbers.js';
-import { predictQuestion } from '../structures/predicted.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {import('../../state/check.js').Checked} Checked */
@@ -10,7 +7,7 @@ import { predictQuestion } from '../structures/predicted.js';
 
 const WIDTH = 700;
 const MIDDLE = 92;
-const HEIGHT = 214;
+const HEIGHT = 236;
 const TALL = 66;
 
 /** @param {CaseDoc} doc @param {Checked} found @returns {Stick[]} */
@@ -39,8 +36,7 @@ const tall = (n) => 22 + (TALL - 22) * Math.min(1, Math.sqrt(n / 6));
  * @param {{ doc: CaseDoc, found: Checked, at: number }} props */
 export function Axis({ doc, found, at }) {
   const candidate = found.answer.candidates[at];
-  const { value } = useAnswer('predict', candidate ? predictQuestion(doc, candidate.smiles) : null);
-  const groups = /** @type {import('../../types').Prediction | null} */ (value)?.h1 ?? [];
+  const groups = candidate?.expected ?? [];
   const up = measured(doc, found);
   if (!up.length || !candidate) return null;
   const { high, low, ticks } = ticksOf([...up.flatMap((stick) => [stick.lo, stick.hi]), ...groups.map((group) => group.ppm)]);
@@ -54,7 +50,7 @@ export function Axis({ doc, found, at }) {
   return html`<figure class="axis">
     <svg viewBox="0 0 ${WIDTH} ${HEIGHT}" aria-hidden="true">
       <text class="axis-word" x="0" y="14">measured</text>
-      <text class="axis-word axis-word-expected" x="0" y=${MIDDLE + 74}>expected</text>
+      <text class="axis-word axis-word-expected" x="0" y=${MIDDLE + 98}>expected</text>
       ${groups.map((group, i) => html`<g key=${`p${i}`} class=${group.exchangeable ? 'axis-exchangeable' : ''}>
         <rect class="axis-sure" x=${x(group.ppm + group.sd)} width=${Math.max(3, x(group.ppm - group.sd) - x(group.ppm + group.sd))} y=${MIDDLE + 12} height=${tall(group.n)} />
         <path class="axis-expected" d="M${x(group.ppm)} ${MIDDLE + 12}v${tall(group.n)}" /></g>`)}
@@ -69,5 +65,3 @@ export function Axis({ doc, found, at }) {
       ${groups.map((group) => `${group.n} H at ${fixed(group.ppm, 2)}`).join(', ')} ppm.</figcaption>
   </figure>`;
 }
-
-export { currentCheck };

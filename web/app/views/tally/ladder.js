@@ -1,7 +1,7 @@
 import { html } from 'htm/preact';
 import { Sign, VERDICT_WORDS } from '../../components/sign.js';
-import { signed, timesAsLikely } from '../../words/numbers.js';
-import { structureName } from '../../words/structures.js';
+import { signed } from '../../words/numbers.js';
+import { letterOf, structureName } from '../../words/structures.js';
 import { Thumb } from './thumb.js';
 import { touchStructure } from './touched.js';
 
@@ -13,7 +13,7 @@ export function scaleOf(weights) {
   const low = Math.min(0, ...weights);
   const high = Math.max(10, ...weights);
   const step = [5, 10, 20, 50, 100, 200, 500, 1000].find((size) => (high - low) / size <= 4) ?? 2000;
-  const from = Math.floor((low - step * 0.15) / step) * step;
+  const from = low < 0 ? Math.floor((low - step * 0.15) / step) * step : 0;
   const to = Math.ceil((high + step * 0.15) / step) * step;
   const ticks = [];
   for (let tick = from; tick <= to; tick += step) ticks.push(tick);
@@ -31,7 +31,7 @@ export function Ladder({ doc, found, at }) {
     ${all.map((candidate, i) => html`<button type="button" class="rung" key=${candidate.smiles} aria-pressed=${String(i === at)}
       onClick=${() => touchStructure(doc, candidate.smiles)}
       aria-label="${structureName(doc, found, i)}: ${VERDICT_WORDS[candidate.verdict]}, ${signed(candidate.weight_db)} decibans">
-      <span class="rung-thumb"><${Thumb} doc=${doc} found=${found} at=${i} /></span>
+      <span class="rung-thumb"><${Thumb} doc=${doc} found=${found} at=${i} />${found.order[i] && html`<span class="rung-letter" aria-hidden="true">${letterOf(doc, found.order[i])}</span>`}</span>
       <span class="rung-line"><svg viewBox="0 0 100 10" preserveAspectRatio="none"><path d="M0 5H${place(candidate.weight_db)}" /></svg>
         <span class="rung-sign" style=${{ left: `${place(candidate.weight_db)}%` }}><${Sign} verdict=${candidate.verdict} size=${22} quiet /></span></span>
     </button>`)}
@@ -39,5 +39,3 @@ export function Ladder({ doc, found, at }) {
     <p class="ladder-words">decibans: each 10 is ten times as likely</p>
   </div>`;
 }
-
-export { timesAsLikely };

@@ -7,6 +7,7 @@ import { currentCheck } from '../../state/check.js';
 import { address } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { fixed, signed, signedFixed } from '../../words/numbers.js';
+import { dashed } from '../../words/readings.js';
 import { structureName } from '../../words/structures.js';
 import { CaseSign } from '../case/sign.js';
 import { predictQuestion } from '../structures/predicted.js';
@@ -14,6 +15,9 @@ import { rowsOf } from './row-data.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {import('../../types').Term} Term */
+
+/** Standard deviations that hold nine in ten of a normal error. */
+const NINE_IN_TEN = 1.645;
 
 /** Why one reading speaks for or against one structure. @param {{ doc: CaseDoc, at: number, rowKey: string }} props */
 export function ReasonSheet({ doc, at, rowKey }) {
@@ -34,9 +38,25 @@ export function ReasonSheet({ doc, at, rowKey }) {
     <${Drawing} structure=${candidate.smiles} atoms=${row.atoms} label="${structureName(doc, found, at)}, atoms concerned marked" width=${354} height=${230} class="drawing-big" />
     <p class="reason"><b>Speaks ${row.weight >= 0 ? 'for' : 'against'} ${structureName(doc, found, at)}, ${signed(row.weight)}.</b></p>
     <ul class="reasons">${row.findings.map((finding, i) => html`<li key=${i}>
-      <p><${Words} text=${finding.text} /></p><b>${signed(finding.weight_db)}</b>${finding.source && html`<p class="source">${finding.source}</p>`}</li>`)}</ul>
+      <p><${Words} text=${finding.text} /></p><b>${signed(finding.weight_db)}</b></li>`)}</ul>
     ${row.predicted.map((ref) => html`<${Derivation} key=${ref} reference=${ref} predicted=${value} />`)}
+    <${Sources} row=${row} />
   <//>`;
+}
+
+/** Where the numbers of the findings come from. @param {{ row: import('./row-data.js').TallyRow }} props */
+function Sources({ row }) {
+  const all = [...new Set(row.findings.flatMap((finding) => finding.source.split('; ')).filter(Boolean))];
+  return all.length ? html`<${Section} title="Sources"><ul>${all.map((source) => html`<li class="source" key=${source}>${source}</li>`)}</ul><//>` : null;
+}
+
+/** The expected number of one kind of prediction, with its spread and decimals.
+ * @param {string} kind @param {any} group */
+function expectedNumber(kind, group) {
+  if (kind === 'ir') return { digits: 0, text: `${Math.round(group.typical)}`, note: `${dashed(`${group.hi}-${group.lo}`)} cm\u207b\u00b9`, what: 'position' };
+  const digits = kind === 'c13' ? 1 : 2;
+  return { digits, text: `${fixed(group.ppm, digits)} ± ${fixed(group.sd, digits)}`, what: 'shift',
+    note: `9 in 10 within ${fixed(NINE_IN_TEN * group.sd, digits)}` };
 }
 
 /** Base and increments that sum to the expected number. @param {{ reference: string, predicted: any }} props */
@@ -44,11 +64,11 @@ function Derivation({ reference, predicted }) {
   const [kind = '', at] = reference.split(':');
   const group = predicted?.[kind]?.[Number(at)];
   if (!group?.terms?.length) return null;
-  const digits = kind === 'c13' ? 1 : 2;
-  return html`<${Section} title="How the expected shift came about">
-    <table class="terms"><tbody>${group.terms.map((/** @type {Term} */ term, /** @type {number} */ i) => html`<tr key=${i}>
-      <td>${term.label}<span class="source">${term.source}</span></td><td>${i ? signedFixed(term.value, digits) : fixed(term.value, digits)}</td></tr>`)}
-      <tr class="terms-sum"><td>expected<span class="source">9 in 10 within ${fixed(1.645 * group.sd, digits)}</span></td>
-        <td>${fixed(group.ppm, digits)} ± ${fixed(group.sd, digits)}</td></tr></tbody></table>
+  const { digits, text, note, what } = expectedNumber(kind, group);
+  return html`<${Section} title="How the expected ${what} came about">
+    <dl class="terms">${group.terms.map((/** @type {Term} */ term, /** @type {number} */ i) => html`<div key=${i}>
+      <dt><${Words} text=${term.label} /><span class="source">${term.source}</span></dt>
+      <dd>${i ? signedFixed(term.value, digits) : fixed(term.value, digits)}</dd></div>`)}
+      <div class="terms-sum"><dt>expected<span class="source">${note}</span></dt><dd>${text}</dd></div></dl>
   <//>`;
 }
