@@ -1,0 +1,1 @@
+"""The command line: the engine's methods for scripts and terminals."""

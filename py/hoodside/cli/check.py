@@ -1,0 +1,55 @@
+"""The ``check`` command."""
+
+from __future__ import annotations
+
+import argparse
+from collections.abc import Iterator
+from typing import Any
+
+from hoodside.cli.answer import answer_all, columns
+from hoodside.cli.files import read_json
+
+_MOST_FINDINGS = 12
+
+
+def run(options: argparse.Namespace) -> int:
+    """Weigh every case of the input."""
+    cases, several = read_json(options.file)
+    return answer_all("check", cases, several, options.json, _lines)
+
+
+def _lines(answer: dict[str, Any]) -> Iterator[str]:
+    degree = answer.get("dbe")
+    facts = [answer["id"], answer["formula"], "" if degree is None else f"{degree:g} unsaturations"]
+    yield "  ".join(part for part in facts if part)
+    yield from (f"! {warning}" for warning in answer["warnings"])
+    yield from columns(_ranking(answer["candidates"]), right=(0, 2, 3))
+    for place, candidate in enumerate(answer["candidates"], start=1):
+        yield from _reasons(place, candidate)
+    yield from _next(answer["next"])
+    yield ""
+
+
+def _ranking(candidates: list[dict[str, Any]]) -> Iterator[list[object]]:
+    yield ["", "verdict", "weight", "share", "structure"]
+    for place, c in enumerate(candidates, start=1):
+        rival = " (rival)" if c["origin"] == "rival" else ""
+        yield [place, c["verdict"], f"{c['weight_db']:.1f}", f"{100 * c['share']:.0f} %", c["smiles"] + rival]
+
+
+def _reasons(place: int, candidate: dict[str, Any]) -> Iterator[str]:
+    yield ""
+    yield f"{place}  {candidate['smiles']}: {candidate.get('sentence') or candidate['verdict']}"
+    telling = sorted(candidate["findings"], key=lambda f: -abs(f["weight_db"]))[:_MOST_FINDINGS]
+    telling.sort(key=lambda f: f["weight_db"])
+    rows = [[f"{f['weight_db']:+.1f}", f["kind"], f["text"]] for f in telling]
+    yield from (f"   {line}" for line in columns(rows, right=(0,)))
+
+
+def _next(measures: list[dict[str, Any]]) -> Iterator[str]:
+    if measures:
+        yield ""
+        yield "Next"
+    for entry in measures:
+        yield f"   {entry['expected_db']:.1f}  {entry['measure']}: {entry['why']}"
+        yield from (f"        caution: {caution}" for caution in entry["cautions"])

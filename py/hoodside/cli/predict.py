@@ -1,0 +1,65 @@
+"""The ``predict`` command."""
+
+from __future__ import annotations
+
+import argparse
+from collections.abc import Iterator
+from typing import Any
+
+from hoodside.cli.answer import answer_one, columns
+from hoodside.cli.files import read_text
+
+_MOST_IONS = 12
+
+
+def run(options: argparse.Namespace) -> int:
+    """Predict for one structure."""
+    smiles = read_text("-") if options.smiles == "-" else options.smiles
+    asked = {"smiles": smiles, "solvent": options.solvent, "mhz": options.mhz}
+    return answer_one("predict", {k: v for k, v in asked.items() if v}, options.json, _lines)
+
+
+def _lines(answer: dict[str, Any]) -> Iterator[str]:
+    degree = "" if answer["dbe"] is None else f"{answer['dbe']:g} unsaturations"
+    yield f"{answer['smiles']}  {answer['formula']}  {answer['exact_mass']:.4f} u  {degree}".rstrip()
+    yield ""
+    yield f"1H, {answer['mhz']:g} MHz, {answer['solvent']}"
+    yield from columns(map(_proton, sorted(answer["h1"], key=lambda g: -g["ppm"])), right=(0,))
+    yield ""
+    yield "13C"
+    yield from columns(map(_carbon, sorted(answer["c13"], key=lambda g: -g["ppm"])), right=(0,))
+    yield ""
+    yield "IR, cm-1"
+    bands = sorted(answer["ir"], key=lambda b: -b["typical"])
+    yield from columns(
+        (
+            [b["typical"], f"{b['hi']}-{b['lo']}", b["strength"], b["shape"], f"{b['group']}, {b['mode']}"]
+            for b in bands
+        ),
+        right=(0,),
+    )
+    ions = sorted(answer["ms"]["ions"], key=lambda i: -i["weight"])[:_MOST_IONS]
+    if ions:
+        yield ""
+        yield "Electron ionisation, m/z"
+        yield from columns(([f"{i['mz']:.4f}", f"{i['weight']:.2f}", i["label"]] for i in ions), right=(0,))
+
+
+def _proton(group: dict[str, Any]) -> list[object]:
+    j = ", ".join(f"{value:g}" for value in group["j"])
+    shift = f"{group['ppm']:.2f}"
+    if group["exchangeable"] and group["lo"] is not None:
+        spread = f"{group['lo']:g} to {group['hi']:g}, exchangeable"
+    else:
+        spread = f"± {group['sd']:.2f}"
+    return [shift, spread, f"{group['n']} H", group["mult"], f"J {j} Hz" if j else "", group["environment"]]
+
+
+def _carbon(group: dict[str, Any]) -> list[object]:
+    return [
+        f"{group['ppm']:.1f}",
+        f"± {group['sd']:.1f}",
+        f"{group['n']} C",
+        group["kind"],
+        group["environment"],
+    ]

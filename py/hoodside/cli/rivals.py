@@ -1,0 +1,30 @@
+"""The ``rivals`` command."""
+
+from __future__ import annotations
+
+import argparse
+from collections.abc import Iterator
+from typing import Any
+
+from hoodside.cli.answer import answer_one, columns
+from hoodside.cli.files import read_json
+from hoodside.cli.missing import needs
+
+
+def run(options: argparse.Namespace) -> int:
+    """Put up rivals of one structure."""
+    needs("rivals")
+    asked: dict[str, Any] = {"smiles": options.smiles}
+    if options.readings:
+        asked["readings"] = read_json(options.readings)[0][0]
+    if options.limit:
+        asked["limit"] = options.limit
+    return answer_one("rivals", asked, options.json, _lines)
+
+
+def _lines(answer: dict[str, Any]) -> Iterator[str]:
+    rows = []
+    for rival in answer["rivals"]:
+        weight = rival.get("weight_db")
+        rows.append(["" if weight is None else f"{weight:.1f}", rival["smiles"], rival.get("how", "")])
+    yield from columns(rows, right=(0,))
