@@ -9,6 +9,8 @@ const WIDTH = 700;
 const MIDDLE = 92;
 const HEIGHT = 236;
 const TALL = 66;
+/** The axis reaches at least this far, so that a few neighbouring signals are not torn apart. */
+const LEAST_PPM = 4;
 
 /** @param {CaseDoc} doc @param {Checked} found @returns {Stick[]} */
 function measured(doc, found) {
@@ -21,9 +23,9 @@ function measured(doc, found) {
 
 /** Whole ppm ticks with room for all sticks, high end first. @param {number[]} shifts */
 function ticksOf(shifts) {
-  const high = Math.ceil(Math.max(8, ...shifts) + 0.3);
+  const high = Math.ceil(Math.max(LEAST_PPM, ...shifts) + 0.3);
   const low = Math.floor(Math.min(0, ...shifts));
-  const step = high - low > 12 ? 4 : 2;
+  const step = high - low > 12 ? 4 : high - low > 6 ? 2 : 1;
   const ticks = [];
   for (let tick = Math.floor(high / step) * step; tick >= low; tick -= step) ticks.push(tick);
   return { high, low: low - 0.3, ticks };
