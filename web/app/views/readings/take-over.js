@@ -26,7 +26,8 @@ export function countOf(readings) {
 }
 
 /** Whether the case already holds readings of a kind that comes in. @param {CaseDoc} doc @param {any} readings */
-export const collides = (doc, readings) => KINDS.some((kind) => readings[kind]?.length && doc[kind].length);
+export const collides = (doc, readings) => KINDS.some((kind) => readings[kind]?.length && doc[kind].length)
+  || Boolean(readings.formula && doc.formula.trim() && readings.formula !== doc.formula.trim());
 
 /** Put engine readings into the case. @param {CaseDoc} draft @param {any} readings @param {boolean} replace */
 export function takeOver(draft, readings, replace) {
@@ -38,7 +39,8 @@ export function takeOver(draft, readings, replace) {
   for (const [lo, hi] of (readings.ir_clear ?? []).map((/** @type {any} */ row) => (Array.isArray(row) ? row : [row.lo, row.hi]))) {
     draft.irClear.push({ id: newId(), lo, hi });
   }
-  if (readings.formula) draft.formula = readings.formula;
+  // A formula typed before is not overruled by one that merely stands in a pasted line.
+  if (readings.formula && (replace || !draft.formula.trim())) draft.formula = readings.formula;
   if (readings.solvent) draft.solvent = readings.solvent;
   if (readings.mhz) draft.mhz = text(readings.mhz);
   if (readings.ir_medium) draft.irMedium = readings.ir_medium;

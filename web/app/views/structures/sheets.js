@@ -1,4 +1,5 @@
 import { html } from 'htm/preact';
+import { Grow } from '../grow/grow.js';
 import { NameSheet } from './name-sheet.js';
 import { OneStructure } from './one-sheet.js';
 import { PasteStructure } from './paste-sheet.js';
@@ -7,6 +8,7 @@ import { PasteStructure } from './paste-sheet.js';
 
 /** @type {Record<string, (doc: CaseDoc, arg: string) => any>} */
 const SHEETS = {
+  grow: (doc) => html`<${Grow} doc=${doc} />`,
   paste: (doc) => html`<${PasteStructure} doc=${doc} />`,
   name: (doc) => html`<${NameSheet} doc=${doc} />`,
   one: (doc, arg) => html`<${OneStructure} doc=${doc} id=${arg} />`,

@@ -19,8 +19,10 @@ export function Structures({ doc }) {
     <${CheckTrouble} />
     <${Section} title="Add a structure">
       <div class="two-up">
-        <a class="button primary" href=${address('case', doc.id, 'structures', 'name')}>By name</a>
-        <a class="button primary" href=${address('case', doc.id, 'structures', 'paste')}>Paste SMILES or CTfile</a>
+        <a class="button primary" href=${address('case', doc.id, 'structures', 'grow')}>Grow one</a>
+        <a class="button primary" href=${address('case', doc.id, 'structures', 'run')}>What did you run?</a>
+        <a class="button" href=${address('case', doc.id, 'structures', 'paste')}>Paste SMILES or CTfile</a>
+        <a class="button" href=${address('case', doc.id, 'structures', 'name')}>By name</a>
       </div>
     <//>
   </div>`;
