@@ -22,6 +22,10 @@ export function verdictFor(id) {
   return found && at >= 0 ? found.answer.candidates[at]?.verdict ?? 'none' : 'none';
 }
 
+/** "C9H8O short, Cl too many" @param {{ check: ReturnType<typeof formulaCheck> }} props */
+const Differs = ({ check }) => html`${check.short && html`<${Formula} text=${check.short} /> short`}${check.short && check.extra && ', '}
+  ${check.extra && html`<${Formula} text=${check.extra} /> too many`}`;
+
 /** @param {{ doc: CaseDoc, structure: Candidate }} props */
 export function StructureCard({ doc, structure }) {
   const text = doc.formula.trim();
@@ -33,7 +37,7 @@ export function StructureCard({ doc, structure }) {
     <b class="card-letter" aria-hidden="true">${letterOf(doc, structure.id)}</b>
     <${StructureDrawing} structure=${structure} label="Drawing of ${name}" size="card" />
     <span class="card-foot"><span class="card-name">${structure.name || html`<${Formula} text=${structure.formula} />`}
-      ${check.differs ? html`<span class="card-formula card-differs">${check.words}</span>`
+      ${check.differs ? html`<span class="card-formula card-differs"><${Differs} check=${check} /></span>`
         : structure.name && html`<span class="card-formula"><${Formula} text=${structure.formula} /></span>`}</span>
       <${Sign} verdict=${verdictFor(structure.id)} size=${22} /></span>
   </a></li>`;

@@ -6,13 +6,15 @@ function counts(formula) {
   return found;
 }
 
-/** How a structure's formula differs from the sample's: "2 H too many, 1 O short". Both as the engine writes them.
- * @param {string} structure @param {string} sample */
+/** @param {[string, number][]} parts */
+const written = (parts) => parts.map(([symbol, n]) => symbol + (n > 1 ? n : '')).join('');
+
+/** How a structure's formula differs from the sample's: what it has too much of, and what it is short of.
+ * Both as the engine writes them. @param {string} structure @param {string} sample */
 export function formulaCheck(structure, sample) {
-  if (!sample || structure === sample) return { differs: false, words: '' };
+  if (!sample || structure === sample) return { differs: false, extra: '', short: '' };
   const [mine, wanted] = [counts(structure), counts(sample)];
-  const parts = [...new Set([...Object.keys(wanted), ...Object.keys(mine)])]
-    .map((symbol) => ({ symbol, by: (mine[symbol] ?? 0) - (wanted[symbol] ?? 0) })).filter(({ by }) => by !== 0)
-    .map(({ symbol, by }) => `${Math.abs(by)} ${symbol} ${by > 0 ? 'too many' : 'short'}`);
-  return { differs: true, words: parts.length ? parts.join(', ') : `is ${structure}` };
+  /** @type {[string, number][]} */
+  const by = [...new Set([...Object.keys(wanted), ...Object.keys(mine)])].map((symbol) => [symbol, (mine[symbol] ?? 0) - (wanted[symbol] ?? 0)]);
+  return { differs: true, extra: written(by.filter(([, n]) => n > 0)), short: written(by.filter(([, n]) => n < 0).map(([symbol, n]) => [symbol, -n])) };
 }
