@@ -1,0 +1,108 @@
+"""Product states of composite spins, sorted by total Fz.
+
+Magnetically equivalent nuclei act as particles of total spin n/2, n/2 - 1, ... (Pople, Schneider and
+Bernstein, High-resolution Nuclear Magnetic Resonance, 1959, chapter 6; Corio, Structure of High-Resolution
+NMR Spectra, 1966). A level k of a spin F has m = k - F.
+"""
+
+from __future__ import annotations
+
+from array import array
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+from functools import cache
+from itertools import product
+from math import comb, sqrt
+
+from hoodside.numerics import zeros
+
+
+@cache
+def total_spins(count: int) -> tuple[tuple[int, int], ...]:
+    """(2 F, number of times it occurs) for ``count`` spins of 1/2."""
+    found = []
+    for lost in range(count // 2 + 1):
+        times = comb(count, lost) - (comb(count, lost - 1) if lost else 0)
+        found.append((count - 2 * lost, times))
+    return tuple(found)
+
+
+def combinations(counts: Sequence[int]) -> Iterator[tuple[tuple[int, ...], int]]:
+    """(2 F per group, weight) of every choice of total spins."""
+    for choice in product(*(total_spins(n) for n in counts)):
+        weight = 1
+        for _, times in choice:
+            weight *= times
+        yield tuple(twice for twice, _ in choice), weight
+
+
+@cache
+def lowering(twice: int) -> tuple[float, ...]:
+    """<k - 1 | F- | k> per level k of a spin F (``twice`` = 2 F); 0 for the lowest."""
+    spin = twice / 2
+    values = [0.0]
+    for k in range(1, twice + 1):
+        m = k - spin
+        values.append(sqrt(spin * (spin + 1) - m * (m - 1)))
+    return tuple(values)
+
+
+@dataclass(frozen=True, slots=True)
+class Blocks:
+    """States of some composite spins in blocks of equal total level (total Fz).
+
+    Attributes:
+        twice: 2 F per group.
+        strides: weight of each group's level in the code of a state.
+        codes: per block, the codes of its states.
+        places: code -> place within its block.
+    """
+
+    twice: tuple[int, ...]
+    strides: tuple[int, ...]
+    codes: tuple[list[int], ...]
+    places: dict[int, int]
+
+
+@cache
+def blocks(twice: tuple[int, ...]) -> Blocks:
+    """All states of composite spins of the given 2 F."""
+    strides, width = [], 1
+    for t in twice:
+        strides.append(width)
+        width *= t + 1
+    sums = [0]
+    for t in twice:
+        sums = [s + k for k in range(t + 1) for s in sums]
+    # With the last group varying slowest, the place in ``sums`` is the code itself.
+    codes: list[list[int]] = [[] for _ in range(sum(twice) + 1)]
+    places = {}
+    for code, level in enumerate(sums):
+        places[code] = len(codes[level])
+        codes[level].append(code)
+    return Blocks(twice, tuple(strides), tuple(codes), places)
+
+
+def largest_block(counts: Sequence[int]) -> int:
+    """Number of states in the largest block of groups of these sizes (their highest total spins)."""
+    ways = [1]
+    for n in counts:
+        longer = [0] * (len(ways) + n)
+        for at, value in enumerate(ways):
+            for k in range(n + 1):
+                longer[at + k] += value
+        ways = longer
+    return max(ways)
+
+
+def lowering_matrix(basis: Blocks, level: int, groups: Sequence[int]) -> array[float]:
+    """Sum of F- over some groups, from block ``level`` to the one below: rows below, columns here."""
+    here, below = basis.codes[level], basis.codes[level - 1]
+    matrix, width, places = zeros(len(here) * len(below)), len(here), basis.places
+    for g in groups:
+        stride, size, coefficients = basis.strides[g], basis.twice[g] + 1, lowering(basis.twice[g])
+        for column, code in enumerate(here):
+            k = code // stride % size
+            if k:
+                matrix[places[code - stride] * width + column] += coefficients[k]
+    return matrix
