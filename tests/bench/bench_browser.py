@@ -9,9 +9,10 @@ import tempfile
 import time
 from collections.abc import Iterator
 from contextlib import contextmanager
+from dataclasses import dataclass
 from pathlib import Path
 
-from playwright.sync_api import BrowserContext, Page, Playwright, sync_playwright
+from playwright.sync_api import Page, Playwright, sync_playwright
 
 from bench.tables import Figure, print_figures
 from browser.stand import (
@@ -51,15 +52,15 @@ TEN_READINGS = {
     "intended": 0,
 }
 
-#: Milliseconds from asking for the engine until it has described a structure.
+#: Milliseconds from asking for the engine until it has answered, and until it has described a structure.
 OUR_START = """async () => {
   const { createEngine } = await import('./worker/client.js');
   const began = performance.now();
   const engine = createEngine();
+  await engine.call('about');
+  const answered = performance.now() - began;
   await engine.call('describe', { structure: 'CC(C)c1ccc(C=O)cc1' });
-  const took = performance.now() - began;
-  engine.close();
-  return took;
+  return [answered, performance.now() - began];
 }"""
 
 #: Milliseconds from asking for an unchanged Pyodide until it has added one and one.
@@ -67,7 +68,7 @@ STOCK_START = """() => new Promise((resolve, reject) => {
   const began = performance.now();
   const worker = new Worker('./stock/stock-worker.mjs', { type: 'module' });
   worker.onerror = reject;
-  worker.onmessage = () => { resolve(performance.now() - began); worker.terminate(); };
+  worker.onmessage = () => resolve([performance.now() - began]);
 })"""
 
 TIMED_CHECKS = """async ([params, times]) => {
@@ -84,10 +85,32 @@ TIMED_CHECKS = """async ([params, times]) => {
 def run() -> None:
     """Install, go offline, measure, print."""
     with tempfile.TemporaryDirectory() as scratch, sync_playwright() as playwright:
-        dist = _dist_with_stock(Path(scratch))
-        with _offline_device(playwright, dist, Path(scratch)) as (device, address):
-            figures = [*_starts(device, address), *_checks(device, address)]
-    print_figures([*figures, _size()])
+        device = Device(playwright, Path(scratch) / "profile")
+        _install(device, _dist_with_stock(Path(scratch)))
+        print_figures([_size(), *_starts(device)])
+        print_figures(_checks(device))
+
+
+@dataclass
+class Device:
+    """A browser that keeps what it has between one opening and the next."""
+
+    playwright: Playwright
+    profile: Path
+    address: str = ""
+
+    @contextmanager
+    def opened(self, offline: bool = True) -> Iterator[Page]:
+        """The browser just opened, on a page at the app's address on which nothing has been started."""
+        context = self.playwright.chromium.launch_persistent_context(
+            self.profile, executable_path=build.chromium(), args=BROWSER_FLAGS
+        )
+        context.set_default_timeout(ANSWER_MS)
+        context.set_offline(offline)
+        page = context.new_page()
+        page.goto(f"{self.address}/{BARE_PAGE}")
+        yield page
+        context.close()
 
 
 def _dist_with_stock(scratch: Path) -> Path:
@@ -102,90 +125,67 @@ def _dist_with_stock(scratch: Path) -> Path:
     return dist
 
 
-@contextmanager
-def _offline_device(
-    playwright: Playwright, dist: Path, scratch: Path
-) -> Iterator[tuple[BrowserContext, str]]:
-    """A browser that has the app and has just been opened again, host stopped and network off."""
-
-    def launch() -> BrowserContext:
-        device = playwright.chromium.launch_persistent_context(
-            scratch / "profile", executable_path=build.chromium(), args=BROWSER_FLAGS
-        )
-        device.set_default_timeout(ANSWER_MS)
-        return device
-
+def _install(device: Device, dist: Path) -> None:
+    """Fetch everything onto the device, then stop the host."""
     host = start_host(dist)
-    device = launch()
-    page = device.new_page()
-    page.goto(host.address)
-    page.evaluate(WAIT_UNTIL_KEPT)
-    device.close()
+    device.address = host.address
+    with device.opened(offline=False) as page:
+        page.evaluate(WAIT_UNTIL_KEPT)
     host.stop()
-    device = launch()
-    device.set_offline(True)
-    yield device, host.address
-    device.close()
 
 
-def _fresh_page(device: BrowserContext, address: str) -> Page:
-    """A page at the app's address on which nothing has been started."""
-    page = device.new_page()
-    page.goto(f"{address}/{BARE_PAGE}")
-    return page
-
-
-def _starts(device: BrowserContext, address: str) -> list[Figure]:
-    """Both starts by turns, so that whatever else the machine does weighs on both."""
-    took: dict[str, list[float]] = {OUR_START: [], STOCK_START: []}
+def _starts(device: Device) -> list[Figure]:
+    """Both starts by turns, each in a browser just opened: what else the machine does weighs on both."""
+    taken: dict[str, list[list[float]]] = {OUR_START: [], STOCK_START: []}
     for _ in range(STARTS):
-        for script, times in took.items():
-            page = _fresh_page(device, address)
-            times.append(page.evaluate(script))
-            page.close()
-    ours, stock = (statistics.median(times) for times in took.values())
+        for script, times in taken.items():
+            with device.opened() as page:
+                times.append(page.evaluate(script))
+    answered, described = (list(times) for times in zip(*taken[OUR_START], strict=True))
+    stock = [time for (time,) in taken[STOCK_START]]
+    ratio = statistics.median(answered) / statistics.median(stock)
     return [
-        Figure("offline start until the engine answers", ours, "ms", note=_spread(took[OUR_START])),
-        Figure("stock Pyodide boot, same device", stock, "ms", note=_spread(took[STOCK_START])),
-        Figure("ratio", ours / stock, most=0.35),
-    ]
-
-
-def _checks(device: BrowserContext, address: str) -> list[Figure]:
-    page = _fresh_page(device, address)
-    page.evaluate(START_ENGINE)
-    first, *warm = page.evaluate(TIMED_CHECKS, [TEN_READINGS, CHECKS])
-    memory = call(page, "worker.memory", {})["result"]
-    page.close()
-    return [
-        Figure("check, 1 structure, 10 readings, first", first, "ms"),
-        Figure("the same, warm", statistics.median(warm), "ms", most=150, note=_spread(warm)),
-        Figure("the same on CPython, warm", _check_on_cpython(), "ms"),
+        _median("offline start until the engine answers", answered),
+        _median("the same until a structure is described", described),
+        _median("stock Pyodide boot, same device", stock),
         Figure(
-            "worker memory, peak of both wasm heaps",
-            sum(memory.values()) / MB,
-            "MB",
-            most=150,
-            note=str(memory),
+            "start, ratio to stock", ratio, most=0.35, note=f"best to best {min(answered) / min(stock):.2f}"
         ),
     ]
 
 
-def _check_on_cpython() -> float:
+def _median(name: str, times: list[float], most: float | None = None) -> Figure:
+    spread = f"{min(times):.3g} to {max(times):.3g}, n = {len(times)}"
+    return Figure(name, statistics.median(times), "ms", most=most, note=spread)
+
+
+def _checks(device: Device) -> list[Figure]:
+    with device.opened() as page:
+        page.evaluate(START_ENGINE)
+        call(page, "about", {})
+        first, *warm = page.evaluate(TIMED_CHECKS, [TEN_READINGS, CHECKS])
+        memory = call(page, "worker.memory", {})["result"]
+    held = sum(memory.values()) / MB
+    parts = ", ".join(f"{name} {size / MB:.0f}" for name, size in memory.items())
+    return [
+        Figure("check, 1 structure, 10 readings, first", first, "ms"),
+        _median("the same, warm", warm, most=150),
+        _median("the same on CPython, warm", _checks_on_cpython()),
+        Figure("worker memory, peak of both wasm heaps", held, "MB", most=150, note=parts),
+    ]
+
+
+def _checks_on_cpython() -> list[float]:
     params = json.dumps(TEN_READINGS)
     took = []
     for _ in range(CHECKS):
         began = time.perf_counter()
         handle("check", params)
         took.append(1000 * (time.perf_counter() - began))
-    return statistics.median(took[1:])
+    return took[1:]
 
 
 def _size() -> Figure:
     files = [path for path in build.DIST.rglob("*") if path.is_file() and path.suffix != ".gz"]
     sent = sum((zipped if (zipped := Path(f"{path}.gz")).exists() else path).stat().st_size for path in files)
     return Figure("bundle as transferred", sent / MB, "MB", most=14, note=f"{len(files)} files")
-
-
-def _spread(times: list[float]) -> str:
-    return f"{min(times):.0f} to {max(times):.0f}, n = {len(times)}"

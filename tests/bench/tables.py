@@ -5,6 +5,8 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 
+NAME_WIDTH = 40
+
 
 @dataclass(frozen=True, slots=True)
 class Figure:
@@ -36,7 +38,7 @@ class Figure:
 
 def print_figures(figures: Sequence[Figure]) -> None:
     """A table: figure, measured, unit, target, whether it was met."""
-    width = max(len(figure.name) for figure in figures)
+    width = max(NAME_WIDTH, *(len(figure.name) for figure in figures))
     print(f"  {'':{width}}  {'measured':>10} {'':8} {'target':>9}")
     for figure in figures:
         measured = f"{figure.value:10.4g} {figure.unit:8} {figure.target:>9} {figure.verdict:7}"

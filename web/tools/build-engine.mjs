@@ -14,9 +14,12 @@ const rdkitFolder = dirname(npm.resolve('@rdkit/rdkit'));
 
 /** @param {string} out @param {boolean} debug */
 async function compileArchives(out, debug) {
-  const python = await loadPyodide({ indexURL: `${pyodideFolder}/` });
+  // Byte code without columns is smaller and sooner read; the lines stay.
+  const env = debug ? {} : { PYTHONNODEBUGRANGES: '1' };
+  const python = await loadPyodide({ indexURL: `${pyodideFolder}/`, env });
   for (const [inside, outside] of [['/stock', pyodideFolder], ['/py', join(repo, 'py')], ['/tools', here],
     ['/out', out]]) python.mountNodeFS(inside, outside);
+  python.registerJsModule('hoodside_kernel', {});
   python.globals.set('debug', debug);
   python.runPython(`
 import sys
@@ -33,14 +36,17 @@ async function tryArchives(out) {
   const python = await loadPyodide({ indexURL: `${pyodideFolder}/`, stdLibURL: join(out, 'stdlib.zip') });
   python.registerJsModule('hoodside_kernel', {});
   python.FS.writeFile('/lib/hoodside.zip', await readFile(join(out, 'hoodside.zip')));
+  python.mountNodeFS('/tools', here);
   python.runPython(`
-import importlib, sys, zipimport
+import sys, zipfile
+from importlib import import_module
 sys.path.insert(0, "/lib/hoodside.zip")
-outside = {"hoodside.molecule.kernel_cpython", "hoodside.__main__"}
-for path in sorted(zipimport.zipimporter("/lib/hoodside.zip")._get_files()):
-    name = path.partition(".")[0].replace("/", ".").removesuffix(".__init__")
-    if path.endswith((".py", ".pyc")) and name not in outside:
-        importlib.import_module(name)
+import hoodside_start
+sys.path.append("/tools")
+sys.dont_write_bytecode = True
+from compile_bundle import module_names
+for name in module_names(n for n in zipfile.ZipFile("/lib/hoodside.zip").namelist() if n.startswith("hoodside/")):
+    import_module(name)
 `);
 }
 
@@ -57,12 +63,22 @@ async function writeRdkitModule(out) {
   await copyFile(join(rdkitFolder, 'RDKit_minimal.wasm'), join(out, 'RDKit_minimal.wasm'));
 }
 
-const out = resolve(process.argv[2]);
-await mkdir(out, { recursive: true });
-await compileArchives(out, process.argv.includes('--debug'));
-await tryArchives(out);
-await writeLockFile(out);
-await writeRdkitModule(out);
-for (const name of ['pyodide.mjs', 'pyodide.asm.mjs', 'pyodide.asm.wasm']) {
-  await copyFile(join(pyodideFolder, name), join(out, name));
+/** @param {string} out @param {boolean} debug */
+async function build(out, debug) {
+  await mkdir(out, { recursive: true });
+  await compileArchives(out, debug);
+  await tryArchives(out);
+  await writeLockFile(out);
+  await writeRdkitModule(out);
+  for (const name of ['pyodide.mjs', 'pyodide.asm.mjs', 'pyodide.asm.wasm']) {
+    await copyFile(join(pyodideFolder, name), join(out, name));
+  }
+}
+
+try {
+  await build(resolve(process.argv[2]), process.argv.includes('--debug'));
+} catch (error) {
+  // Without the stack: Node would show the failing line of Pyodide's glue, which is a megabyte long.
+  console.error(/** @type {Error} */ (error).message);
+  process.exit(1);
 }

@@ -5,19 +5,29 @@ twice. It must come from the very interpreter that will run it, hence inside Pyo
 """
 
 import csv
+import dataclasses
 import io
+import marshal
 import zipfile
+from collections.abc import Iterable
+from importlib import import_module
 from importlib._bootstrap_external import _code_to_hash_pyc
 from pathlib import Path
+from types import CodeType
+from typing import Any
 
 #: Parts of the standard library that an app without terminal, processes, sockets or tests never asks for.
 DROPPED = {
-    "_pyrepl", "bdb.py", "bz2.py", "cProfile.py", "cgi.py", "compression", "curses", "dbm", "doctest.py",
-    "ensurepip", "ftplib.py", "idlelib", "imaplib.py", "lib2to3", "lzma.py", "mailbox.py", "modulefinder.py",
-    "multiprocessing", "nntplib.py", "pdb.py", "pip", "poplib.py", "profile.py", "pstats.py", "pty.py",
-    "pyclbr.py", "pydoc.py", "pydoc_data", "smtplib.py", "socketserver.py", "sqlite3", "ssl.py",
-    "tabnanny.py", "test", "tkinter", "trace.py", "tty.py", "turtle.py", "turtledemo", "unittest", "venv", "wsgiref",
-    "xmlrpc", "zipapp.py",
+    "_pydatetime.py", "_pyio.py", "_pyrepl", "_sysconfigdata__emscripten_wasm32-emscripten.py", "bdb.py",
+    "bz2.py", "cProfile.py", "cgi.py", "cmd.py", "compression", "configparser.py", "ctypes", "curses",
+    "dbm", "doctest.py", "email", "ensurepip", "ftplib.py", "getpass.py", "http", "idlelib", "imaplib.py",
+    "lib2to3", "logging", "lzma.py", "mailbox.py", "mimetypes.py", "modulefinder.py", "multiprocessing",
+    "netrc.py", "nntplib.py", "optparse.py", "pdb.py", "pickletools.py", "pip", "plistlib.py", "poplib.py",
+    "profile.py", "pstats.py", "pty.py", "pyclbr.py", "pydoc.py", "pydoc_data", "rlcompleter.py",
+    "sched.py", "shelve.py", "smtplib.py", "socketserver.py", "sqlite3", "ssl.py", "symtable.py",
+    "tabnanny.py", "tarfile.py", "test", "tkinter", "tomllib", "trace.py", "tty.py", "turtle.py",
+    "turtledemo", "unittest", "urllib", "uuid.py", "venv", "wave.py", "webbrowser.py", "wsgiref", "xml",
+    "xmlrpc", "zipapp.py", "zoneinfo",
 }  # fmt: skip
 
 #: Modules that take the place of the library's own; see the note there.
@@ -44,8 +54,32 @@ def standard_library(source: str, target: str, debug: bool) -> None:
 def engine(source: str, target: str, debug: bool) -> None:
     """Pack ``hoodside``: modules as byte code, facts tables in their compact form."""
     root = Path(source)
-    names = [path for path in sorted(root.rglob("*")) if path.suffix in {".py", ".csv"}]
-    _write(target, {str(path.relative_to(root.parent)): path.read_bytes() for path in names}, debug)
+    paths = [path for path in sorted(root.rglob("*")) if path.suffix in {".py", ".csv"}]
+    files = {str(path.relative_to(root.parent)): path.read_bytes() for path in paths}
+    files["hoodside_start.py"] = Path(__file__).with_name("hoodside_start.py").read_bytes()
+    files["ready_code.marshal"] = _ready_code(name for name in files if name.startswith("hoodside/"))
+    _write(target, files, debug)
+
+
+def module_names(files: Iterable[str]) -> list[str]:
+    """Names of the engine's modules that run in the browser."""
+    paths = (name.partition(".")[0] for name in files if name.endswith((".py", ".pyc")))
+    names = {path.replace("/", ".").removesuffix(".__init__") for path in paths}
+    return sorted(names - {"hoodside.molecule.kernel_cpython", "hoodside.__main__"})
+
+
+def _ready_code(files: Iterable[str]) -> bytes:
+    """What ``@dataclass`` compiles when the engine is imported, compiled: text -> code."""
+    codes: dict[str, CodeType] = {}
+
+    def run_and_keep(text: str, global_names: dict[str, Any], local_names: dict[str, Any]) -> None:
+        codes[text] = compile(text, "<dataclass>", "exec", dont_inherit=True)
+        exec(codes[text], global_names, local_names)
+
+    dataclasses.exec = run_and_keep  # type: ignore[attr-defined]
+    for name in module_names(files):
+        import_module(name)
+    return marshal.dumps(codes)
 
 
 def _is_kept(name: str) -> bool:
@@ -65,7 +99,9 @@ def _write(target: str, sources: dict[str, bytes], debug: bool) -> None:
 
 def _packed(name: str, data: bytes) -> tuple[str, bytes]:
     if name.endswith(".py"):
-        code = compile(data, name, "exec", dont_inherit=True, optimize=2)
+        # Without a docstring, @dataclass works one out from the signature: slow, so the engine keeps its own.
+        level = 1 if name.startswith("hoodside/") else 2
+        code = compile(data, name, "exec", dont_inherit=True, optimize=level)
         return name + "c", bytes(_code_to_hash_pyc(code, _UNCHECKED_HASH, checked=False))
     if name.endswith(".csv"):
         return name.removesuffix(".csv") + ".table", _compact_table(data)

@@ -42,7 +42,7 @@ async function wake() {
   python.FS.writeFile(ENGINE_ZIP, archive);
   python.registerJsModule('hoodside_kernel', makeBridge(molecules));
   python.runPython(`import sys; sys.path.insert(0, "${ENGINE_ZIP}")`);
-  const { handle } = python.pyimport('hoodside.engine');
+  const { handle } = python.pyimport('hoodside_start');
   reached('engine');
   return { handle };
 }
