@@ -18,6 +18,8 @@ from hoodside.predict.formula import (
 
 _WIDTH, _HEIGHT = 300, 200
 _LEAST_SIDE, _MOST_SIDE = 16, 4000
+#: Longest a bond is drawn, pixels: one or two atoms do not fill a card.
+_LONGEST_BOND = 60
 
 
 def structure_of(value: object, field: str = "structure") -> Structure:
@@ -82,6 +84,7 @@ def draw(
         integer(height, "height", _LEAST_SIDE, _MOST_SIDE),
         integers(atoms, "atoms"),
         integers(bonds, "bonds"),
+        longest_bond=_LONGEST_BOND,
     )
     return {"svg": found.svg, "coords": [list(place) for place in found.coords]}
 

@@ -5,7 +5,7 @@ import { address } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { Corners } from './corners.js';
 import { FormulaLine } from './formula-line.js';
-import { begin, beginAnew, growingSince, growthOf, keepDrawing, recall, refusal, stepOf, frameKey, take, touch } from './growth.js';
+import { begin, beginAnew, growingSince, growthOf, keepDrawing, recall, refusal, sameFrame, stepOf, take, touch } from './growth.js';
 import { Groups } from './groups.js';
 import { Joining } from './joining.js';
 import { placeName } from './naming.js';
@@ -30,12 +30,11 @@ import { Trouble } from '../../components/parts.js';
 function useDrawing(key, size, formula) {
   const step = stepOf(key);
   const frame = size && { ...size, formula };
-  const asked = frame ? frameKey(frame) : '';
-  const known = step.asked === asked ? step.drawn : null;
-  const question = step.source && frame && !known ? { structure: step.source, ...frame } : null;
-  const { value, fault } = useAnswer('canvas', question);
-  useEffect(() => { if (value && frame) keepDrawing(key, /** @type {Canvas} */ (value), frame); }, [value, asked]);
-  return { drawn: known ?? step.drawn, frame, fault };
+  const known = sameFrame(step.frame, frame);
+  const { value, fault, busy } = useAnswer('canvas', step.source && frame && !known ? { structure: step.source, ...frame } : null);
+  // While an answer is awaited, `value` is still that to the question before.
+  useEffect(() => { if (value && frame && !busy) keepDrawing(key, /** @type {Canvas} */ (value), frame); }, [value, busy, known]);
+  return { drawn: step.drawn, frame, fault };
 }
 
 /** A structure grown by touch. @param {{ doc: CaseDoc, name: string, purpose: Purpose }} props `name` keeps growths of different purposes apart */
@@ -72,7 +71,7 @@ export function GrowSheet({ doc, name, purpose }) {
     <${Groups} options=${options} busy=${busy} onTake=${onTake} /><//>`;
   return html`<${Sheet} title=${purpose.title} back=${address(...purpose.back)} class="grow-sheet" action=${anew} foot=${foot} key="drawing">
     <${FormulaLine} drawn=${drawn} />
-    <${Stage} drawn=${drawn} touched=${touched} choice=${choice} busy=${busy} onSize=${setSize} onTouch=${onTouch}
+    <${Stage} drawn=${drawn} size=${stepOf(key).frame} touched=${touched} choice=${choice} busy=${busy} onSize=${setSize} onTouch=${onTouch}
       label=${joining ? 'Touch the atom to join to' : 'Touch an atom or a bond, or go through them with the arrow keys'} />
     <${Trouble} fault=${fault ?? refusal.value} />
     <${Strip} drawn=${drawn} touched=${touched} name=${drawn && touched ? placeName(drawn, touched) : null} onTouch=${(/** @type {Place} */ place) => touch(key, place)} />

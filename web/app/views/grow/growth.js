@@ -18,7 +18,7 @@ export const refusal = signal(/** @type {import('../../types').Fault | null} */ 
 export const growingSince = signal(0);
 
 /** @returns {Step} */
-const choosing = () => ({ source: '', touched: null, drawn: null, asked: '' });
+const choosing = () => ({ source: '', touched: null, drawn: null, frame: null });
 
 /** Answers that come after something newer has been done are dropped by comparing with this. */
 let newest = 0;
@@ -29,8 +29,8 @@ export const growthOf = (key) => growths.value[key] ?? { steps: [choosing()], at
 /** @param {string} key */
 export const stepOf = (key) => /** @type {Step} */ (growthOf(key).steps[growthOf(key).at]);
 
-/** @param {Frame} frame */
-export const frameKey = ({ width, height, formula }) => `${width} ${height} ${formula}`;
+/** @param {Frame | null} a @param {Frame | null} b */
+export const sameFrame = (a, b) => a?.width === b?.width && a?.height === b?.height && a?.formula === b?.formula;
 
 /** @param {string} key @param {Growth} growth */
 function put(key, growth) {
@@ -90,8 +90,8 @@ export function touch(key, touched) {
 /** Keep a drawing that was asked for; one of an older state is dropped. @param {string} key @param {Canvas} drawn @param {Frame} frame */
 export function keepDrawing(key, drawn, frame) {
   const step = stepOf(key);
-  if (drawn.source !== step.source || step.asked === frameKey(frame)) return;
-  note(key, { drawn, asked: frameKey(frame), touched: step.touched ?? afterBeginning(drawn) });
+  if (!step.source || sameFrame(step.frame, frame)) return;
+  note(key, { drawn, frame, touched: step.touched ?? afterBeginning(drawn) });
 }
 
 /** Do one step at the touched place. @param {string} key @param {Option} option @param {Frame} frame @param {number} [second] atom */
@@ -105,7 +105,7 @@ export async function take(key, option, frame, second) {
   try {
     const drawn = await ask('edit', { structure: before.source, step: option.step, arguments: given, ...frame });
     if (turn !== newest) return;
-    push(key, { source: drawn.source, drawn, asked: frameKey(frame), touched: afterStep(option, before, drawn) });
+    push(key, { source: drawn.source, drawn, frame, touched: afterStep(option, before, drawn) });
   } catch (error) {
     if (turn === newest) refusal.value = asFault(error);
   }

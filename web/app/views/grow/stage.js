@@ -12,6 +12,13 @@ const SMALL_RING = 15;
 /** A second touch this near the first, CSS pixels, means the place behind the first one. */
 const SAME_SPOT = 18;
 
+/** Where an event is in pixels of a drawing that fills `box` as far as its shape allows.
+ * @param {MouseEvent} event @param {DOMRect} box @param {Size} size @returns {[number, number]} */
+function inDrawing(event, box, { width, height }) {
+  const scale = Math.min(box.width / width, box.height / height);
+  return [(event.clientX - box.left - box.width / 2) / scale + width / 2, (event.clientY - box.top - box.height / 2) / scale + height / 2];
+}
+
 /** The size of an element in whole pixels, followed as it changes. @param {{ current: HTMLElement | null }} ref @returns {Size | null} */
 export function useSize(ref) {
   const [size, setSize] = useState(/** @type {Size | null} */ (null));
@@ -29,18 +36,17 @@ export function useSize(ref) {
 }
 
 /** The drawing, big; a touch means the nearest atom or bond, a second one at the same spot the next nearest.
- * @param {{ drawn: Canvas | null, touched: Place | null, choice: Place[] | null, label: string, busy: boolean,
- *   onSize: (size: Size) => void, onTouch: (place: Place) => void }} props `choice` limits what can be touched */
-export function Stage({ drawn, touched, choice, label, busy, onSize, onTouch }) {
+ * @param {{ drawn: Canvas | null, size: Size | null, touched: Place | null, choice: Place[] | null, label: string, busy: boolean,
+ *   onSize: (size: Size) => void, onTouch: (place: Place) => void }} props `size`: for which it was drawn; `choice` limits what can be touched */
+export function Stage({ drawn, size, touched, choice, label, busy, onSize, onTouch }) {
   const holder = useRef(/** @type {HTMLElement | null} */ (null));
   const last = useRef({ x: -99, y: -99 });
-  const size = useSize(holder);
-  useLayoutEffect(() => { if (size) onSize(size); }, [size]);
+  const place = useSize(holder);
+  useLayoutEffect(() => { if (place) onSize(place); }, [place]);
   const all = drawn ? choice ?? places(drawn) : [];
   const touch = (/** @type {MouseEvent} */ event) => {
-    const box = holder.current?.getBoundingClientRect();
-    if (!drawn || !box) return;
-    const [x, y] = [event.clientX - box.left, event.clientY - box.top];
+    if (!drawn || !size || !holder.current) return;
+    const [x, y] = inDrawing(event, holder.current.getBoundingClientRect(), size);
     const found = near(drawn, x, y, all);
     const again = Math.hypot(x - last.current.x, y - last.current.y) < SAME_SPOT && found.findIndex((place) => samePlace(place, touched));
     last.current = { x, y };

@@ -15,8 +15,8 @@ export interface Option {
 export interface Place { kind: 'atom' | 'bond'; at: number }
 export interface Size { width: number; height: number }
 /** One state of the drawing. `source` is "" where a structure to begin from is still to be chosen;
- * `drawn` is the drawing as far as it is known, for the question `asked`. */
-export interface Step { source: string; touched: Place | null; drawn: Canvas | null; asked: string }
+ * `drawn` is the drawing as far as it is known, made for `frame`. */
+export interface Step { source: string; touched: Place | null; drawn: Canvas | null; frame: Frame | null }
 export interface Growth { steps: Step[]; at: number }
 /** The question behind a drawing: size of the stage and formula of the sample. */
 export interface Frame extends Size { formula: string }
