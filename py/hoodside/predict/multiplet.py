@@ -37,6 +37,7 @@ class Splitting:
 
     hz: float
     count: int
+    sd: float = 1.0  # Hz, standard deviation of the error expected
 
 
 def apply_multiplets(
@@ -92,11 +93,18 @@ def readable_patterns(
 
     Readings differ in the smallest splitting seen and in how near two J must be to be taken as one.
     """
+    return frozenset(map(name_of, readings_of(members, groups, couplings)))
+
+
+def readings_of(
+    members: Sequence[int], groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]
+) -> frozenset[tuple[Splitting, ...]]:
+    """The splittings behind every reading of ``readable_patterns``, largest J first."""
     parts = sorted(_splittings(set(members), groups, couplings), key=lambda s: s.hz)
     least, joined = COARSEST
     cuts = [0.0, *[s.hz + 1e-9 for s in parts if s.hz <= least]]
     gaps = [0.0, *[b.hz - a.hz + 1e-9 for a, b in pairwise(parts) if b.hz - a.hz <= joined]]
-    return frozenset(name_of(merged([s for s in parts if s.hz >= cut], gap)) for cut in cuts for gap in gaps)
+    return frozenset(merged([s for s in parts if s.hz >= cut], gap) for cut in cuts for gap in gaps)
 
 
 def _resolved(
@@ -122,10 +130,10 @@ def _splittings(
 def _of_block(block: list[Coupling], n: int) -> list[Splitting]:
     """Couplings to one partner group. Where a nucleus does not see whole numbers, they average."""
     if all(c.pairs % n == 0 for c in block) and len({c.label for c in block}) == len(block):
-        return [Splitting(c.hz, c.pairs // n) for c in block]
+        return [Splitting(c.hz, c.pairs // n, c.sd) for c in block]
     total = sum(c.pairs for c in block)
     mean = sum(c.hz * c.sign * c.pairs for c in block) / total
-    return [Splitting(abs(mean), round(total / n))]
+    return [Splitting(abs(mean), round(total / n), max(c.sd for c in block))]
 
 
 def merged(parts: Sequence[Splitting], within: float = MERGED) -> tuple[Splitting, ...]:
@@ -136,7 +144,7 @@ def merged(parts: Sequence[Splitting], within: float = MERGED) -> tuple[Splittin
             groups[-1].append(part)
         else:
             groups.append([part])
-    return tuple(Splitting(_mean(g), sum(s.count for s in g)) for g in groups)
+    return tuple(Splitting(_mean(g), sum(s.count for s in g), max(s.sd for s in g)) for g in groups)
 
 
 def _mean(parts: list[Splitting]) -> float:
