@@ -65,7 +65,7 @@ def module_names(files: Iterable[str]) -> list[str]:
     """Names of the engine's modules that run in the browser."""
     paths = (name.partition(".")[0] for name in files if name.endswith((".py", ".pyc")))
     names = {path.replace("/", ".").removesuffix(".__init__") for path in paths}
-    return sorted(names - {"hoodside.molecule.kernel_cpython", "hoodside.__main__"})
+    return sorted(name for name in names - {"hoodside.__main__"} if not name.endswith("_cpython"))
 
 
 def _ready_code(files: Iterable[str]) -> bytes:
