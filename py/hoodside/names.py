@@ -50,6 +50,13 @@ def find_names(query: str, limit: int = 20) -> list[NamedStructure]:
     return [_shown(entry, at) for _, at, entry in ranked[:limit]]
 
 
+def exact_name(text: str) -> NamedStructure | None:
+    """The structure that bears exactly this name (capitals, hyphens and spaces aside), or None."""
+    best = find_names(text, 1)
+    names = [n for entry in _entries() if best and entry.named.smiles == best[0].smiles for n in entry.keys]
+    return best[0] if best and _key(text) in names else None
+
+
 def _fit(entry: _Entry, wanted: str) -> tuple[int, int]:
     """How well the best of the names fits, and which one it is."""
     if _key(entry.named.formula) == wanted:

@@ -6,6 +6,7 @@ from collections.abc import Iterable, Iterator
 
 from hoodside.errors import InvalidInputError, StructureError
 from hoodside.molecule import Structure, read_structure
+from hoodside.names import exact_name
 from hoodside.rivals.outcomes.apply import Step, best_first, everywhere
 from hoodside.rivals.outcomes.model import Outcome, Outcomes, Role
 from hoodside.rivals.outcomes.reagents import Reagents, read_reagents, stages
@@ -23,6 +24,8 @@ _ROLES: dict[str, Role] = {
 _NEED_BONUS = 3
 _PARTNER_BONUS = 15
 _MOST = 24
+#: Kinds of named compounds that stand by rather than react.
+_NO_PARTNERS = ("solvent",)
 
 
 def find_outcomes(
@@ -42,6 +45,7 @@ def find_outcomes(
         raise InvalidInputError(
             "No reagent was given.", hint="Name what was added, or the kind of reaction.", field="with"
         )
+    partner = partner or _named_partner(reagents)
     read = _in_turn(reagents, partner)
     now, found = settled(start), []
     for place, one in enumerate(read):
@@ -55,6 +59,15 @@ def find_outcomes(
         tuple(name for one in read for name in one.names),
         tuple(piece for one in read for piece in one.unknown),
     )
+
+
+def _named_partner(reagents: str) -> Structure | None:
+    """An organic partner named among the reagents ("2-mercaptoethanol"), where the reagent table has none."""
+    for piece in read_reagents(" ".join(stages(reagents))).unknown:
+        named = exact_name(piece)
+        if named is not None and named.kind not in _NO_PARTNERS:
+            return read_structure(named.smiles)
+    return None
 
 
 def _in_turn(reagents: str, partner: Structure | None) -> list[Reagents]:
