@@ -111,4 +111,8 @@ def _packed(name: str, data: bytes) -> tuple[str, bytes]:
 def _compact_table(data: bytes) -> bytes:
     from hoodside.facts.table import pack_rows
 
-    return pack_rows(tuple(csv.DictReader(io.StringIO(data.decode("utf-8")))))
+    seen: dict[str, str] = {}  # marshal writes one object once, however often it stands in the table
+    rows = csv.DictReader(io.StringIO(data.decode("utf-8")))
+    return pack_rows(
+        tuple({column: seen.setdefault(cell, cell) for column, cell in row.items()} for row in rows)
+    )
