@@ -2,13 +2,14 @@ import { html } from 'htm/preact';
 import { useState } from 'preact/hooks';
 import { Formula } from '../../components/chem.js';
 import { Icon } from '../../components/icon.js';
+import { wide } from '../../state/screen.js';
 
 /** @typedef {import('./types').Option} Option */
 /** @typedef {import('./types').Place} Place */
 /** @typedef {(option: Option) => void} Take */
 
-/** Groups shown before "more". */
-const AT_ONCE = 8;
+/** Groups shown before "more", by the room there is. */
+const AT_ONCE = { narrow: 8, wide: 20 };
 
 /** Tabs of either kind of place: name, and the steps offered under it. @type {Record<Place['kind'], [string, string[]][]>} */
 const TABS = {
@@ -18,9 +19,13 @@ const TABS = {
 /** Steps that stand on a button of their own. @type {Record<string, string>} */
 const DIRECT = { join: 'Join', remove: 'Remove', cut: 'Cut' };
 
+/** Pieces of a condensed formula between which a line may break: "CH2", "CH", "(CH3)2". */
+const PIECES = /\([^)]*\)\d*|[^(A-Z]*[A-Z][a-z]?[^(A-Z]*|.+/g;
+
 /** A chip's words: groups and elements as formulas, the rest as said. @param {{ option: Option }} props */
 export function OptionText({ option: { label, step } }) {
-  return step === 'attach' || step === 'insert' ? html`<${Formula} text=${label} />` : label;
+  if (step !== 'attach' && step !== 'insert') return label;
+  return html`${label.match(PIECES)?.map((piece, i) => html`<span class="grow-piece" key=${i}><${Formula} text=${piece} /></span>`)}`;
 }
 
 /** @param {{ option: Option, onTake: Take, busy: boolean }} props */
@@ -50,9 +55,10 @@ export function Offers({ place, options, busy, onTake, onMore }) {
 /** @param {{ held: Option[], busy: boolean, onTake: Take, onMore: () => void }} props */
 function Held({ held, busy, onTake, onMore }) {
   const groups = held.filter(({ step }) => step === 'attach');
+  const room = wide.value ? AT_ONCE.wide : AT_ONCE.narrow;
   const rest = held.filter(({ step }) => step !== 'attach');
   const chip = (/** @type {Option} */ option) => html`<${OptionChip} key=${option.step + option.label} option=${option} busy=${busy} onTake=${onTake} />`;
   return html`${rest.length > 0 && html`<div class="chips ${rest.length > 6 ? 'chips-4' : 'chips-3'}">${rest.map(chip)}</div>`}
-    ${groups.length > 0 && html`<div class="chips chips-3">${groups.slice(0, AT_ONCE).map(chip)}
-      ${groups.length > AT_ONCE && html`<button type="button" class="chip grow-chip" onClick=${onMore}>more</button>`}</div>`}`;
+    ${groups.length > 0 && html`<div class="chips chips-3">${groups.slice(0, room).map(chip)}
+      ${groups.length > room && html`<button type="button" class="chip grow-chip" onClick=${onMore}>more</button>`}</div>`}`;
 }

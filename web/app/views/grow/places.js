@@ -62,13 +62,16 @@ export const afterBeginning = ({ atoms }) => ({ kind: 'atom', at: Math.max(0, at
  * @param {Option} option @param {Canvas} before @param {Canvas} after @returns {Place | null} */
 export function afterStep({ step, arguments: given }, before, after) {
   const added = before.atoms.length;
-  if (step === 'attach') return atomPlace(after, after.atoms[added]?.symbol === 'C' ? [added, given.atom] : [given.atom, added]);
+  if (step === 'attach') return atomPlace(after, after.atoms[added]?.symbol === 'C' ? [added, given.atom, ...from(added, after)] : [given.atom, ...from(added, after)]);
   if (step === 'insert') return atomPlace(after, [added]);
   if (step === 'join') return atomPlace(after, [given.a]);
   if (step === 'remove') return afterRemoving(given.atom, before, after);
   if ('atom' in given) return { kind: 'atom', at: given.atom };
   return step === 'cut' ? null : sameBond(before.bonds[given.bond], after);
 }
+
+/** @param {number} first @param {Canvas} drawn */
+const from = (first, { atoms }) => atoms.map((_, at) => at).slice(first);
 
 /** The first of the atoms that has a hydrogen left, else the first of all.
  * @param {Canvas} drawn @param {number[]} choice @returns {Place} */
