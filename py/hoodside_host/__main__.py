@@ -28,7 +28,7 @@ def main(arguments: list[str] | None = None) -> int:
     server = Server(("0.0.0.0" if options.lan else "127.0.0.1", options.port), create_app(options.dist))
     try:
         server.prepare()
-    except OSError as err:
+    except (OSError, OverflowError) as err:
         return _refuse(f"Port {options.port} cannot be used ({err}). Name another with --port.")
     _greet(options, port=server.bind_addr[1])
     return _serve(server)
