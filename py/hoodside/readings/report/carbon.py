@@ -44,7 +44,10 @@ def read_carbons(plain: str, start: int, end: int, into: Gathered) -> None:
         if gap:
             at = gap.end()
             continue
-        stop = _read_line(body, at, end, into) if prose <= _MOST_PROSE else at
+        if prose > _MOST_PROSE:  # running text has begun
+            into.missed(at, end, "It is no 13C line.")
+            return
+        stop = _read_line(body, at, end, into)
         if stop > at:
             at, prose = stop, 0
             continue

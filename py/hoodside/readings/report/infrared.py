@@ -39,7 +39,10 @@ def read_infrared(plain: str, start: int, end: int, into: Gathered) -> None:
         if gap:
             at = gap.end()
             continue
-        stop = _read_band(plain, at, end, into) if prose <= _MOST_PROSE else at
+        if prose > _MOST_PROSE:  # running text has begun
+            into.missed(at, end, "It is no IR band.")
+            return
+        stop = _read_band(plain, at, end, into)
         if stop > at:
             at, prose = stop, 0
             continue

@@ -46,7 +46,10 @@ def read_mass(plain: str, start: int, end: int, into: Gathered, head: str = "") 
         if gap:
             at = gap.end()
             continue
-        stop = _read_peak(plain, at, end, into, soft) if prose <= _MOST_PROSE else at
+        if prose > _MOST_PROSE:  # running text has begun
+            into.missed(at, end, "It is no mass peak.")
+            return
+        stop = _read_peak(plain, at, end, into, soft)
         if stop > at:
             at, prose = stop, 0
             continue

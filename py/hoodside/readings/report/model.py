@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterator
 from dataclasses import dataclass, field
 from typing import TypeVar
 
@@ -68,7 +69,7 @@ class Gathered:
     ir_medium: str = ""
     warnings: list[str] = field(default_factory=list)
     pieces: list[Piece] = field(default_factory=list)
-    unread: list[Unread] = field(default_factory=list)
+    lost: list[tuple[int, int, str]] = field(default_factory=list)
 
     def took(self, start: int, end: int, means: str) -> None:
         """Note what a stretch was taken for."""
@@ -78,14 +79,10 @@ class Gathered:
 
     def missed(self, start: int, end: int, why: str) -> None:
         """Note a stretch that could not be read; neighbours with the same reason become one."""
-        shown = self._trimmed(start, end)
-        if shown is None:
-            return
-        start, end = shown
-        last = self.unread[-1] if self.unread else None
-        if last and last.why == why and start >= last.end and not self.text[last.end : start].strip(" \n,;."):
-            start = self.unread.pop().start
-        self.unread.append(Unread(self.text[start:end], start, end, why))
+        last = self.lost[-1] if self.lost else None
+        if last and last[2] == why and start >= last[1] and not self.text[last[1] : start].strip(" \n,;."):
+            start = self.lost.pop()[0]
+        self.lost.append((start, end, why))
 
     def _trimmed(self, start: int, end: int) -> tuple[int, int] | None:
         while start < end and self.text[start] in _EDGE:
@@ -117,13 +114,18 @@ class Gathered:
             analysis=self.analysis,
             warnings=tuple(self.warnings),
         )
-        unread = sorted(self.unread, key=lambda u: u.start)
-        if len(unread) > MOST_UNREAD:
-            rest = unread[MOST_UNREAD:]
-            start, end = rest[0].start, rest[-1].end
+        pieces = sorted(self.pieces, key=lambda piece: piece.start)
+        return ParsedReport(readings, tuple(self._unread()), tuple(pieces))
+
+    def _unread(self) -> Iterator[Unread]:
+        lost = sorted(self.lost)
+        if len(lost) > MOST_UNREAD:
             why = f"There are more than {MOST_UNREAD} stretches that could not be read."
-            unread = [*unread[:MOST_UNREAD], Unread(self.text[start:end], start, end, why)]
-        return ParsedReport(readings, tuple(unread), tuple(sorted(self.pieces, key=lambda p: p.start)))
+            lost = [*lost[:MOST_UNREAD], (lost[MOST_UNREAD][0], max(end for _, end, _ in lost), why)]
+        for start, end, why in lost:
+            shown = self._trimmed(start, end)
+            if shown:
+                yield Unread(self.text[shown[0] : shown[1]], *shown, why)
 
 
 #: What may stand at the edge of a stretch without belonging to it.

@@ -61,20 +61,20 @@ def with_decimal_points(plain: str) -> str:
 
 
 _OPEN, _CLOSE = "([{", ")]}"
-#: A bracket longer than this was not closed.
-_LONGEST_GROUP = 600
+_BRACKETS = re.compile(r"[()\[\]{}]")
+#: A bracket longer, or nested deeper, than this was not closed.
+_LONGEST_GROUP, _DEEPEST = 600, 12
 
 
 def group_end(plain: str, start: int, end: int) -> int:
     """Offset just behind the bracket that closes the one at ``start``; -1 when it is not closed."""
     depth = 0
-    for at in range(start, min(end, start + _LONGEST_GROUP)):
-        if plain[at] in _OPEN:
-            depth += 1
-        elif plain[at] in _CLOSE:
-            depth -= 1
-            if depth == 0:
-                return at + 1
+    for found in _BRACKETS.finditer(plain, start, min(end, start + _LONGEST_GROUP)):
+        depth += 1 if found[0] in _OPEN else -1
+        if depth == 0:
+            return found.end()
+        if depth > _DEEPEST:
+            return -1
     return -1
 
 

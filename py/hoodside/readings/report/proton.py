@@ -32,6 +32,7 @@ _UNIT = re.compile(
 _NEXT_SIGNAL = re.compile(rf"[)\s]*[,;]\s*{_VALUE}(?:\s?-\s?{_VALUE})?\s*\(")
 _FIRST_WORD = re.compile(r"\s*[,;]?\s*([A-Za-z]{1,12})\b")
 _NUMBER_LIKE = re.compile(r"[\w.]+")
+_NUMBER_STARTS = re.compile(r"(?<![\w.-])-?\d")
 _OPENING = re.compile(r"\s{0,3}\(")
 _MOST_PROSE = 3
 
@@ -179,6 +180,9 @@ class _Reader:
     def _word(self, at: int) -> int:
         word = _WORD.match(self.plain, at, self.end)
         stop = max(word.end() if word else at, self._past_number(at), at + 1)
+        if self.ended:
+            number = _NUMBER_STARTS.search(self.plain, stop, self.end)
+            stop = number.start() if number else self.end
         self.prose += 1
         if self.prose > _MOST_PROSE:
             self.ended = True

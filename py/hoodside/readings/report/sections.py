@@ -16,6 +16,10 @@ PROTON, CARBON, INFRARED, MASS, HIGH_RES, ANALYSIS, ASIDE = (
 )
 
 
+#: No paste holds more lists; what follows belongs to the last.
+MOST_SECTIONS = 300
+
+
 @dataclass(frozen=True, slots=True)
 class Section:
     """One list: its head runs from ``start`` to ``body``, its content from there to ``end``."""
@@ -113,6 +117,8 @@ def find_sections(plain: str) -> list[Section]:
         if not _may_stand(plain, found.start(), kind) or (heads and _within(heads[-1][0], kind, head)):
             continue
         heads.append((kind, head, found.start(), found.end()))
+        if len(heads) == MOST_SECTIONS:
+            break
     starts = [start for _, _, start, _ in heads[1:]]
     return [Section(*head, end) for head, end in zip(heads, [*starts, len(plain)], strict=False)]
 
