@@ -15,6 +15,11 @@ from hoodside.molecule.symmetry import hydrogen_sets
 from hoodside.predict.atom_maps import atom_maps
 from hoodside.predict.proton.predict import Site, sites
 
+#: Column of facts/impurities.csv -> solvent.
+SOLVENTS = {
+    "CDCl3": "CDCl3", "acetone_d6": "acetone-d6", "DMSO_d6": "DMSO-d6", "C6D6": "C6D6", "CD3CN": "CD3CN",
+    "CD3OD": "CD3OD", "D2O": "D2O", "CD2Cl2": "CD2Cl2", "THF_d8": "THF-d8", "toluene_d8": "toluene-d8",
+}  # fmt: skip
 CASES = Path(__file__).resolve().parents[1] / "cases"
 
 
@@ -63,8 +68,8 @@ class Row:
 
 
 def load_compounds() -> list[Compound]:
-    """Compounds of published.json and products of reactions.json."""
-    found = []
+    """Compounds of published.json, products of reactions.json, and those of the facts tables."""
+    found = recalled_compounds() + solvent_compounds()
     for name, prefix in (("published", ""), ("reactions", "product_")):
         for case in json.loads((CASES / f"{name}.json").read_text("utf-8")):
             if case.get(f"{prefix}h1"):
@@ -72,6 +77,33 @@ def load_compounds() -> list[Compound]:
                 found.append(
                     compound(case["id"], case[f"{prefix}smiles"], solvent, case[f"{prefix}h1"], name)
                 )
+    return found
+
+
+def recalled_compounds() -> list[Compound]:
+    """Simple compounds of facts/proton_spectra.csv."""
+    found = []
+    for row in load_table("proton_spectra"):
+        printed = [
+            dict(zip(("ppm", "n"), map(float, s.split("x")), strict=True)) for s in row["signals"].split()
+        ]
+        found.append(compound(row["name"], row["smiles"], row["solvent"], printed, "recalled"))
+    return found
+
+
+def solvent_compounds() -> list[Compound]:
+    """Common impurities in ten solvents; every third compound is kept back for the reference tests."""
+    grouped: dict[tuple[str, str], list[dict[str, str]]] = {}
+    for row in load_table("impurities"):
+        if row["nucleus"] == "1H" and row["n_H"]:
+            grouped.setdefault((row["compound"], row["smiles"]), []).append(row)
+    found = []
+    for index, ((name, smiles), rows) in enumerate(sorted(grouped.items())):
+        if index % 3:
+            for column, solvent in SOLVENTS.items():
+                printed = [{"ppm": float(r[column]), "n": float(r["n_H"])} for r in rows if r[column]]
+                if printed and "[H][H]" not in smiles:
+                    found.append(compound(f"{name} in {solvent}", smiles, solvent, printed, "impurities"))
     return found
 
 

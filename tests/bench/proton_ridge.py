@@ -7,13 +7,14 @@ from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 
 import numpy as np
-from scipy.linalg import cho_factor, cho_solve
 from scipy.sparse import csr_matrix
+from scipy.sparse.linalg import LinearOperator, cg
 
 from hoodside.predict.features import family
 
 #: Degrees of freedom of the Student t that stands for misassigned and misprinted values.
 T_DOF = 4.0
+RELATIVE_TOLERANCE, MOST_STEPS = 1e-7, 3000
 
 
 @dataclass
@@ -55,14 +56,23 @@ def fit(
 ) -> tuple[dict[str, tuple[float, int]], np.ndarray]:
     """Posterior mean weight and number of rows per feature, and the fitted values.
 
-    Solved in the dual (one unknown per row). ``trust`` weighs rows as a Student t would.
+    Solved in the dual (one unknown per row) by conjugate gradients. ``trust`` weighs rows as a Student t
+    would.
     """
     design = Design.of(rows, priors)
     scale = design.scales(priors)
-    kernel = (design.matrix.multiply(scale) @ design.matrix.T).toarray()
-    factor = cho_factor(kernel + np.diag(noise / trust), lower=True, overwrite_a=True, check_finite=False)
-    alpha = cho_solve(factor, target)
-    weights = scale * (design.matrix.T @ alpha)
+    forth, back = design.matrix, design.matrix.T.tocsr()
+    spread = noise / trust
+
+    def times(v: np.ndarray) -> np.ndarray:
+        return forth @ (scale * (back @ v)) + spread * v
+
+    own = design.matrix.multiply(design.matrix) @ scale + spread
+    size = len(target)
+    system = LinearOperator((size, size), matvec=times)
+    guess = LinearOperator((size, size), matvec=lambda v: v / own)
+    alpha, _ = cg(system, target, rtol=RELATIVE_TOLERANCE, maxiter=MOST_STEPS, M=guess)
+    weights = scale * (back @ alpha)
     seen = Counter(n for row in rows for n in row)
     named = {n: (float(w), seen[n]) for n, w in zip(design.names, weights, strict=True)}
     return named, design.matrix @ weights

@@ -2,9 +2,11 @@
 
 The first letter of a name is its family: ``e`` exact environment (the radius follows), ``s`` kind of atom
 at a distance, ``t`` step of the scheme's own derivation, ``a`` set of groups on a saturated carbon, ``b``
-pair of a group on the carbon and one beside it, ``p`` group at a position of an aromatic ring, ``q`` the same by kind
-of group, ``o`` pair of positions, ``c`` group with neighbours that crowd it, ``y`` position across a double
-bond next to the carbon, ``z`` position on an aromatic ring next to the carbon, ``k`` ring, ``v`` solvent.
+pair of a group on the carbon and one beside it, ``p`` group at a position of an aromatic ring, ``q`` the
+same by kind of group, ``o`` pair of positions, ``c`` group with neighbours that crowd it, ``u`` what crowds
+a group on its own side, ``y`` position across a double bond next to the carbon, ``z`` position on an
+aromatic ring next to the carbon, ``x`` the same one atom further on, ``w`` groups cis or trans on a ring,
+``k`` ring, ``v`` solvent.
 """
 
 from __future__ import annotations
@@ -15,6 +17,7 @@ from hoodside.predict.environment import circular_codes
 from hoodside.predict.proton.alkene import ligand_positions
 from hoodside.predict.proton.aromatic import aromatic_rings, position_in
 from hoodside.predict.proton.estimate import Estimate
+from hoodside.predict.proton.faces import ring_face
 from hoodside.predict.proton.geometry import across
 from hoodside.predict.proton.view import View
 
@@ -41,6 +44,7 @@ def _names(view: View, atom: int, slot: int, estimate: Estimate, solvent: str) -
         yield from _aromatic(view, atom)
     elif view.is_saturated(atom):
         yield from _saturated(view, atom)
+        yield from _faces(view, atom, slot)
     elif (far := view.alkene_partner(atom)) is not None:
         yield from _alkene(view, atom, far, slot)
     if solvent != "CDCl3":
@@ -95,6 +99,8 @@ def _saturated(view: View, atom: int) -> Iterator[str]:
                     yield f"b{count} {'+'.join(strong)} {beyond.kind}"
         elif structure.atoms[near].aromatic:
             yield from _on_ring(view, near, atom, count)
+        elif structure.atoms[near].symbol != "C" or view.alkene_partner(near) is None:
+            yield from _beyond(view, near, atom, count)
         elif (far_end := view.alkene_partner(near)) is not None:
             yield from _on_alkene(view, near, far_end, atom, count)
     if rings:
@@ -114,6 +120,28 @@ def _ring_mates(view: View, atom: int, count: int) -> Iterator[str]:
                 yield f"k{count}r{len(ring)}{steps}-{view.substituent(member, near).kind}"
 
 
+def _faces(view: View, atom: int, slot: int) -> Iterator[str]:
+    """Groups on the ring that stand cis or trans to the H, by distance along the ring."""
+    structure = view.structure
+    count = structure.atoms[atom].hydrogens
+    for ring in structure.rings:
+        if atom not in ring or count > 2:
+            continue
+        own = ring_face(structure, ring, atom, -1 - slot)
+        if own is None:
+            continue
+        here = ring.index(atom)
+        for place, member in enumerate(ring):
+            steps = min(abs(place - here), len(ring) - abs(place - here))
+            for near in structure.neighbours[member]:
+                face = ring_face(structure, ring, member, near) if near not in ring and steps else None
+                if face is not None:
+                    side = "cis" if face == own else "trans"
+                    group = view.substituent(member, near)
+                    yield f"w{count}r{len(ring)}{steps}{side} {group.kind}"
+                    yield f"w{count}r{len(ring)}{steps}{side}"
+
+
 def _on_ring(view: View, ipso: int, atom: int, count: int) -> Iterator[str]:
     """Groups and heteroatoms of an aromatic ring, by position to the carbon it carries."""
     structure = view.structure
@@ -127,6 +155,18 @@ def _on_ring(view: View, ipso: int, atom: int, count: int) -> Iterator[str]:
             for near in structure.neighbours[member]:
                 if near not in ring and near != atom:
                     yield f"z{count} {position} {view.substituent(member, near).kind}"
+
+
+def _beyond(view: View, near: int, atom: int, count: int) -> Iterator[str]:
+    """What crowds a group whose far side is an aromatic ring or a double bond (OCH3, C(O)CH3, NCH3 ...)."""
+    structure = view.structure
+    for far in structure.neighbours[near]:
+        if far == atom:
+            continue
+        if structure.atoms[far].aromatic:
+            yield from (f"x{name}" for name in _on_ring(view, far, near, count) if "ortho" in name)
+        elif (end := view.alkene_partner(far)) is not None:
+            yield from (f"x{name}" for name in _on_alkene(view, far, end, near, count))
 
 
 def _on_alkene(view: View, near: int, far: int, atom: int, count: int) -> Iterator[str]:
@@ -191,6 +231,7 @@ def _aromatic(view: View, atom: int) -> Iterator[str]:
                 yield f"p{parent} {position} {group.key}"
                 yield f"q{len(ring)} {position} {group.key}"
                 yield from _crowding(view, ring, member, near, position)
+                yield from _turned(view, member, near, position)
         names = sorted(f"{position} {kind}" for position, kind in held)
         for index, one in enumerate(names):
             yield from (f"o{len(ring)} {one}/{two}" for two in names[index + 1 :])
@@ -212,6 +253,21 @@ def _crowding(view: View, ring: tuple[int, ...], member: int, near: int, positio
     ]
     yield f"c{position} {group.key} {len(beside)}"
     yield from (f"c{position} {group.key} by {kind}" for kind in beside)
+
+
+def _turned(view: View, member: int, near: int, position: str) -> Iterator[str]:
+    """What crowds an aryl or vinyl group on its own side."""
+    structure = view.structure
+    if structure.atoms[near].aromatic:
+        yield from (f"u{position} {name}" for name in _on_ring(view, near, member, 0) if "ortho" in name)
+    elif (far := view.alkene_partner(near)) is not None:
+        yield from (f"u{position} {name}" for name in _on_alkene(view, near, far, member, 0))
+    else:
+        for end in structure.neighbours[near]:
+            if end != member and structure.atoms[end].aromatic:
+                yield from (
+                    f"u{position} b{name}" for name in _on_ring(view, end, near, 0) if "ortho" in name
+                )
 
 
 def _other_rings(view: View, atom: int) -> Iterator[str]:

@@ -81,7 +81,7 @@ def _steps(view: View, atom: int, origin: int, only: int | None = None) -> Itera
     for near in view.structure.neighbours[atom]:
         if near == origin or (only is not None and near != only) or not view.is_saturated(near):
             continue
-        if view.substituent(atom, near).key in _CLOSED:
+        if view.substituent(atom, near).key in _CLOSED and not view.share_ring(atom, near):
             continue
         for far in view.structure.neighbours[near]:
             if far not in (atom, origin):
