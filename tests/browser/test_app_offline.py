@@ -15,7 +15,7 @@ def test_a_case_from_reload_to_verdict_without_network(own_host: Host, open_devi
     device = open_device()
     hand = Hand(device.new_page())
     hand.open(own_host.address)
-    expect(hand.page.get_by_text("Ready offline.")).to_be_visible(timeout=120_000)
+    expect(hand.page.locator(".whisper", has_text="Ready offline.")).to_be_visible(timeout=120_000)
     own_host.stop()
     device.set_offline(True)
     hand.page.reload()
