@@ -17,7 +17,8 @@ _LINE = re.compile(
 )
 _GAP = re.compile(r"[\s,;:.]+|and\b|&|δ\s?_?C?(?![a-z])|\(?p\.?p\.?m\.?\)?")
 _COUNT = re.compile(
-    r"(?P<a>\d{1,2})\s?(?:x\s?)?(?:C(?![a-zA-Z0-9])|carbons?|lines)|x\s?(?P<b>\d{1,2})(?![\d.])|(?P<c>\d{1,2})\s?x(?=\s|$|\s?C|\s?A)"
+    r"(?P<a>\d{1,2})\s?(?:x\s?)?(?:C(?![a-zA-Z0-9])|carbons?|lines)|x\s?(?P<b>\d{1,2})(?![\d.])"
+    r"|(?<![\w-])(?P<c>\d{1,2})\s?(?:x(?=\s|$|[CA])|(?=CH|Ar))"
 )
 _HELD = re.compile(r"C\s?(?:H\s?(?P<h>[1-3])?|q\b)?(?![a-z0-9])")
 _QUATERNARY = re.compile(r"C\s?q|C[IV]{1,2}|quat(?:ernary)?\.?|C=O|CO2?H?|COO[HR]?|C#?N|C|Cipso|ipso-?C?")

@@ -18,16 +18,19 @@ GROUPS = re.compile(r"(?P<times>\d)\s*x\s*(?:[A-Z][A-Za-z]*-?)?(?P<group>CH3|CH2
 _HELD = {"CH3": 3, "Me": 3, "CH2": 2, "NH2": 2, "CH": 1, "NH": 1, "OH": 1}
 _SUBSCRIPT = (
     r"(?:\s?[_^]?\s?(?:\([^()]{1,24}\)|\{[^{}]{1,24}\}|\[[^\[\]]{1,24}\]"
-    r"|\d{1,2}[a-z]?'*\s?[,\-/]\s?\d{1,2}[a-z]?'*(?=\s*[=:~])|\d{1,2}[a-z]?'*[,\-/]\d{1,2}[a-z]?'*(?=\s+\d)"
+    r"|\d{1,2}[a-z]?'*(?=\s*[=:~])|\d{1,2}[a-z]?'*\s?[,\-/]\s?\d{1,2}[a-z]?'*(?=\s*[=:~])|\d{1,2}[a-z]?'*[,\-/]\d{1,2}[a-z]?'*(?=\s+\d)"
     r"|H?\d{0,2}[HCFPD][\s,\-]{0,2}\d{0,2}[HCFPD]\d{0,2}(?![a-z])|[A-Z]{2}(?![a-z])"
     r"|(?:gem|vic|cis|trans|ortho|meta|para|o|m|p|ax|eq|aa|ae|ee)\b(?:[,\-](?:ax|eq))?))?"
 )
 J_HEAD = re.compile(
     rf"(?:(?P<times>\d)\s*x\s*)?(?:\d\s?)?J(?:'?s)?{_SUBSCRIPT}\s*(?:values?|=|:|~|of|is|ca\.?|\s){{0,4}}\s*"
 )
+# A whole number may also be a locant ("2,6-H") and is then no J.
 _J_VALUE = re.compile(
-    rf"(?:(?P<times>\d)\s*x\s*)?[-+~<>]?\s?(?P<j>{NUMBER})(?:\s?-\s?(?P<to>{NUMBER}))?"
-    rf"(?!\d|\s*H(?!z)|\s*x\s*[A-Z]|\s?%|'*(?:,\s?\d{{1,2}}'*){{0,4}}-[A-Z])(?:\s?\(?\s?x\s?(?P<times2>\d)\)?|\s?\((?P<times3>\d)\s?x\))?\s*(?P<hz>Hz|hz|HZ|cps|c/s)?\.?"
+    r"(?:(?P<times>\d)\s*x\s*)?[-+~<>]?\s?"
+    r"(?P<j>\d{1,4}\.\d{1,6}|\d{1,4}(?!\.?\d|'*(?:,\s?\d{1,2}'*){0,4}-[A-Z]))(?!\d)"
+    rf"(?:\s?-\s?(?P<to>{NUMBER})(?!\d))?(?!\s*H(?!z)|\s*x\s*[A-Z]|\s?%)"
+    r"(?:\s?\(?\s?x\s?(?P<times2>\d)\)?|\s?\((?P<times3>\d)\s?x\))?\s*(?P<hz>Hz|hz|HZ|cps|c/s)?\.?"
 )
 J_WITH_UNIT = re.compile(rf"-?{NUMBER}(?:\s?-\s?{NUMBER})?\s*(?:Hz|cps)")
 _J_NEXT = re.compile(r"\s*(?:,|;|and|&|/|or)\s*(?=[-+~]?\s?\d)")
@@ -176,9 +179,12 @@ def _read_pattern(plain: str, at: int, end: int, into: Details) -> int:
     ends = [m.end() for m in re.finditer(r"[A-Za-z'.]+", words[0])]
     for length in reversed(ends):
         name = words[0][:length]
-        if names_pattern(name) and not plain[at + length : at + length + 1].isalnum():
+        if names_pattern(name) and not _GOES_ON.match(plain, at + length):
             return _take_pattern(name, at + length, into)
     return at
+
+
+_GOES_ON = re.compile(r"\w|-\s?[A-Z]")  # "p-H" is an assignment, not a quintet
 
 
 def names_pattern(name: str) -> bool:

@@ -97,6 +97,6 @@ def _run(kind: str, plain: str, start: int, end: int, into: Gathered, head: str 
 
 
 def _has_already(kind: str, into: Gathered) -> bool:
-    """Whether a list of this kind was read before. An accurate mass may come beside a mass spectrum."""
-    held = {PROTON: into.h1, CARBON: into.c13, INFRARED: into.ir, MASS: into.ms, ANALYSIS: into.analysis}
+    """Whether a list of this kind was read before (of masses, ``read_mass`` decides by the ionisation)."""
+    held = {PROTON: into.h1, CARBON: into.c13, INFRARED: into.ir, ANALYSIS: into.analysis}
     return bool(held.get(kind)) or (kind == HIGH_RES and into.hrms is not None and into.hrms.calc is not None)

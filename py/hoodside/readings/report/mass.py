@@ -38,6 +38,9 @@ def read_mass(plain: str, start: int, end: int, into: Gathered, head: str = "") 
         return
     said = read_conditions(plain, start, end)
     soft = bool(_SOFT.search(head) or _SOFT.search(said.text))
+    if into.ms and not soft:
+        into.missed(start, end, "A second list of masses; one case holds one.")
+        return
     if said.end > start and said.text.strip(" :;,."):
         into.took(start, said.end, "mass spectrum" + (" with soft ionisation" if soft else ""))
     at, prose = said.end, 0

@@ -93,5 +93,7 @@ def split_terms(plain: str, start: int, end: int) -> list[tuple[int, int]]:
 
 _LOCANTS = re.compile(
     r"J[_\s]?\d{1,2}[a-z]?'*,\s?\d{1,2}[a-z]?'*(?=\s*=)|J\d{1,2}[a-z]?'*,\d{1,2}[a-z]?'*(?=\s+\d)"
-    r"|\b\d{1,2}[a-z]?'*(?:,\s?\d{1,2}[a-z]?'*)+-[A-Z]|\b[HC]-?\d{1,2}[a-z]?'*(?:,\s?-?\d{1,2}[a-z]?'*(?![\d.a-z])(?!\s*H))+"
+    r"|J\s?\d{0,2}[HCFP],\s?\d{0,2}[HCFP]\d{0,2}(?![a-z])"
+    r"|(?<![\w.])\d{1,2}[a-z]?'*(?:,\s?\d{1,2}[a-z]?'*)+-[A-Z]"
+    r"|\b[HC]-?\d{1,2}[a-z]?'*(?:,\s?-?\d{1,2}[a-z]?'*(?![\d.a-z])(?!\s*H))+"
 )

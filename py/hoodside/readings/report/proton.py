@@ -73,6 +73,7 @@ class _Reader:
         self.signals: list[_Signal] = []
         self.lost: list[tuple[int, int, str]] = []
         self.prose = 0  # words in a row that mean nothing here
+        self.patterned = -1  # offset just behind the last pattern printed outside brackets
         self.ended = False  # running text has begun: only what is unmistakable counts as a signal
 
     def read(self, at: int) -> None:
@@ -123,11 +124,13 @@ class _Reader:
         if self.plain[at] in "-.0123456789" and not self._belongs(at, details):
             details.j_open = False
             return at
-        details.bare = True
+        details.bare, pattern = True, details.mult
         stop = read_token(self.plain, at, self.end, details)
         details.bare = False
         if stop > at:
             self.signals[-1].end = stop
+        if details.mult != pattern:
+            self.patterned = stop
         return stop
 
     def _counts(self, at: int) -> bool:
@@ -137,6 +140,8 @@ class _Reader:
         """Whether a number outside brackets is a J or a number of H of the open signal."""
         if self._counts(at) or J_WITH_UNIT.match(self.plain, at, self.end):
             return True
+        if self.patterned >= 0 and not details.j and not self.plain[self.patterned : at].strip(" "):
+            return details.mult not in ("s", "m", "br s", "br m")
         return details.j_open and not self._shift_here(at)
 
     def _shift_here(self, at: int) -> bool:
@@ -237,11 +242,11 @@ def _hand_over(signal: _Signal, into: Gathered) -> None:
 
 def _names_solvent(note: str) -> bool:
     plain = note.strip(" .")
-    return plain in _SOLVENT_NOTES or (
-        "d" in plain.lower() and bool(known_solvent(plain)) and any(c.isdigit() for c in plain)
-    )
+    labelled = _DEUTERATED.search(plain) is not None
+    return plain in _SOLVENT_NOTES or labelled or ("D" in plain and bool(known_solvent(plain)))
 
 
+_DEUTERATED = re.compile(r"\w-d\d{1,2}$|^\[?[dD]\d{1,2}\]?-?[A-Za-z]|^CD|^CHD|^C6HD5$|^C6D5H$")
 #: Notes that name what is not the sample.
 _SOLVENT_NOTES = frozenset(
     {"CHCl3", "CDCl3", "H2O", "HDO", "HOD", "water", "solvent", "residual solvent", "TMS", "DMSO"}
