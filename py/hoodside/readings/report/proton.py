@@ -246,7 +246,7 @@ def _names_solvent(note: str) -> bool:
     return plain in _SOLVENT_NOTES or labelled or ("D" in plain and bool(known_solvent(plain)))
 
 
-_DEUTERATED = re.compile(r"\w-d\d{1,2}$|^\[?[dD]\d{1,2}\]?-?[A-Za-z]|^CD|^CHD|^C6HD5$|^C6D5H$")
+_DEUTERATED = re.compile(r"\w-d\d{1,2}$|^\[?[dD]\d{1,2}\]?-[A-Za-z]|^CD|^CHD|^C6HD5$|^C6D5H$")
 #: Notes that name what is not the sample.
 _SOLVENT_NOTES = frozenset(
     {"CHCl3", "CDCl3", "H2O", "HDO", "HOD", "water", "solvent", "residual solvent", "TMS", "DMSO"}
