@@ -2,9 +2,12 @@
 
 from __future__ import annotations
 
+from collections.abc import Iterable
 from dataclasses import asdict
+from functools import cache
 from typing import Any
 
+from hoodside.advise.reagent_cautions import cautions_for, without_caution
 from hoodside.facts import load_table
 from hoodside.methods.arguments import short_text
 from hoodside.methods.structures import structure_of
@@ -18,20 +21,45 @@ def outcomes(
     """Products, by-products, over-reaction and the start, likeliest first, with cautions."""
     start = structure_of(structure)
     other = structure_of(partner, "partner") if partner else None
-    found = find_outcomes(start, _words(reagents, "with"), other, _words(kind, "kind"))
+    text = _words(reagents, "with")
+    found = find_outcomes(start, text, other, _words(kind, "kind"))
+    understood = _as_written(found.understood, text)
+    of_step = (name for outcome in found.outcomes if outcome.role == "product" for name in outcome.cautions)
     return {
         "outcomes": [_outcome(outcome) for outcome in found.outcomes],
-        "understood": list(found.understood),
+        "understood": understood,
         "unknown": list(found.unknown),
-        "cautions": _cautions(found.outcomes),
+        "cautions": [asdict(caution) for caution in cautions_for(understood, of_step)],
+        "no_caution": list(without_caution(understood)),
     }
 
 
 def reagents(query: str = "") -> dict[str, Any]:
-    """Reagents by the trade's names and abbreviations that hold the query, with the first name to show."""
+    """Reagents by the trade's names and abbreviations that hold the query, and conditions met most often."""
     wanted = _words(query, "query").lower()
     found = [row for row in load_table("reagents") if wanted in row["names"].lower()]
-    return {"reagents": [{"name": r["names"].split("; ")[0], "names": r["names"].split("; ")} for r in found]}
+    usual = [row for row in load_table("usual_conditions") if wanted in row["label"].lower()]
+    return {
+        "reagents": [
+            {"name": names[0], "names": names, "shelf": _shelf(row["roles"])}
+            for row in found
+            for names in [row["names"].split("; ")]
+        ],
+        "usual": [{key: row[key] for key in ("label", "reagents", "partner")} for row in usual],
+    }
+
+
+def _as_written(names: Iterable[str], text: str) -> list[str]:
+    """Names in the order in which the text holds them."""
+    plain = text.lower()
+    return sorted(dict.fromkeys(names), key=lambda name: plain.find(name.lower()))
+
+
+@cache
+def _shelf(roles: str) -> str:
+    """Where on the shelf a reagent stands, by the first of its roles that a shelf holds."""
+    shelves = {role: row["shelf"] for row in load_table("reagent_shelves") for role in row["roles"].split()}
+    return next((shelves[role] for role in roles.split() if role in shelves), "")
 
 
 def _words(value: str, field: str) -> str:
@@ -41,10 +69,3 @@ def _words(value: str, field: str) -> str:
 def _outcome(outcome: Outcome) -> dict[str, Any]:
     structure = structure_of(outcome.smiles)
     return {**asdict(outcome), "cautions": list(outcome.cautions), "formula": formula_of(structure).text}
-
-
-def _cautions(found: tuple[Outcome, ...]) -> list[dict[str, str]]:
-    names = dict.fromkeys(name for outcome in found for name in outcome.cautions)
-    rows = {row["reagent"]: row for row in load_table("reagent_cautions")}
-    keys = ("reagent", "hazards", "incompatibilities", "quench", "source")
-    return [{key: rows[name][key] for key in keys} for name in names if name in rows]

@@ -50,7 +50,8 @@ def find_outcomes(
     now, found = settled(start), []
     for place, one in enumerate(read):
         last = place == len(read) - 1
-        found = _of_step(now, one, partner, kind if last else "")
+        # A work-up that calls for nothing leaves what the step before gave.
+        found = _of_step(now, one, partner, kind if last else "") or found
         products = [o for o in found if o.role == "product"]
         if not last and products:
             now = read_structure(products[0].smiles)

@@ -41,7 +41,7 @@ def stereo_words(product: Structure, start: Structure) -> str:
     """ "racemic", "meso" or "" for a product of an achiral start; "one diastereomer" otherwise."""
     marked = sum(bool(atom.cip) for atom in product.atoms)
     if not marked:
-        return ""
+        return _unmarked_words(product, start)
     achiral_product = mirror_smiles(product) == product.smiles
     if achiral_product:
         return "meso"
@@ -49,3 +49,10 @@ def stereo_words(product: Structure, start: Structure) -> str:
     if achiral_start:
         return "racemic" if marked < 2 else "one diastereomer, racemic"
     return "configuration kept; new centres by the mechanism"
+
+
+def _unmarked_words(product: Structure, start: Structure) -> str:
+    """For centres that a step made and nothing sets, from a start without any."""
+    if _open_centres(start) or any(atom.cip for atom in start.atoms):
+        return ""
+    return ("", "racemic", "mixture of diastereomers")[min(len(_open_centres(product)), 2)]
