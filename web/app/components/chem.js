@@ -25,5 +25,6 @@ function typeset(part) {
 export function Ion({ text }) {
   const parts = text.match(/^(\[.*\])(.*)$/);
   if (!parts) return html`<span>${text}</span>`;
-  return html`<span class="formula"><${Formula} text=${parts[1]?.replace('-', '\u2212') ?? ''} /><sup>${parts[2]?.replace('-', '\u2212').replace('.', '\u2022')}</sup></span>`;
+  return html`<span class="formula"><${Formula}
+    text=${parts[1]?.replace('-', '\u2212') ?? ''} /><sup>${parts[2]?.replace('-', '\u2212').replace('.', '\u2022')}</sup></span>`;
 }

@@ -19,7 +19,8 @@ export class Guard extends Component {
 
   render() {
     if (!this.state.trouble) return this.props.children;
-    return html`<main class="page"><p class="trouble" role="alert">This screen could not be shown. <span>${this.state.trouble}. What you typed is kept.</span></p>
+    return html`<main class="page"><p class="trouble"
+      role="alert">This screen could not be shown. <span>${this.state.trouble}. What you typed is kept.</span></p>
       <p><a class="button" href="#/" onClick=${() => this.setState({ trouble: '' })}>All cases</a></p></main>`;
   }
 }

@@ -73,7 +73,8 @@ export function NumberPad({ done, next = 'next', side = '', corner = '' }) {
   const digits = ['7', '8', '9', '4', '5', '6', '1', '2', '3', '0', '.'];
   return html`<div class="pad" role="group" aria-label="Number pad">
     <div class="pad-digits">
-      ${digits.map((name) => html`<${Key} key=${name} name=${name} extra=${name === '0' && !corner ? 'key-wide' : ''} />`)}
+      ${digits.map((name) => html`<${Key} key=${name}
+        name=${name} extra=${name === '0' && !corner ? 'key-wide' : ''} />`)}
       ${corner && html`<${Key} name=${corner} text=${corner === 'J' ? '+ J' : undefined} />`}
     </div>
     <div class="pad-side ${side ? '' : 'pad-side-two'}">

@@ -9,7 +9,8 @@ export const Caution = ({ children }) => html`<p class="caution" role="note">${c
  * @param {{ fault: Fault | null, id?: string }} props */
 export function Trouble({ fault, id }) {
   if (!fault) return null;
-  return html`<p class="trouble" role="alert" id=${id}>${fault.message} ${fault.hint && html`<span>${fault.hint}</span>`}</p>`;
+  return html`<p class="trouble"
+    role="alert" id=${id}>${fault.message} ${fault.hint && html`<span>${fault.hint}</span>`}</p>`;
 }
 
 /** @param {{ title: any, aside?: any, children?: any, id?: string, class?: string }} props */

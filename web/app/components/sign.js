@@ -8,7 +8,8 @@ export const VERDICT_WORDS = { fits: 'fits', clashes: 'clashes', undecided: 'und
 /** @type {Record<Verdict, () => any>} */
 const SHAPES = {
   fits: () => html`<circle cx="12" cy="12" r="10.5" class="sign-fill" />`,
-  clashes: () => html`<circle cx="12" cy="12" r="9.5" class="sign-line" /><path d="M5.4 18.6 18.6 5.4" class="sign-line" />`,
+  clashes: () => html`<circle cx="12" cy="12" r="9.5" class="sign-line" /><path d="M5.4 18.6 18.6 5.4"
+    class="sign-line" />`,
   undecided: () => html`<circle cx="12" cy="12" r="9.8" class="sign-line" />
     <path d="M12 2.2a9.8 9.8 0 0 0 0 19.6Z" class="sign-fill" />`,
   none: () => html`<circle cx="12" cy="12" r="9.8" class="sign-dots" />`,

@@ -29,6 +29,7 @@ const Hatch = () => html`<svg class="hidden" width="0" height="0" aria-hidden="t
 
 export function App() {
   return html`<${Hatch} /><${Notices} />
-    ${storeTrouble.value && html`<p class="loud" role="alert">${storeTrouble.value} Export the case before closing this page.</p>`}
+    ${storeTrouble.value && html`<p class="loud"
+      role="alert">${storeTrouble.value} Export the case before closing this page.</p>`}
     <${Guard} at=${path.value.join('/')}><${Screen} /><//><${Toast} />`;
 }

@@ -22,8 +22,10 @@ export function CaseBar({ doc }) {
             onKeyDown=${(/** @type {any} */ e) => e.key === 'Enter' && setNaming(false)} />`
         : html`<h1>${doc.title || 'Untitled'}</h1>`}
       <a class="bar-sign" href=${address('case', doc.id, 'tally')} aria-label="Verdict"><${CaseSign} doc=${doc} /></a>
-      <button type="button" class="bar-menu" aria-label="Case menu" aria-expanded=${String(menu)} onClick=${() => setMenu(!menu)}>
+      <button type="button" class="bar-menu" aria-label="Case menu" aria-expanded=${String(menu)}
+        onClick=${() => setMenu(!menu)}>
         <${Icon} name="menu" /></button>
     </header>
-    ${menu && html`<${CaseMenu} doc=${doc} close=${() => setMenu(false)} rename=${() => { setMenu(false); setNaming(true); }} />`}`;
+    ${menu && html`<${CaseMenu}
+      doc=${doc} close=${() => setMenu(false)} rename=${() => { setMenu(false); setNaming(true); }} />`}`;
 }

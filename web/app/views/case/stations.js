@@ -11,6 +11,7 @@ export function Stations({ doc, active }) {
   return html`<nav class="stations" aria-label="Stations">
     ${STATIONS.map((name) => html`<a key=${name} href=${address('case', doc.id, name)}
       aria-current=${active.includes(name) ? 'page' : undefined}>${NAMES[name]}
-      ${name === 'next' && waits > 0 && html`<i class="dot"></i><span class="hidden">, ${waits} suggestions</span>`}</a>`)}
+      ${name === 'next' && waits > 0 && html`<i class="dot"></i><span
+        class="hidden">, ${waits} suggestions</span>`}</a>`)}
   </nav>`;
 }

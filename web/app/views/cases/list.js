@@ -17,12 +17,14 @@ export function CaseList() {
   return html`<main class="page list-page">
     <header class="list-head">
       <h1>Hoodside</h1>
-      <button type="button" class="bar-menu" aria-label="Menu" aria-expanded=${String(menu)} onClick=${() => setMenu(!menu)}>
+      <button type="button" class="bar-menu" aria-label="Menu" aria-expanded=${String(menu)}
+        onClick=${() => setMenu(!menu)}>
         <${Icon} name="menu" /></button>
     </header>
     ${menu && html`<${ListMenu} close=${() => setMenu(false)} />`}
     <p class="promise">Does it fit, what else would, what to measure next.</p>
-    ${own.length === 0 && html`<p class="first-words">Type or paste what the instruments gave, put up the structures it could be,
+    ${own.length === 0 && html`<p
+      class="first-words">Type or paste what the instruments gave, put up the structures it could be,
       and see what speaks for and against each. It works with the network off.</p>`}
     ${own.length > 0 && html`<section aria-labelledby="own-head">
       <header class="list-section"><h2 id="own-head">On this device</h2><b>${own.length}</b></header>

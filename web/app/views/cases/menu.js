@@ -42,7 +42,8 @@ export function ListMenu({ close }) {
   const pick = (/** @type {any} */ event) => { importCase(event.currentTarget.files?.[0]); close(); };
   return html`<div class="menu">
     <label class="button file-button">Open a case file<input type="file" onChange=${pick} /></label>
-    ${ownCases.value.length > 0 && html`<button type="button" class="button" onClick=${exportAll}>Export all cases</button>`}
+    ${ownCases.value.length > 0 && html`<button type="button" class="button"
+      onClick=${exportAll}>Export all cases</button>`}
     ${inTabOfPhone && html`<p>Share, then Add to Home Screen: otherwise the system may clear the cases after a week without use.</p>`}
     <p class="whisper">Verdicts are weights of evidence, not proof. Hazard notes are reminders: local rules, the supplier's
       safety sheet and licensed practice come first.</p>
@@ -54,5 +55,6 @@ function Versions() {
   const { value } = useAnswer('about', {});
   const about = /** @type {any} */ (value);
   if (engineState.value === 'waking') return html`<p class="whisper">The chemistry is waking.</p>`;
-  return about && html`<p class="whisper">Engine ${about.version}, RDKit ${about.kernel_version}, Python ${about.python}.</p>`;
+  return about && html`<p
+    class="whisper">Engine ${about.version}, RDKit ${about.kernel_version}, Python ${about.python}.</p>`;
 }

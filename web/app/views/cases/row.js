@@ -29,7 +29,8 @@ export function CaseRow({ doc }) {
   return html`<li class="case-row">
     <a class="case-link" href=${address('case', doc.id, doc.last ? 'tally' : 'readings')}>
       <span class="thumb">${drawn && html`<${StructureDrawing} structure=${drawn} label="" size="thumb" />`}</span>
-      <span class="case-words"><b>${doc.title || 'Untitled'}</b><span class="case-line"><${Line} doc=${doc} /></span></span>
+      <span class="case-words"><b>${doc.title || 'Untitled'}</b><span class="case-line"><${Line}
+        doc=${doc} /></span></span>
       <${Sign} verdict=${verdict} size=${24} />
     </a>
     <button type="button" class="row-menu" aria-label="More for ${doc.title}" aria-expanded=${String(open)}

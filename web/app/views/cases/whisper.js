@@ -21,7 +21,8 @@ export function Waking() {
 /** The last line of the case list: whether the app would open with the network gone. */
 export function OfflineLine() {
   const waking = engineState.value === 'waking' ? html` <${Waking} />.` : '';
-  if (offline.value === 'ready') return html`<p class="whisper">Ready offline. Nothing leaves this device.${waking}</p>`;
+  if (offline.value === 'ready') return html`<p
+    class="whisper">Ready offline. Nothing leaves this device.${waking}</p>`;
   if (offline.value === 'checking') return html`<p class="whisper">Nothing leaves this device.${waking}</p>`;
   const why = offline.value === 'never'
     ? 'This page cannot be kept for offline use: open it over HTTPS or on the device that serves it.'

@@ -15,7 +15,8 @@ import { Printout } from './photos.js';
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {import('../../types').CarbonRow} CarbonRow */
 
-const KINDS = ['C', 'CH', 'CH2', 'CH3'].map((value) => ({ value, text: html`<${Formula} text=${value} />`, name: value }));
+const KINDS = ['C', 'CH', 'CH2', 'CH3'].map((value) => ({ value, text: html`<${Formula}
+  text=${value} />`, name: value }));
 const COUNTS = ['1', '2', '3', '4'].map((value) => ({ value, text: value === '1' ? '1 C' : `${value} C` }));
 
 /** One 13C line: shift, kind when known, how many carbons. @param {{ doc: CaseDoc, rowId: string }} props */
@@ -38,13 +39,17 @@ export function CarbonSheet({ doc, rowId }) {
     go('case', doc.id, 'readings');
   };
   const wrong = row.ppm.trim() && Number.isNaN(toNumber(row.ppm)) ? `${row.ppm} is no shift. Type 128.4.` : '';
-  return html`<${Sheet} title=${html`<sup>13</sup>C line ${rows.indexOf(row) + 1} of ${rows.length}`} back=${back} class="entry-sheet"
-      sign=${html`<${CaseSign} doc=${doc} />`} action=${html`<button type="button" class="bar-action" onClick=${remove}>Remove</button>`}
+  return html`<${Sheet} title=${html`<sup>13</sup>C line ${rows.indexOf(row) + 1} of ${rows.length}`} back=${back}
+    class="entry-sheet"
+      sign=${html`<${CaseSign} doc=${doc} />`} action=${html`<button type="button" class="bar-action"
+        onClick=${remove}>Remove</button>`}
       foot=${html`<${NumberPad} corner="±" done=${another} next=${row.ppm ? 'new' : 'next'} />`}>
     <${Printout} doc=${doc} />
     <${PadField} key=${rowId} label="Shift" name="ppm" value=${row.ppm} unit="ppm" first fault=${wrong}
       onInput=${(/** @type {string} */ ppm) => set({ ppm })} onEnter=${another} />
-    <${Chips} label="Kind, where DEPT told it" heading class="chips-4" options=${KINDS} value=${row.kind} onPick=${(/** @type {string} */ kind) => set({ kind })} />
-    <${Chips} label="Carbons in this line" heading class="chips-4" options=${COUNTS} value=${row.n} onPick=${(/** @type {string} */ n) => set({ n })} />
+    <${Chips} label="Kind, where DEPT told it" heading class="chips-4" options=${KINDS} value=${row.kind}
+      onPick=${(/** @type {string} */ kind) => set({ kind })} />
+    <${Chips} label="Carbons in this line" heading class="chips-4" options=${COUNTS} value=${row.n}
+      onPick=${(/** @type {string} */ n) => set({ n })} />
   <//>`;
 }

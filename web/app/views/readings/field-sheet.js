@@ -24,13 +24,17 @@ export function FieldSheet({ doc }) {
   const pick = (/** @type {string} */ mhz) => { setOther(mhz === 'other'); if (mhz !== 'other') set({ mhz }); };
   const wrong = doc.mhz.trim() && !(toNumber(doc.mhz) > 0) ? `${doc.mhz} is no field. Type 400.` : '';
   const leave = () => go('case', doc.id, 'readings');
-  return html`<${Sheet} title="Field and solvent" back=${address('case', doc.id, 'readings')} class=${other ? 'entry-sheet' : ''}
-      foot=${other ? html`<${NumberPad} done=${leave} next="done" />` : html`<button type="button" class="button primary" onClick=${leave}>Done</button>`}>
-    <${Chips} label=${'\u00b9H frequency, MHz'} heading class="chips-4" value=${other ? 'other' : doc.mhz} onPick=${pick}
+  return html`<${Sheet} title="Field and solvent" back=${address('case', doc.id, 'readings')}
+    class=${other ? 'entry-sheet' : ''}
+      foot=${other ? html`<${NumberPad} done=${leave} next="done" />` : html`<button type="button"
+        class="button primary" onClick=${leave}>Done</button>`}>
+    <${Chips} label=${'\u00b9H frequency, MHz'} heading class="chips-4" value=${other ? 'other' : doc.mhz}
+      onPick=${pick}
       options=${[...FIELDS, 'other'].map((text) => ({ value: text, text }))} />
     ${other && html`<${PadField} label="Another field" name="mhz" value=${doc.mhz} unit="MHz" first fault=${wrong}
       onInput=${(/** @type {string} */ mhz) => set({ mhz })} />`}
-    <${Chips} label="Solvent" heading class="chips-flow" value=${doc.solvent} onPick=${(/** @type {string} */ solvent) => set({ solvent })}
+    <${Chips} label="Solvent" heading class="chips-flow" value=${doc.solvent}
+      onPick=${(/** @type {string} */ solvent) => set({ solvent })}
       options=${names.map((name) => ({ value: name, text: html`<${Formula} text=${name} />`, name }))} />
     <${Chips} label="Integrals are" heading class="chips-2" optional=${false} value=${doc.raw ? 'raw' : 'h'}
       options=${[{ value: 'h', text: 'numbers of H' }, { value: 'raw', text: 'raw step heights' }]}

@@ -22,13 +22,16 @@ export function FormulaSheet({ doc }) {
   const facts = /** @type {FormulaFacts | null} */ (fault ? null : value);
   const leave = () => go('case', doc.id, 'readings');
   return html`<${Sheet} title="Formula" back=${address('case', doc.id, 'readings')} class="entry-sheet"
-      sign=${html`<${CaseSign} doc=${doc} />`} foot=${html`<${FormulaPad} done=${leave} onLetters=${() => setLetters(!letters)} />`}>
-    <${PadField} key=${String(letters)} label="Molecular formula" name="formula" value=${doc.formula} first letters=${letters} onEnter=${leave}
+      sign=${html`<${CaseSign} doc=${doc} />`} foot=${html`<${FormulaPad} done=${leave}
+        onLetters=${() => setLetters(!letters)} />`}>
+    <${PadField} key=${String(letters)} label="Molecular formula" name="formula"
+      value=${doc.formula} first letters=${letters} onEnter=${leave}
       onInput=${(/** @type {string} */ formula) => changeCase(doc.id, (draft) => { draft.formula = formula; })} />
     <${Trouble} fault=${fault} />
     ${text && facts ? html`<${FactTable} facts=${facts} />`
       : !text && html`<p class="hint">Type it with the pad, or take it from an accurate mass.</p>`}
-    <${LineLink} href=${address('case', doc.id, 'readings', 'hrms')} name="From an accurate mass" says=${doc.hrms.found || ''} />
+    <${LineLink} href=${address('case', doc.id, 'readings', 'hrms')}
+      name="From an accurate mass" says=${doc.hrms.found || ''} />
   <//>`;
 }
 
@@ -50,6 +53,7 @@ function Isotopes({ facts }) {
   if (top.length < 2) return null;
   return html`<${Section} title="Isotope pattern" aside=${plural(top.length, 'line')}>
     <table class="plain-table"><tbody>${top.map((line) => html`<tr key=${line.mz}><td>${fixed(line.mz, 4)}</td>
-      <td><svg class="rel-bar" viewBox="0 0 100 8" preserveAspectRatio="none" aria-hidden="true"><path d="M0 4H${line.rel}" /></svg></td><td>${fixed(line.rel, 1)} %</td></tr>`)}</tbody></table>
+      <td><svg class="rel-bar" viewBox="0 0 100 8" preserveAspectRatio="none" aria-hidden="true"><path
+        d="M0 4H${line.rel}" /></svg></td><td>${fixed(line.rel, 1)} %</td></tr>`)}</tbody></table>
   <//>`;
 }

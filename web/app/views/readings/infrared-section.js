@@ -31,10 +31,12 @@ export function InfraredSection({ doc }) {
   const at = regions.find((region) => region.id === touched.value[doc.id]) ?? null;
   const medium = doc.irMedium ? html`IR, <${Formula} text=${doc.irMedium} />` : 'IR';
   if (!regions.length) {
-    return html`<${Section} title="IR" id="ir-head"><p class="whisper">The sweep appears when the chemistry is awake.</p><//>`;
+    return html`<${Section} title="IR" id="ir-head"><p
+      class="whisper">The sweep appears when the chemistry is awake.</p><//>`;
   }
   return html`<${Section} title=${medium} id="ir-head" aside=${sweepWords(doc, regions)}>
-    <${Strip} doc=${doc} regions=${regions} at=${at?.id ?? ''} onPick=${(/** @type {string} */ id) => touchRegion(doc, id)} />
+    <${Strip} doc=${doc} regions=${regions} at=${at?.id ?? ''}
+      onPick=${(/** @type {string} */ id) => touchRegion(doc, id)} />
     <${RegionSteps} doc=${doc} regions=${regions} at=${at} />
     ${at ? html`<${RegionMarks} doc=${doc} regions=${regions} region=${at} />`
       : html`<p class="hint">Touch the strip, or step through it from 4000 down. Mark what is there and what is not:
@@ -59,9 +61,11 @@ function RegionSteps({ doc, regions, at }) {
     if (next) touchRegion(doc, next.id);
   };
   return html`<div class="steps">
-    <button type="button" class="step" aria-label="Region before" disabled=${index <= 0} onClick=${() => step(-1)}><${Icon} name="left" /></button>
+    <button type="button" class="step" aria-label="Region before" disabled=${index <= 0}
+      onClick=${() => step(-1)}><${Icon} name="left" /></button>
     <p aria-live="polite">${at ? html`<b>${dashed(`${at.hi}-${at.lo}`)}</b> ${at.name}` : 'no region touched'}</p>
-    <button type="button" class="step" aria-label=${at ? 'Region after' : 'First region'} disabled=${index === regions.length - 1}
+    <button type="button" class="step" aria-label=${at ? 'Region after' : 'First region'}
+      disabled=${index === regions.length - 1}
       onClick=${() => step(1)}><${Icon} name="right" /></button>
   </div>`;
 }
@@ -84,8 +88,10 @@ function RegionMarks({ doc, regions, region }) {
   };
   const said = bands.map((band) => `${band.cm1 || '?'} ${band.strength}`.trim()).join(', ');
   return html`<div class="two-up">
-      <button type="button" class="toggle" aria-pressed=${String(state === 'seen')} onClick=${see}>${state === 'seen' ? `Seen ${said}` : 'Seen here'}</button>
-      <button type="button" class="toggle" aria-pressed=${String(state === 'clear')} onClick=${clear}>Clear here</button>
+      <button type="button" class="toggle" aria-pressed=${String(state === 'seen')}
+        onClick=${see}>${state === 'seen' ? `Seen ${said}` : 'Seen here'}</button>
+      <button type="button" class="toggle" aria-pressed=${String(state === 'clear')}
+        onClick=${clear}>Clear here</button>
     </div>
     <${RegionText} region=${region} />`;
 }

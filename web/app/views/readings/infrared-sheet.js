@@ -35,17 +35,21 @@ export function InfraredSheet({ doc, regionId }) {
     go('case', doc.id, 'readings');
   };
   const more = () => changeCase(doc.id, (draft) => { if (region) setPicked(addBand(draft, region).id); });
-  if (!region) return html`<${Sheet} title="IR" back=${back}><p class="whisper">The sweep appears when the chemistry is awake.</p><//>`;
-  return html`<${Sheet} title=${`IR, ${dashed(`${region.hi}-${region.lo}`)}`} back=${back} sign=${html`<${CaseSign} doc=${doc} />`}
+  if (!region) return html`<${Sheet} title="IR" back=${back}><p
+    class="whisper">The sweep appears when the chemistry is awake.</p><//>`;
+  return html`<${Sheet} title=${`IR, ${dashed(`${region.hi}-${region.lo}`)}`} back=${back} sign=${html`<${CaseSign}
+    doc=${doc} />`}
       class="entry-sheet" foot=${html`<${NumberPad} done=${leave} next=${band?.cm1 ? 'done' : 'next'} />`}>
     <${Printout} doc=${doc} />
-    ${bands.length > 1 && html`<${Chips} label="Bands of this region" class="chips-lines" optional=${false} value=${band?.id ?? ''}
+    ${bands.length > 1 && html`<${Chips} label="Bands of this region" class="chips-lines" optional=${false}
+      value=${band?.id ?? ''}
       options=${bands.map((entry) => ({ value: entry.id, text: entry.cm1 || 'new' }))} onPick=${setPicked} />`}
     ${band ? html`<${BandFields} key=${band.id} doc=${doc} band=${band} more=${more} />`
       : html`<button type="button" class="button primary" onClick=${more}>A band is seen here</button>`}
     <${RegionText} region=${region} />
     <${Section} title="Sample as">
-      <${Chips} label="Sample as" class="chips-flow" value=${doc.irMedium} options=${MEDIA.map((value) => ({ value, text: html`<${Formula} text=${value} />` }))}
+      <${Chips} label="Sample as" class="chips-flow" value=${doc.irMedium}
+        options=${MEDIA.map((value) => ({ value, text: html`<${Formula} text=${value} />` }))}
         onPick=${(/** @type {string} */ value) => changeCase(doc.id, (draft) => { draft.irMedium = value; })} />
     <//>
   <//>`;
@@ -61,12 +65,15 @@ function BandFields({ doc, band, more }) {
   });
   const wrong = band.cm1.trim() && Number.isNaN(toNumber(band.cm1)) ? `${band.cm1} is no wavenumber. Type 1715.` : '';
   return html`<div class="band-top">
-      <${PadField} label="Position" name="cm1" value=${band.cm1} unit=${html`cm<sup>${'\u2212'}1</sup>`} first fault=${wrong}
+      <${PadField} label="Position" name="cm1" value=${band.cm1} unit=${html`cm<sup>${'\u2212'}1</sup>`} first
+        fault=${wrong}
         onInput=${(/** @type {string} */ cm1) => set({ cm1 })} />
       <${Suits} band=${band} />
     </div>
-    <${Chips} label="Strength" class="chips-3" options=${STRENGTHS} value=${band.strength} onPick=${(/** @type {string} */ strength) => set({ strength })} />
-    <${Chips} label="Shape" class="chips-2" options=${SHAPES} value=${band.shape} onPick=${(/** @type {string} */ shape) => set({ shape })} />
+    <${Chips} label="Strength" class="chips-3" options=${STRENGTHS} value=${band.strength}
+      onPick=${(/** @type {string} */ strength) => set({ strength })} />
+    <${Chips} label="Shape" class="chips-2" options=${SHAPES} value=${band.shape}
+      onPick=${(/** @type {string} */ shape) => set({ shape })} />
     <div class="two-up">
       <button type="button" class="button" onClick=${more}>Another band</button>
       <button type="button" class="button" onClick=${remove}>Remove band</button>

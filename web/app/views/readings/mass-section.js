@@ -13,7 +13,8 @@ export function LineLink({ href, name, says, empty = false }) {
 }
 
 /** @param {LinkProps} props */
-const Tile = ({ href, name, says, empty = false }) => html`<a class="tile ${empty ? 'tile-empty' : ''}" href=${href}><span>${name}</span><b>${says}</b></a>`;
+const Tile = ({ href, name, says, empty = false }) => html`<a class="tile ${empty ? 'tile-empty' : ''}"
+  href=${href}><span>${name}</span><b>${says}</b></a>`;
 
 /** Formula, masses and combustion, a tile each. @param {{ doc: import('../../types').CaseDoc }} props */
 export function MassSection({ doc }) {

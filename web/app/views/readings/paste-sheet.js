@@ -30,7 +30,8 @@ export function PasteSheet({ doc }) {
     go('case', doc.id, 'readings');
   };
   const fromClipboard = async () => { pasted.value = await navigator.clipboard.readText(); };
-  const foot = html`${parsed && collides(doc, parsed.readings) && html`<${Chips} label="With what is there" class="chips-2" optional=${false}
+  const foot = html`${parsed && collides(doc, parsed.readings) && html`<${Chips} label="With what is there"
+    class="chips-2" optional=${false}
       value=${how.value} options=${[{ value: 'add', text: 'add to what is there' }, { value: 'replace', text: 'replace it' }]}
       onPick=${(/** @type {string} */ choice) => { how.value = choice; }} />`}
     <button type="button" class="button primary" disabled=${!count || busy} onClick=${take}>
@@ -39,8 +40,10 @@ export function PasteSheet({ doc }) {
     <textarea class="paste-box" rows="5" aria-label="Report line" spellcheck=${false} value=${text} autocapitalize="off"
       placeholder="1H NMR (400 MHz, CDCl3) δ 7.90 (d, J = 8.4 Hz, 2H), …" onInput=${(/** @type {any} */ e) => { pasted.value = e.currentTarget.value; }}></textarea>
     <div class="two-up">
-      ${canReadClipboard && html`<button type="button" class="button" onClick=${() => fromClipboard().catch(() => {})}>From the clipboard</button>`}
-      <button type="button" class="button" disabled=${!text} onClick=${() => { pasted.value = ''; }}>Empty the box</button>
+      ${canReadClipboard && html`<button type="button" class="button"
+        onClick=${() => fromClipboard().catch(() => {})}>From the clipboard</button>`}
+      <button type="button" class="button" disabled=${!text}
+        onClick=${() => { pasted.value = ''; }}>Empty the box</button>
     </div>
     <${Trouble} fault=${fault} />
     <div aria-live="polite" aria-busy=${String(busy)}>
@@ -53,8 +56,10 @@ export function PasteSheet({ doc }) {
 /** @param {{ parsed: Parsed }} props */
 function Understood({ parsed }) {
   const warnings = /** @type {string[]} */ (parsed.readings?.warnings ?? []);
-  return html`${parsed.unread.length > 0 && html`<${Section} title="Not understood" aside=${parsed.unread.length} class="unread">
-      <ul class="pieces">${parsed.unread.slice(0, 50).map((piece) => html`<li class="piece piece-unread" key=${piece.start}>
+  return html`${parsed.unread.length > 0 && html`<${Section} title="Not understood" aside=${parsed.unread.length}
+    class="unread">
+      <ul class="pieces">${parsed.unread.slice(0, 50).map((piece) => html`<li class="piece piece-unread"
+        key=${piece.start}>
         <q>${shorten(piece.text)}</q><span>${piece.why}</span></li>`)}</ul>
       ${parsed.unread.length > 50 && html`<p class="hint">and ${parsed.unread.length - 50} more</p>`}<//>`}
     ${warnings.map((warning) => html`<p class="hint" key=${warning}>${warning}</p>`)}

@@ -27,7 +27,8 @@ export function PhotoButton({ doc }) {
       say(`The picture was not kept (${error}).`);
     }
   };
-  return html`<label class="button file-button">Photograph a printout<input type="file" accept="image/*" capture="environment" onChange=${keep} /></label>`;
+  return html`<label class="button file-button">Photograph a printout<input
+    type="file" accept="image/*" capture="environment" onChange=${keep} /></label>`;
 }
 
 /** @param {string} id */
@@ -48,19 +49,23 @@ function usePhoto(id) {
 /** @param {{ id: string, label: string, zoom?: number }} props */
 function Picture({ id, label, zoom = 1 }) {
   const url = usePhoto(id);
-  return url ? html`<img class="picture zoom-${zoom}" src=${url} alt=${label} />` : html`<span class="picture picture-none">picture not found on this device</span>`;
+  return url ? html`<img class="picture zoom-${zoom}" src=${url} alt=${label} />` : html`<span
+    class="picture picture-none">picture not found on this device</span>`;
 }
 
 /** @param {{ doc: CaseDoc }} props */
 export function Photos({ doc }) {
   return html`<ul class="photo-list">${doc.photos.map((photo, i) => html`<li key=${photo.id}>
-    <a href=${address('case', doc.id, 'readings', 'photo', photo.id)}><${Picture} id=${photo.id} label="Printout ${i + 1}" /></a></li>`)}</ul>`;
+    <a href=${address('case', doc.id, 'readings', 'photo', photo.id)}><${Picture} id=${photo.id}
+      label="Printout ${i + 1}" /></a></li>`)}</ul>`;
 }
 
 /** @param {{ zoom: number, set: (zoom: number) => void }} props */
 const Zoom = ({ zoom, set }) => html`<div class="zoom">
-  <button type="button" class="step" aria-label="Smaller" disabled=${zoom <= 1} onClick=${() => set(zoom / 2)}><${Icon} name="minus" /></button>
-  <button type="button" class="step" aria-label="Larger" disabled=${zoom >= 8} onClick=${() => set(zoom * 2)}><${Icon} name="plus" /></button>
+  <button type="button" class="step" aria-label="Smaller" disabled=${zoom <= 1} onClick=${() => set(zoom / 2)}><${Icon}
+    name="minus" /></button>
+  <button type="button" class="step" aria-label="Larger" disabled=${zoom >= 8} onClick=${() => set(zoom * 2)}><${Icon}
+    name="plus" /></button>
 </div>`;
 
 /** @param {{ doc: CaseDoc, id: string }} props */
@@ -70,7 +75,8 @@ export function PhotoSheet({ doc, id }) {
     changeWithUndo(doc.id, 'Picture removed', (draft) => { draft.photos = draft.photos.filter((photo) => photo.id !== id); });
     go('case', doc.id, 'readings');
   };
-  const foot = html`<div class="photo-foot"><${Zoom} zoom=${zoom} set=${setZoom} /><button type="button" class="button" onClick=${remove}>Remove</button></div>`;
+  const foot = html`<div class="photo-foot"><${Zoom} zoom=${zoom} set=${setZoom} /><button type="button" class="button"
+    onClick=${remove}>Remove</button></div>`;
   return html`<${Sheet} title="Printout" back=${address('case', doc.id, 'readings')} foot=${foot}>
     <div class="picture-pan" tabindex="0"><${Picture} id=${id} label="Printout" zoom=${zoom} /></div><//>`;
 }
@@ -82,8 +88,10 @@ export function Printout({ doc }) {
   const [zoom, setZoom] = useState(2);
   const photo = doc.photos.at(-1);
   if (!photo) return null;
-  if (!beside.value) return html`<button type="button" class="button printout-open" onClick=${() => { beside.value = true; }}><${Icon} name="photo" /> Show the printout</button>`;
-  return html`<div class="printout"><div class="picture-pan" tabindex="0"><${Picture} id=${photo.id} label="Printout" zoom=${zoom} /></div>
+  if (!beside.value) return html`<button type="button" class="button printout-open"
+    onClick=${() => { beside.value = true; }}><${Icon} name="photo" /> Show the printout</button>`;
+  return html`<div class="printout"><div class="picture-pan" tabindex="0"><${Picture} id=${photo.id}
+    label="Printout" zoom=${zoom} /></div>
     <${Zoom} zoom=${zoom} set=${setZoom} />
     <button type="button" class="button" onClick=${() => { beside.value = false; }}>Hide</button></div>`;
 }

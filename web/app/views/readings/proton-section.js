@@ -23,7 +23,8 @@ export function addSignal(doc) {
 /** The conditions, "400 MHz, CDCl3". @param {{ doc: CaseDoc }} props */
 export function Conditions({ doc }) {
   if (!doc.mhz && !doc.solvent) return html`field and solvent`;
-  return html`${doc.mhz && `${doc.mhz} MHz`}${doc.mhz && doc.solvent && ', '}${doc.solvent && html`<${Formula} text=${doc.solvent} />`}`;
+  return html`${doc.mhz && `${doc.mhz} MHz`}${doc.mhz && doc.solvent && ', '}${doc.solvent && html`<${Formula}
+    text=${doc.solvent} />`}`;
 }
 
 /** The running sum of H against the formula. @param {{ doc: CaseDoc }} props */
@@ -41,12 +42,14 @@ export function ProtonSection({ doc }) {
   const rows = highFirst(doc.h1, (row) => row.shift);
   const solvent = useSolventName(doc, 'h1');
   return html`<${Section} title=${title} id="h1-head" aside=${doc.h1.length ? html`<${Sum} doc=${doc} />` : null}>
-    ${!doc.h1.length && html`<p class="hint">Begin with field and solvent, then take the signals from left to right.</p>`}
+    ${!doc.h1.length && html`<p
+      class="hint">Begin with field and solvent, then take the signals from left to right.</p>`}
     <ul class="slips" aria-label=${plural(rows.length, 'signal')}>
       ${rows.map((row) => html`<${Slip} key=${row.id} doc=${doc} row=${row} named=${solvent(row)} />`)}
     </ul>
     <div class="two-up">
-      <a class="button" href=${address('case', doc.id, 'readings', 'field')}><span><${Conditions} doc=${doc} /></span></a>
+      <a class="button" href=${address('case', doc.id, 'readings', 'field')}><span><${Conditions}
+        doc=${doc} /></span></a>
       <button type="button" class="button" onClick=${() => addSignal(doc)}>Add a signal</button>
     </div>
   <//>`;

@@ -47,8 +47,10 @@ export function ProtonSheet({ doc, rowId }) {
   const needsJ = !NO_J.includes(row.mult);
   const full = Boolean(row.shift.trim() && row.h.trim() && (!needsJ || row.j.trim()));
   return html`<${Sheet} title=${html`<sup>1</sup>H signal ${rows.indexOf(row) + 1} of ${rows.length}`} back=${back}
-      sign=${html`<${CaseSign} doc=${doc} />`} class="entry-sheet" action=${html`<button type="button" class="bar-action" onClick=${remove}>Remove</button>`}
-      foot=${html`<${NumberPad} key=${rowId} done=${another} next=${full ? 'new' : 'next'} side="–" corner=${needsJ ? 'J' : '±'} />`}>
+      sign=${html`<${CaseSign} doc=${doc} />`} class="entry-sheet" action=${html`<button type="button"
+        class="bar-action" onClick=${remove}>Remove</button>`}
+      foot=${html`<${NumberPad}
+        key=${rowId} done=${another} next=${full ? 'new' : 'next'} side="–" corner=${needsJ ? 'J' : '±'} />`}>
     <${Printout} doc=${doc} />
     <${Fields} key=${rowId} doc=${doc} row=${row} set=${set} needsJ=${needsJ} another=${another} />
     <p class="fields-foot"><span>${partners(doc, row)}</span><b><${Sum} doc=${doc} /></b></p>
@@ -69,7 +71,8 @@ function Fields({ doc, row, set, needsJ, another }) {
   return html`<div class="fields-2">
       <${PadField} label="Shift, or a range" name="shift" value=${row.shift} unit="ppm" first fault=${about(/shift/)}
         onInput=${(/** @type {string} */ shift) => set({ shift })} onEnter=${another} />
-      <${PadField} label=${doc.raw ? 'Step height' : 'Protons'} name="h" value=${row.h} unit=${doc.raw ? '' : 'H'} fault=${about(/number of H/)}
+      <${PadField} label=${doc.raw ? 'Step height' : 'Protons'} name="h" value=${row.h} unit=${doc.raw ? '' : 'H'}
+        fault=${about(/number of H/)}
         onInput=${(/** @type {string} */ h) => set({ h })} onEnter=${another} />
     </div>
     <${Chips} label="Pattern" class="chips-patterns" value=${pattern} onPick=${pick}

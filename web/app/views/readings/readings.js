@@ -26,7 +26,8 @@ export function Readings({ doc }) {
     <${ProtonSection} doc=${doc} />
     <${CarbonSection} doc=${doc} />
     <${WetSection} doc=${doc} />
-    ${doc.photos.length > 0 && html`<${Section} title="Printouts" aside=${`${doc.photos.length}`}><${Photos} doc=${doc} /><//>`}
+    ${doc.photos.length > 0 && html`<${Section} title="Printouts" aside=${`${doc.photos.length}`}><${Photos}
+      doc=${doc} /><//>`}
     ${doc.invented && html`<${Caution}>The values of this case are made up to show the tool. Do not use them as references.<//>`}
   </div>`;
 }

@@ -14,13 +14,15 @@ import { WET_GROUPS } from './wet-tests.js';
 /** Bench tests: pick one, say how it came out. @param {{ doc: CaseDoc, test: string }} props */
 export function WetSheet({ doc, test }) {
   const back = test ? address('case', doc.id, 'readings', 'wet') : address('case', doc.id, 'readings');
-  if (test) return html`<${Sheet} title=${html`<${Words} text=${test} />`} back=${back} sign=${html`<${CaseSign} doc=${doc} />`}><${OneTest} doc=${doc} test=${test} /><//>`;
+  if (test) return html`<${Sheet} title=${html`<${Words} text=${test} />`} back=${back} sign=${html`<${CaseSign}
+    doc=${doc} />`}><${OneTest} doc=${doc} test=${test} /><//>`;
   return html`<${Sheet} title="Wet tests" back=${back} sign=${html`<${CaseSign} doc=${doc} />`}>
     <${Caution}>These use a few milligrams and still burn, stain or poison. Local rules and the supplier's safety sheet come first.<//>
     ${WET_GROUPS.map((group) => html`<${Section} title=${group.name} key=${group.name}>
       <div class="chips chips-flow">${group.tests.map((name) => {
         const known = doc.wet.find((row) => row.test === name);
-        return html`<a class="chip" key=${name} href=${address('case', doc.id, 'readings', 'wet', name)}><${Words} text=${name} />${known ? html` <b>${known.result === 'positive' ? '+' : '\u2212'}</b>` : ''}</a>`;
+        return html`<a class="chip" key=${name} href=${address('case', doc.id, 'readings', 'wet', name)}><${Words}
+          text=${name} />${known ? html` <b>${known.result === 'positive' ? '+' : '\u2212'}</b>` : ''}</a>`;
       })}</div><//>`)}
   <//>`;
 }
@@ -37,11 +39,14 @@ function OneTest({ doc, test }) {
   return html`${facts && html`<p class="lead"><${Words} text=${facts.tells} /></p>
       <p class="hint">Positive looks like this: ${facts.observation}.</p>`}
     <div class="two-up">
-      <button type="button" class="toggle tall" aria-pressed=${String(known?.result === 'positive')} onClick=${() => mark('positive')}>Positive</button>
-      <button type="button" class="toggle tall" aria-pressed=${String(known?.result === 'negative')} onClick=${() => mark('negative')}>Negative</button>
+      <button type="button" class="toggle tall" aria-pressed=${String(known?.result === 'positive')}
+        onClick=${() => mark('positive')}>Positive</button>
+      <button type="button" class="toggle tall" aria-pressed=${String(known?.result === 'negative')}
+        onClick=${() => mark('negative')}>Negative</button>
     </div>
     ${facts && html`<${Caution}>${sentenceCase(facts.hazards)}. Local rules and the supplier's safety sheet come first.<//>
-      <${Section} title="It can mislead"><p class="hint">${sentenceCase(facts.false_results)}.</p><p class="source">${facts.source}</p><//>`}`;
+      <${Section} title="It can mislead"><p class="hint">${sentenceCase(facts.false_results)}.</p><p
+        class="source">${facts.source}</p><//>`}`;
 }
 
 /** @param {string} text */

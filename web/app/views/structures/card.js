@@ -23,7 +23,8 @@ export function verdictFor(id) {
 }
 
 /** "C9H8O short, Cl too many" @param {{ check: ReturnType<typeof formulaCheck> }} props */
-const Differs = ({ check }) => html`${check.short && html`<${Formula} text=${check.short} /> short`}${check.short && check.extra && ', '}
+const Differs = ({ check }) => html`${check.short && html`<${Formula}
+  text=${check.short} /> short`}${check.short && check.extra && ', '}
   ${check.extra && html`<${Formula} text=${check.extra} /> too many`}`;
 
 /** @param {{ doc: CaseDoc, structure: Candidate }} props */
@@ -53,8 +54,10 @@ export function RivalCard({ doc, candidate, at }) {
       draft.structures.push({ id: newId(), source: candidate.smiles, name: '', smiles: entry.smiles, formula: entry.formula, svg: entry.svg });
     });
   };
-  return html`<li><button type="button" class="card card-rival" onClick=${take} aria-label="Take ${name} over as a structure">
+  return html`<li><button type="button" class="card card-rival" onClick=${take}
+    aria-label="Take ${name} over as a structure">
     <${Drawing} structure=${candidate.smiles} label=${name} width=${150} height=${112} class="drawing-card" />
-    <span class="card-foot"><span class="card-name">${name}</span><${Sign} verdict=${candidate.verdict} size=${22} /></span>
+    <span class="card-foot"><span class="card-name">${name}</span><${Sign} verdict=${candidate.verdict}
+      size=${22} /></span>
   </button></li>`;
 }

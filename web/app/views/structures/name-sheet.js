@@ -25,15 +25,18 @@ export function NameSheet({ doc }) {
     }
   };
   return html`<${Sheet} title="By name" back=${address('case', doc.id, 'structures')}>
-    <input class="text-field search" type="text" inputmode="search" aria-label="Name" placeholder="name, or part of it" autocomplete="off" autocapitalize="off"
+    <input class="text-field search" type="text" inputmode="search" aria-label="Name" placeholder="name, or part of it"
+      autocomplete="off" autocapitalize="off"
       spellcheck=${false} value=${query} onInput=${(/** @type {any} */ e) => setQuery(e.currentTarget.value)} />
     <${Trouble} fault=${fault ?? refused} />
     <div aria-live="polite">
-      ${query.trim() && !busy && !names.length && html`<p class="hint">No such name in the list of common ones. Paste its SMILES instead.</p>`}
+      ${query.trim() && !busy && !names.length && html`<p
+        class="hint">No such name in the list of common ones. Paste its SMILES instead.</p>`}
       <ul class="picks">${names.map((entry) => html`<li key=${entry.name + entry.smiles}>
         <button type="button" class="pick pick-drawn" onClick=${() => take(entry)}>
           <${Drawing} structure=${entry.smiles} label="" width=${100} height=${60} class="drawing-thumb" />
-          <span><b>${entry.name}</b><span class="case-line"><${Formula} text=${entry.formula} /></span></span></button></li>`)}</ul>
+          <span><b>${entry.name}</b><span class="case-line"><${Formula}
+            text=${entry.formula} /></span></span></button></li>`)}</ul>
     </div>
   <//>`;
 }

@@ -20,7 +20,8 @@ export function OneStructure({ doc, id }) {
   const back = address('case', doc.id, 'structures');
   const { value, fault } = useAnswer('describe', structure ? { structure: structure.smiles } : null);
   const described = /** @type {import('../../types').Description | null} */ (value);
-  if (!structure) return html`<${Sheet} title="Structure" back=${back}><p class="hint">This structure was removed.</p><//>`;
+  if (!structure) return html`<${Sheet} title="Structure" back=${back}><p
+    class="hint">This structure was removed.</p><//>`;
   const intended = doc.intended === id;
   const rename = (/** @type {string} */ name) => changeCase(doc.id, (draft) => {
     const entry = draft.structures.find((other) => other.id === id);
@@ -33,14 +34,16 @@ export function OneStructure({ doc, id }) {
     });
     go('case', doc.id, 'structures');
   };
-  return html`<${Sheet} title="Structure ${letterOf(doc, id)}" back=${back} class="one-sheet" sign=${html`<${Sign} verdict=${verdictFor(id)} size=${26} />`}>
+  return html`<${Sheet} title="Structure ${letterOf(doc, id)}" back=${back} class="one-sheet"
+    sign=${html`<${Sign} verdict=${verdictFor(id)} size=${26} />`}>
     <${StructureDrawing} structure=${structure} atoms=${lit} label="Drawing of ${nameOf(doc, id)}" size="big" />
     <div class="two-up">
       <button type="button" class="toggle" aria-pressed=${String(intended)}
         onClick=${() => changeCase(doc.id, (draft) => { draft.intended = intended ? '' : id; })}>${intended ? 'Intended' : 'Mark as intended'}</button>
       <button type="button" class="button" onClick=${remove}>Remove</button>
     </div>
-    <label class="text-label">Call it<input class="text-field" autocomplete="off" value=${structure.name} placeholder="a name, if you like"
+    <label class="text-label">Call it<input class="text-field" autocomplete="off" value=${structure.name}
+      placeholder="a name, if you like"
       onInput=${(/** @type {any} */ e) => rename(e.currentTarget.value)} /></label>
     <${Trouble} fault=${fault} />
     ${described && html`<dl class="facts-table">

@@ -29,25 +29,32 @@ export function PasteStructure({ doc }) {
   };
   const fromClipboard = async () => { pastedStructure.value = await navigator.clipboard.readText(); };
   return html`<${Sheet} title="Paste a structure" back=${address('case', doc.id, 'structures')}
-      foot=${html`<button type="button" class="button primary" disabled=${!described || busy} onClick=${take}>Put it up</button>`}>
-    <textarea class="paste-box" rows="3" aria-label="SMILES or CTfile" spellcheck=${false} autocapitalize="off" value=${text}
+      foot=${html`<button type="button" class="button primary" disabled=${!described || busy}
+        onClick=${take}>Put it up</button>`}>
+    <textarea class="paste-box" rows="3" aria-label="SMILES or CTfile" spellcheck=${false} autocapitalize="off"
+      value=${text}
       placeholder="SMILES, or the text of a CTfile" aria-invalid=${fault ? 'true' : undefined}
       onInput=${(/** @type {any} */ e) => { pastedStructure.value = e.currentTarget.value; }}></textarea>
     <div class="two-up">
-      ${canReadClipboard && html`<button type="button" class="button" onClick=${() => fromClipboard().catch(() => {})}>From the clipboard</button>`}
-      <button type="button" class="button" disabled=${!text} onClick=${() => { pastedStructure.value = ''; }}>Empty the box</button>
+      ${canReadClipboard && html`<button type="button" class="button"
+        onClick=${() => fromClipboard().catch(() => {})}>From the clipboard</button>`}
+      <button type="button" class="button" disabled=${!text}
+        onClick=${() => { pastedStructure.value = ''; }}>Empty the box</button>
     </div>
     <${Trouble} fault=${fault} />
     ${described && html`<${Described} described=${described} />
-      <label class="text-label">Call it<input class="text-field" autocomplete="off" value=${named.value} placeholder="a name, if you like"
+      <label class="text-label">Call it<input class="text-field" autocomplete="off" value=${named.value}
+        placeholder="a name, if you like"
         onInput=${(/** @type {any} */ e) => { named.value = e.currentTarget.value; }} /></label>`}
   <//>`;
 }
 
 /** @param {{ described: Description }} props */
 export function Described({ described }) {
-  return html`<div class="described"><${Svg} svg=${described.svg} label="Drawing of ${described.smiles}" class="drawing-big" />
-    <p class="described-line"><b><${Formula} text=${described.formula} /></b> <span>${described.exact_mass.toFixed(4)}</span>
+  return html`<div class="described"><${Svg} svg=${described.svg} label="Drawing of ${described.smiles}"
+    class="drawing-big" />
+    <p class="described-line"><b><${Formula}
+      text=${described.formula} /></b> <span>${described.exact_mass.toFixed(4)}</span>
       <span>${plural(described.dbe, 'unsaturation')}</span></p>
     ${described.warnings.map((warning) => html`<p class="hint" key=${warning}>${warning}</p>`)}</div>`;
 }

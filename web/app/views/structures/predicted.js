@@ -21,22 +21,32 @@ export function Predicted({ doc, structure, onLight }) {
   const predicted = /** @type {Prediction | null} */ (value);
   if (fault) return html`<${Trouble} fault=${fault} />`;
   if (!predicted) return html`<p class="whisper">working it out</p>`;
-  return html`<h3><sup>1</sup>H</h3><ul class="picks">${[...predicted.h1].sort((a, b) => b.ppm - a.ppm).map((group, i) => html`<li key=${i}>
-      <button type="button" class="pick" onClick=${() => onLight(group.atoms)}><b>${fixed(group.ppm, 2)} ± ${fixed(group.sd, 2)}</b>
+  return html`<h3><sup>1</sup>H</h3><ul
+    class="picks">${[...predicted.h1].sort((a, b) => b.ppm - a.ppm).map((group, i) => html`<li key=${i}>
+      <button type="button" class="pick"
+        onClick=${() => onLight(group.atoms)}><b>${fixed(group.ppm, 2)} ± ${fixed(group.sd, 2)}</b>
         <span>${group.mult}${group.j.length ? html` <i>J</i> ${group.j.map((j) => fixed(j, 1)).join(', ')}` : ''}</span>
         <span>${group.n} H${group.exchangeable ? ', exchanges' : ''}</span></button></li>`)}</ul>
-    <h3><sup>13</sup>C</h3><ul class="picks">${[...predicted.c13].sort((a, b) => b.ppm - a.ppm).map((group, i) => html`<li key=${i}>
-      <button type="button" class="pick" onClick=${() => onLight(group.atoms)}><b>${fixed(group.ppm, 1)} ± ${fixed(group.sd, 1)}</b>
+    <h3><sup>13</sup>C</h3><ul
+      class="picks">${[...predicted.c13].sort((a, b) => b.ppm - a.ppm).map((group, i) => html`<li key=${i}>
+      <button type="button" class="pick"
+        onClick=${() => onLight(group.atoms)}><b>${fixed(group.ppm, 1)} ± ${fixed(group.sd, 1)}</b>
         <span><${Formula} text=${group.kind} /></span><span>${group.n} C</span></button></li>`)}</ul>
     <h3>IR</h3><ul class="picks">${[...predicted.ir].sort((a, b) => b.hi - a.hi).map((band, i) => html`<li key=${i}>
-      <button type="button" class="pick pick-wide" onClick=${() => onLight(band.atoms ?? [])}><b>${dashed(`${Math.round(band.hi)}-${Math.round(band.lo)}`)}</b>
-        <span><${Words} text=${band.group} /><span class="source"><${Words} text=${band.mode} />, ${band.strength}${band.absence_counts ? ', must show' : ''}</span></span></button></li>`)}</ul>
+      <button type="button" class="pick pick-wide"
+        onClick=${() => onLight(band.atoms ?? [])}><b>${dashed(`${Math.round(band.hi)}-${Math.round(band.lo)}`)}</b>
+        <span><${Words} text=${band.group} /><span class="source"><${Words}
+          text=${band.mode} />, ${band.strength}${band.absence_counts ? ', must show' : ''}</span></span></button></li>`)}</ul>
     <${Ions} ions=${predicted.ms.ions ?? []} onLight=${onLight} />`;
 }
 
 /** Ions to look for, likeliest first. @param {{ ions: import('../../types').MassExpectation[], onLight: (atoms: number[]) => void }} props */
 function Ions({ ions, onLight }) {
   if (!ions.length) return null;
-  return html`<h3>Electron ionisation</h3><ul class="picks">${[...ions].sort((a, b) => b.weight - a.weight).slice(0, IONS_SHOWN).map((ion, i) => html`<li key=${i}>
-    <button type="button" class="pick pick-wide" onClick=${() => onLight(ion.atoms)}><b>${fixed(ion.mz, 3)}</b><span><${Words} text=${ion.label} /></span></button></li>`)}</ul>`;
+  return html`<h3>Electron ionisation</h3><ul
+    class="picks">${[...ions].sort((a, b) => b.weight - a.weight).slice(0, IONS_SHOWN).map((ion, i) => html`<li
+      key=${i}>
+    <button type="button" class="pick pick-wide"
+      onClick=${() => onLight(ion.atoms)}><b>${fixed(ion.mz, 3)}</b><span><${Words}
+        text=${ion.label} /></span></button></li>`)}</ul>`;
 }

@@ -10,11 +10,13 @@ export function Structures({ doc }) {
   const { found } = currentCheck.value;
   const rivals = (found?.answer.candidates ?? []).map((candidate, at) => ({ candidate, at })).filter(({ at }) => !found?.order[at]);
   return html`<div class="structures">
-    ${doc.structures.length === 0 && html`<p class="empty">Put up the structure you mean to have made, and what else it could be.
+    ${doc.structures.length === 0 && html`<p
+      class="empty">Put up the structure you mean to have made, and what else it could be.
       A structure that fits says little until its look-alikes are ruled out.</p>`}
     <ul class="grid">
       ${doc.structures.map((entry) => html`<${StructureCard} key=${entry.id} doc=${doc} structure=${entry} />`)}
-      ${rivals.map(({ candidate, at }) => html`<${RivalCard} key=${candidate.smiles} doc=${doc} candidate=${candidate} at=${at} />`)}
+      ${rivals.map(({ candidate, at }) => html`<${RivalCard} key=${candidate.smiles} doc=${doc} candidate=${candidate}
+        at=${at} />`)}
     </ul>
     <${CheckTrouble} />
     <${Section} title="Add a structure">

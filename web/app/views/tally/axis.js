@@ -54,14 +54,19 @@ export function Axis({ doc, found, at }) {
       <text class="axis-word" x="0" y="14">measured</text>
       <text class="axis-word axis-word-expected" x="0" y=${MIDDLE + 98}>expected</text>
       ${groups.map((group, i) => html`<g key=${`p${i}`} class=${group.exchangeable ? 'axis-exchangeable' : ''}>
-        <rect class="axis-sure" x=${x(group.ppm + group.sd)} width=${Math.max(3, x(group.ppm - group.sd) - x(group.ppm + group.sd))} y=${MIDDLE + 12} height=${tall(group.n)} />
+        <rect class="axis-sure" x=${x(group.ppm + group.sd)}
+          width=${Math.max(3, x(group.ppm - group.sd) - x(group.ppm + group.sd))} y=${MIDDLE + 12} height=${tall(group.n)} />
         <path class="axis-expected" d="M${x(group.ppm)} ${MIDDLE + 12}v${tall(group.n)}" /></g>`)}
       ${up.map((stick) => html`<g key=${stick.ref}>
-        ${stick.hi > stick.lo && html`<rect class="axis-range" x=${x(stick.hi)} width=${x(stick.lo) - x(stick.hi)} y=${MIDDLE - 12 - tall(sizes || stick.n)} height=${tall(sizes || stick.n)} />`}
-        <path class="axis-measured" d="M${x((stick.lo + stick.hi) / 2)} ${MIDDLE - 12}v${-tall(sizes || stick.n)}" /></g>`)}
-      ${joins.map((join) => html`<path key=${join.key} class="axis-join" d="M${join.from} ${MIDDLE - 12}L${join.to} ${MIDDLE + 12}" />`)}
+        ${stick.hi > stick.lo && html`<rect class="axis-range" x=${x(stick.hi)} width=${x(stick.lo) - x(stick.hi)}
+          y=${MIDDLE - 12 - tall(sizes || stick.n)} height=${tall(sizes || stick.n)} />`}
+        <path class="axis-measured"
+          d="M${x((stick.lo + stick.hi) / 2)} ${MIDDLE - 12}v${-tall(sizes || stick.n)}" /></g>`)}
+      ${joins.map((join) => html`<path key=${join.key} class="axis-join"
+        d="M${join.from} ${MIDDLE - 12}L${join.to} ${MIDDLE + 12}" />`)}
       <path class="axis-rule" d="M0 ${HEIGHT - 34}H${WIDTH}" />
-      ${ticks.map((tick) => html`<g key=${tick}><path class="axis-tick" d="M${x(tick)} ${HEIGHT - 34}v7" /><text class="axis-word" text-anchor="middle" x=${x(tick)} y=${HEIGHT - 3}>${tick}</text></g>`)}
+      ${ticks.map((tick) => html`<g key=${tick}><path class="axis-tick" d="M${x(tick)} ${HEIGHT - 34}v7" /><text
+        class="axis-word" text-anchor="middle" x=${x(tick)} y=${HEIGHT - 3}>${tick}</text></g>`)}
     </svg>
     <figcaption class="hidden">${plural(up.length, 'measured signal')} against ${groups.length} expected:
       ${groups.map((group) => `${group.n} H at ${fixed(group.ppm, 2)}`).join(', ')} ppm.</figcaption>

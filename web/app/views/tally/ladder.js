@@ -28,14 +28,18 @@ export function Ladder({ doc, found, at }) {
   return html`<div class="ladder" role="group" aria-label="Structures by weight of evidence, best first">
     <div class="ladder-grid" aria-hidden="true"><svg viewBox="0 0 100 100" preserveAspectRatio="none">
       ${ticks.map((tick) => html`<path key=${tick} class="ladder-line" d="M${place(tick)} 0V100" />`)}</svg></div>
-    ${all.map((candidate, i) => html`<button type="button" class="rung" key=${candidate.smiles} aria-pressed=${String(i === at)}
+    ${all.map((candidate, i) => html`<button type="button" class="rung" key=${candidate.smiles}
+      aria-pressed=${String(i === at)}
       onClick=${() => touchStructure(doc, candidate.smiles)}
       aria-label="${structureName(doc, found, i)}: ${VERDICT_WORDS[candidate.verdict]}, ${signed(candidate.weight_db)} decibans">
-      <span class="rung-thumb"><${Thumb} doc=${doc} found=${found} at=${i} />${found.order[i] && html`<span class="rung-letter" aria-hidden="true">${letterOf(doc, found.order[i])}</span>`}</span>
-      <span class="rung-line"><svg viewBox="0 0 100 10" preserveAspectRatio="none"><path d="M0 5H${place(candidate.weight_db)}" /></svg>
+      <span class="rung-thumb"><${Thumb} doc=${doc} found=${found} at=${i} />${found.order[i] && html`<span
+        class="rung-letter" aria-hidden="true">${letterOf(doc, found.order[i])}</span>`}</span>
+      <span class="rung-line"><svg viewBox="0 0 100 10" preserveAspectRatio="none"><path
+        d="M0 5H${place(candidate.weight_db)}" /></svg>
         <span class="rung-sign" style=${{ left: `${place(candidate.weight_db)}%` }}><${Sign} verdict=${candidate.verdict} size=${22} quiet /></span></span>
     </button>`)}
-    <div class="ladder-scale" aria-hidden="true">${ticks.map((tick) => html`<span key=${tick} style=${{ left: `${place(tick)}%` }}>${signed(tick)}</span>`)}</div>
+    <div class="ladder-scale" aria-hidden="true">${ticks.map((tick) => html`<span
+      key=${tick} style=${{ left: `${place(tick)}%` }}>${signed(tick)}</span>`)}</div>
     <p class="ladder-words">decibans: each 10 is ten times as likely</p>
   </div>`;
 }

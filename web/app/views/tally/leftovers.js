@@ -27,5 +27,6 @@ export function Leftovers({ doc, found, at }) {
         ${entry.weight !== null && html`<b>${signed(entry.weight)}</b>`}</li>`)}</ul><//>`}
     ${candidate.unexplained.length > 0 && html`<${Section} title="Seen but not explained" id="stray-head">
       <ul class="plain-list">${candidate.unexplained.map((left) => html`<li key=${left.ref}>
-        <span><b><${Words} text=${readingLabel(doc, found, left.ref)} /></b><span class="source"><${Words} text=${left.text} /></span></span></li>`)}</ul><//>`}`;
+        <span><b><${Words} text=${readingLabel(doc, found, left.ref)} /></b><span class="source"><${Words}
+          text=${left.text} /></span></span></li>`)}</ul><//>`}`;
 }

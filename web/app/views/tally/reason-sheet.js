@@ -27,15 +27,19 @@ export function ReasonSheet({ doc, at, rowKey }) {
   const { value } = useAnswer('predict', candidate ? predictQuestion(doc, candidate.smiles) : null);
   const rows = found ? rowsOf(doc, found, at) : [];
   const row = rows.find((entry) => entry.key === rowKey);
-  if (!found || !candidate || !row) return html`<${Sheet} title="Reading" back=${back}><p class="hint">The tally has changed. Go back to see it as it stands.</p><//>`;
+  if (!found || !candidate || !row) return html`<${Sheet} title="Reading" back=${back}><p
+    class="hint">The tally has changed. Go back to see it as it stands.</p><//>`;
   const place = rows.indexOf(row);
   const foot = html`<div class="two-up">${[['Previous reading', -1], ['Next reading', 1]].map(([words, by]) => {
     const other = rows[place + Number(by)];
-    return other ? html`<a class="button" key=${words} href=${address('case', doc.id, 'tally', 'reason', String(at), other.key)}>${words}</a>`
+    return other ? html`<a class="button" key=${words}
+      href=${address('case', doc.id, 'tally', 'reason', String(at), other.key)}>${words}</a>`
       : html`<button type="button" class="button" key=${words} disabled>${words}</button>`;
   })}</div>`;
-  return html`<${Sheet} title=${html`<${Words} text=${row.label} />`} back=${back} sign=${html`<${CaseSign} doc=${doc} />`} foot=${foot}>
-    <${Drawing} structure=${candidate.smiles} atoms=${row.atoms} label="${structureName(doc, found, at)}, atoms concerned marked" width=${354} height=${230} class="drawing-big" />
+  return html`<${Sheet} title=${html`<${Words} text=${row.label} />`} back=${back} sign=${html`<${CaseSign}
+    doc=${doc} />`} foot=${foot}>
+    <${Drawing} structure=${candidate.smiles} atoms=${row.atoms}
+      label="${structureName(doc, found, at)}, atoms concerned marked" width=${354} height=${230} class="drawing-big" />
     <p class="reason"><b>Speaks ${row.weight >= 0 ? 'for' : 'against'} ${structureName(doc, found, at)}, ${signed(row.weight)}.</b></p>
     <ul class="reasons">${row.findings.map((finding, i) => html`<li key=${i}>
       <p><${Words} text=${finding.text} /></p><b>${signed(finding.weight_db)}</b></li>`)}</ul>
@@ -47,7 +51,8 @@ export function ReasonSheet({ doc, at, rowKey }) {
 /** Where the numbers of the findings come from. @param {{ row: import('./row-data.js').TallyRow }} props */
 function Sources({ row }) {
   const all = [...new Set(row.findings.flatMap((finding) => finding.source.split('; ')).filter(Boolean))];
-  return all.length ? html`<${Section} title="Sources"><ul>${all.map((source) => html`<li class="source" key=${source}>${source}</li>`)}</ul><//>` : null;
+  return all.length ? html`<${Section} title="Sources"><ul>${all.map((source) => html`<li class="source"
+    key=${source}>${source}</li>`)}</ul><//>` : null;
 }
 
 /** The expected number of one kind of prediction, with its spread and decimals.

@@ -56,7 +56,8 @@ export function Rows({ doc, rows, at }) {
   const line = (/** @type {TallyRow} */ row) => html`<${Row} key=${row.key} doc=${doc} row=${row} at=${at} full=${full}
     words=${row.predicted.map((ref) => expected(ref, candidate, predicted)).find(Boolean) ?? row.findings[0]?.text ?? ''} />`;
   return html`<ul class="tally-rows">${speaking.map(line)}</ul>
-    ${silent.length > 0 && html`<details class="silent"><summary>${plural(silent.length, 'reading')} that ${silent.length === 1 ? 'says' : 'say'} nothing either way</summary>
+    ${silent.length > 0 && html`<details
+      class="silent"><summary>${plural(silent.length, 'reading')} that ${silent.length === 1 ? 'says' : 'say'} nothing either way</summary>
       <ul class="tally-rows">${silent.map(line)}</ul></details>`}`;
 }
 
@@ -64,6 +65,7 @@ export function Rows({ doc, rows, at }) {
 const Row = ({ doc, row, at, full, words }) => html`<li>
   <a class="tally-row" href=${address('case', doc.id, 'tally', 'reason', String(at), row.key)}>
     <span class="tally-words"><b><${Words} text=${row.label} /></b><span><${Words} text=${words} /></span></span>
-    <span class="tally-weight"><span class="hidden">${row.weight >= 0 ? 'for' : 'against'}, decibans </span>${signed(row.weight)}</span>
+    <span class="tally-weight"><span
+      class="hidden">${row.weight >= 0 ? 'for' : 'against'}, decibans </span>${signed(row.weight)}</span>
     <${Balance} db=${row.weight} full=${full} />
   </a></li>`;

@@ -35,7 +35,8 @@ export function Tally({ doc }) {
     <${Rows} doc=${doc} rows=${rows} at=${at} />
     <${Leftovers} doc=${doc} found=${found} at=${at} />
     ${wide.value ? html`<${Table} doc=${doc} found=${found} />`
-      : html`<a class="button" href=${address('case', doc.id, 'tally', 'table')}>Readings against structures, as a table</a>`}
+      : html`<a class="button"
+        href=${address('case', doc.id, 'tally', 'table')}>Readings against structures, as a table</a>`}
   </div>`;
 }
 
@@ -46,6 +47,7 @@ function Nothing({ doc }) {
   const bare = !doc.h1.length && !doc.c13.length && !doc.ir.length && !doc.irClear.length && !doc.formula && !doc.hrms.found && !doc.ms.length && !doc.wet.length;
   if (bare) return html`<div class="empty"><p>No reading has been entered yet.</p>
     <a class="button primary" href=${address('case', doc.id, 'readings')}>Enter readings</a></div>`;
-  if (engineState.value === 'waking') return html`<p class="empty">The chemistry is waking. The verdict appears here by itself.</p>`;
+  if (engineState.value === 'waking') return html`<p
+    class="empty">The chemistry is waking. The verdict appears here by itself.</p>`;
   return html`<p class="empty" role="status">Weighing the readings.</p>`;
 }

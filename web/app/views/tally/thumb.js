@@ -11,5 +11,6 @@ export function Thumb({ doc, found, at }) {
   const name = structureName(doc, found, at);
   if (own) return html`<${StructureDrawing} structure=${own} label=${name} size="thumb" />`;
   const candidate = found.answer.candidates[at];
-  return candidate ? html`<${Drawing} structure=${candidate.smiles} label=${name} width=${100} height=${60} class="drawing-thumb" />` : null;
+  return candidate ? html`<${Drawing} structure=${candidate.smiles} label=${name} width=${100} height=${60}
+    class="drawing-thumb" />` : null;
 }
