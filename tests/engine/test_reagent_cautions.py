@@ -37,6 +37,7 @@ def test_every_code_of_the_table_has_words() -> None:
 
 def test_every_caution_a_reagent_names_exists() -> None:
     known = {row["reagent"] for row in load_table("reagent_cautions")}
+    assert {c for row in load_table("reactions") for c in row["cautions"].split(";") if c} <= known
     assert {row["caution"] for row in load_table("reagents") if row["caution"]} <= known
 
 
@@ -56,7 +57,7 @@ def test_the_worst_comes_first() -> None:
 
 
 def test_cautions_are_those_of_what_was_added_and_of_the_step() -> None:
-    """An ozonide is nobody's reagent, yet the danger of an ozonolysis (Prudent Practices in the Laboratory)."""
+    """An ozonide is nobody's reagent, yet the danger of an ozonolysis (Prudent Practices, 2011)."""
     answer = call("outcomes", {"structure": "C1CCC=CC1", "reagents": "1) O3 2) Me2S"})
     told = [caution["reagent"] for caution in answer["cautions"]]
     assert told[0] == "ozone"
