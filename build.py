@@ -161,13 +161,11 @@ def build(debug: bool = False, groups: tuple[str, ...] = ("host",)) -> None:
 def serve(port: int, lan: bool, opens: bool) -> int:
     """Serve dist/ until interrupted."""
     flags = [flag for flag, is_set in (("--lan", lan), ("--open", opens)) if is_set]
-    command: Command = [PYTHON, "-m", "hoodside_host", "--dist", DIST, "--port", str(port), *flags]
-    host = subprocess.Popen(command, cwd=ROOT)
-    while True:
-        try:
-            return host.wait()
-        except KeyboardInterrupt:  # the host has had the same signal and is closing
-            continue
+    command = [str(PYTHON), "-m", "hoodside_host", "--dist", str(DIST), "--port", str(port), *flags]
+    if not ON_WINDOWS:  # in this process's place, so that whatever ends it ends the host
+        os.chdir(ROOT)
+        os.execv(command[0], command)
+    return subprocess.call(command, cwd=ROOT)
 
 
 def test(pytest_arguments: list[str]) -> int:

@@ -15,6 +15,7 @@ const rdkitFolder = dirname(npm.resolve('@rdkit/rdkit'));
 /** @param {string} out @param {boolean} debug */
 async function compileArchives(out, debug) {
   // Byte code without columns is smaller and sooner read; the lines stay.
+  /** @type {Record<string, string>} */
   const env = debug ? {} : { PYTHONNODEBUGRANGES: '1' };
   const python = await loadPyodide({ indexURL: `${pyodideFolder}/`, env });
   for (const [inside, outside] of [['/stock', pyodideFolder], ['/py', join(repo, 'py')], ['/tools', here],

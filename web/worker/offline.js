@@ -49,8 +49,8 @@ async function register() {
 /** @param {ServiceWorkerRegistration} registration @param {(state: OfflineState, kept?: Kept) => void} onState */
 async function followUntilReady(registration, onState) {
   for (let failures = 0; ;) {
-    const { active, waiting, installing } = registration;
-    const worker = active ?? waiting ?? installing;
+    const worker = registration.active ?? registration.waiting ?? registration.installing;
+    const active = worker?.state === 'activated' ? worker : null;
     const kept = worker && await ask(worker, 'WHAT_IS_KEPT', ASK_MS);
     if (active && isWhole(kept)) return onState('ready', kept);
     onState('fetching', kept ?? undefined);
