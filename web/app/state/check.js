@@ -12,7 +12,8 @@ import { summaryOf } from '../words/verdict.js';
 
 /** The last answer of each case seen since the start. @type {import('@preact/signals').Signal<Record<string, Checked>>} */
 export const checked = signal({});
-/** @type {import('@preact/signals').Signal<import('../types').Fault | null>} */
+/** Why the last check gave no answer; `row` is the reading the engine named, '' when it named none.
+ * @type {import('@preact/signals').Signal<(import('../types').Fault & { row: string }) | null>} */
 export const checkFault = signal(null);
 /** When the running check began, 0 when none runs. */
 export const checkingSince = signal(0);
@@ -52,7 +53,9 @@ async function run(id, asked) {
     if (doc) noteSummary(id, summaryOf(doc, /** @type {Checked} */ (checked.value[id])));
   } catch (error) {
     failedKey = asked.key;
-    checkFault.value = asFault(error);
+    const fault = asFault(error);
+    const [, kind, at] = fault.field.match(/^(\w+)\[(\d+)\]/) ?? [];
+    checkFault.value = { ...fault, row: asked.refs[`${kind}:${at}`] ?? '' };
   }
   running = null;
   checkingSince.value = 0;

@@ -10,21 +10,13 @@ export const takeUpdate = signal(/** @type {(() => void) | null} */ (null));
 
 export function startOffline() {
   watchOffline({
-    onState: async (state, kept) => {
-      if (state === 'ready') await untilAtWork();
+    onState: (state, kept) => {
       offlineProgress.value = kept && kept.present < kept.total ? `${kept.present} of ${kept.total} files kept.` : '';
       offline.value = state;
       if (state === 'ready') askToStay();
     },
     onUpdate: (apply) => { takeUpdate.value = apply; },
   });
-}
-
-/** All files kept is not enough: until the worker has taken up its work, a reload would still ask the network. */
-async function untilAtWork() {
-  const { active } = await navigator.serviceWorker.ready;
-  if (!active || active.state === 'activated') return;
-  await new Promise((resolve) => { active.addEventListener('statechange', resolve, { once: true }); });
 }
 
 /** Ask the browser not to throw the cases away when the device runs short; it may decline. */

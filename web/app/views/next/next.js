@@ -22,11 +22,17 @@ export function NextStation({ doc }) {
   const stand = found.answer.candidates.filter((candidate) => candidate.verdict !== 'clashes').length;
   const advice = found.answer.next;
   return html`<div class="next ${fresh ? '' : 'stale'}">
-    <p class="next-head">${COUNTS[stand] ?? stand} ${stand === 1 ? 'structure still stands' : 'structures still stand'}.
-      ${advice.length ? ' Best first:' : stand > 1 ? ' No further measurement on the list would tell them apart.' : ' Nothing more is needed to tell them apart.'}</p>
+    <p class="next-head">${COUNTS[stand] ?? stand} ${stand === 1 ? 'structure still stands' : 'structures still stand'}.${' '}
+      ${advice.length ? 'Best first:' : outlook(stand)}</p>
     <ul class="slips-next">${advice.map((entry, i) => html`<${Slip} key=${entry.measure + i} doc=${doc}
       found=${found} advice=${entry} />`)}</ul>
   </div>`;
+}
+
+/** What to say when there is nothing to measure. @param {number} stand structures still standing */
+function outlook(stand) {
+  if (stand > 1) return 'No measurement on the list would tell them apart.';
+  return stand === 1 ? 'Put up what else it could be before resting on it.' : 'Put up another structure: none of these made the readings.';
 }
 
 /** @param {{ doc: CaseDoc, found: Checked, advice: Advice }} props */

@@ -1,6 +1,7 @@
 import { html } from 'htm/preact';
 import { Formula } from '../../components/chem.js';
 import { Section } from '../../components/parts.js';
+import { checkFault } from '../../state/check.js';
 import { changeCase } from '../../state/cases.js';
 import { newId } from '../../state/document.js';
 import { protonFault } from '../../state/input.js';
@@ -55,9 +56,12 @@ export function ProtonSection({ doc }) {
   <//>`;
 }
 
+/** What the engine said against a row at the last check. @param {string} id */
+export const refusalOf = (id) => (checkFault.value?.row === id ? checkFault.value.message : '');
+
 /** @param {{ doc: CaseDoc, row: ProtonRow, named: string }} props */
 function Slip({ doc, row, named }) {
-  const fault = protonFault(row);
+  const fault = protonFault(row) || refusalOf(row.id);
   return html`<li><a class="slip ${named ? 'slip-solvent' : ''} ${fault ? 'slip-wrong' : ''}"
       href=${address('case', doc.id, 'readings', 'h1', row.id)}>
     <b class="slip-shift ${row.shift.length > 5 ? 'slip-range' : ''}">${dashed(row.shift) || '?'}</b>

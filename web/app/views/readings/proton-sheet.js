@@ -11,7 +11,7 @@ import { toNumbers, toRange } from '../../words/numbers.js';
 import { dashed, highFirst } from '../../words/readings.js';
 import { CaseSign } from '../case/sign.js';
 import { Printout } from './photos.js';
-import { Sum } from './proton-section.js';
+import { refusalOf, Sum } from './proton-section.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {import('../../types').ProtonRow} ProtonRow */
@@ -61,6 +61,7 @@ export function ProtonSheet({ doc, rowId }) {
 function Fields({ doc, row, set, needsJ, another }) {
   const fault = protonFault(row);
   const about = (/** @type {RegExp} */ words) => (words.test(fault) ? fault : '');
+  const refusal = fault ? '' : refusalOf(row.id);
   const broad = row.mult.startsWith('br');
   const pattern = broad ? row.mult.slice(3) || 'br' : row.mult;
   const pick = (/** @type {string} */ mult) => {
@@ -69,7 +70,7 @@ function Fields({ doc, row, set, needsJ, another }) {
     else if (mult && !row.h.trim()) /** @type {any} */ (document.querySelector('input[name=h]'))?.focus();
   };
   return html`<div class="fields-2">
-      <${PadField} label="Shift, or a range" name="shift" value=${row.shift} unit="ppm" first fault=${about(/shift/)}
+      <${PadField} label="Shift, or a range" name="shift" value=${row.shift} unit="ppm" first fault=${about(/shift/) || refusal}
         onInput=${(/** @type {string} */ shift) => set({ shift })} onEnter=${another} />
       <${PadField} label=${doc.raw ? 'Step height' : 'Protons'} name="h" value=${row.h} unit=${doc.raw ? '' : 'H'}
         fault=${about(/number of H/)}
