@@ -1,9 +1,10 @@
 """Report lines in the styles that author guidelines ask for, read to the value.
 
-Styles: ACS ("1H NMR (400 MHz, CDCl3) δ 7.81 (d, J = 8.2 Hz, 2H)", IR "(film) ν 3350 cm-1", HRMS "calcd
-for ... found ...", "Anal. Calcd for ..."), RSC ("δH(400 MHz; CDCl3; Me4Si) 7.81 (2 H, d, J 8.2)",
-"νmax(film)/cm-1", "m/z (EI) 148 (M+, 35%)", "Found: C, ...; requires C, ..."), Wiley ("δ = 7.81 (d, 3J(H,H) = 8.2 Hz, 2 H; CH)", "elemental analysis calcd (%) for ..."): the publishers' guidelines for experimental sections, from memory.
-The compounds are made up for the purpose. Other variants are common practice.
+ACS: "1H NMR (400 MHz, CDCl3) δ 7.81 (d, J = 8.2 Hz, 2H)", "IR (film) ν 3350 cm-1", "HRMS ... calcd for ...,
+found ...", "Anal. Calcd for ...". RSC: "δH(400 MHz; CDCl3; Me4Si) 7.81 (2 H, d, J 8.2)", "νmax(film)/cm-1",
+"m/z (EI) 148 (M+, 35%)", "Found: C, ...; C10H12O requires C, ...". Wiley: "δ = 7.81 (d, 3J(H,H) = 8.2 Hz,
+2 H; CH)", "elemental analysis calcd (%) for ...". All from the publishers' guidelines for experimental
+sections, from memory; other variants are common practice. The lines are made up for the purpose.
 """
 
 from __future__ import annotations
