@@ -1,5 +1,6 @@
 import { html } from 'htm/preact';
 import { Grow } from '../grow/grow.js';
+import { Run } from '../run/run.js';
 import { NameSheet } from './name-sheet.js';
 import { OneStructure } from './one-sheet.js';
 import { PasteStructure } from './paste-sheet.js';
@@ -9,6 +10,7 @@ import { PasteStructure } from './paste-sheet.js';
 /** @type {Record<string, (doc: CaseDoc, arg: string) => any>} */
 const SHEETS = {
   grow: (doc) => html`<${Grow} doc=${doc} />`,
+  run: (doc, arg) => html`<${Run} doc=${doc} sheet=${arg} />`,
   paste: (doc) => html`<${PasteStructure} doc=${doc} />`,
   name: (doc) => html`<${NameSheet} doc=${doc} />`,
   one: (doc, arg) => html`<${OneStructure} doc=${doc} id=${arg} />`,

@@ -1,0 +1,18 @@
+/** A compound put into a step: the start or its partner. */
+export interface Compound { smiles: string; name: string }
+/** What was run. `steps` hold reagents by name, in the order they were added; `ticks` what is to be taken over,
+ * by SMILES, where it differs from what is proposed. */
+export interface Run { start: Compound | null; partner: Compound | null; steps: string[][]; ticks: Record<string, boolean> }
+export interface Outcome {
+  smiles: string; role: 'product' | 'by-product' | 'over-reaction' | 'no reaction'; rule: string; name: string;
+  note: string; stereo: string; cautions: string[]; source: string; formula: string;
+}
+export interface ReagentCaution {
+  reagent: string; gravest: string; words: string; incompatibilities: string; quench: string; source: string;
+}
+export interface Outcomes {
+  outcomes: Outcome[]; understood: string[]; unknown: string[]; cautions: ReagentCaution[]; no_caution: string[];
+}
+export interface Reagent { name: string; names: string[]; shelf: string }
+/** Whole conditions, taken with one tap. `partner` says what organic partner they want, "" for none. */
+export interface Conditions { label: string; reagents: string; partner: string }
