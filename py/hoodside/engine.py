@@ -19,6 +19,7 @@ METHODS: dict[str, str] = {
     "formula": "formulas:formula",
     "formulas": "formulas:formulas",
     "parse": "readings:parse",
+    "jcamp": "readings:jcamp",
     "solvents": "readings:solvents",
     "wet_tests": "readings:wet_tests",
     "check": "checking:check",

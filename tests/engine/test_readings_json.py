@@ -7,7 +7,7 @@ import json
 from typing import Any
 
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from hoodside.errors import InvalidInputError
@@ -166,6 +166,7 @@ JSON = st.recursive(
 KEYS = ["h1", "c13", "ir", "ir_clear", "ms", "hrms", "analysis", "wet", "mhz", "solvent", "text", "formula"]
 
 
+@settings(deadline=None)
 @given(st.dictionaries(st.sampled_from(KEYS), JSON, max_size=4))
 def test_whatever_comes_is_read_or_refused_in_words(case: dict[str, Any]) -> None:
     with contextlib.suppress(InvalidInputError):

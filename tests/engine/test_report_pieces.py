@@ -97,7 +97,7 @@ _TOKENS = (
 WORDS = st.sampled_from(_TOKENS.split("|"))
 
 
-@settings(max_examples=400, deadline=2_000)
+@settings(max_examples=400, deadline=None)
 @given(st.lists(WORDS | st.text(max_size=6), max_size=60).map(" ".join) | st.text(max_size=300))
 def test_any_text_is_read_or_named(text: str) -> None:
     parsed = parse_report(text)

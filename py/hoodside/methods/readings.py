@@ -8,10 +8,14 @@ from hoodside.facts import load_table
 from hoodside.methods.arguments import short_text
 from hoodside.predict.wet import wet_tests as all_wet_tests
 from hoodside.readings.from_json import readings_to_json
+from hoodside.readings.jcamp.curve import thinned
+from hoodside.readings.jcamp.records import MOST_CHARS as MOST_JCAMP_CHARS
+from hoodside.readings.jcamp.spectrum import Spectrum
 from hoodside.readings.solvents import solvent_names
 
 #: Values that another row of the same solvent gives better.
 _SUPERSEDED = "alternative value"
+_SHOWN_POINTS = 2_000
 
 
 def parse(text: str) -> dict[str, Any]:
@@ -23,6 +27,36 @@ def parse(text: str) -> dict[str, Any]:
         "readings": readings_to_json(parsed.readings),
         "unread": [{"text": u.text, "start": u.start, "end": u.end, "why": u.why} for u in parsed.unread],
         "pieces": [{"text": p.text, "start": p.start, "end": p.end, "means": p.means} for p in parsed.pieces],
+    }
+
+
+def jcamp(text: str) -> dict[str, Any]:
+    """The spectra of a JCAMP-DX file, thinned for display, and the readings taken from them."""
+    from hoodside.readings.jcamp import read_jcamp
+
+    found = read_jcamp(short_text(text, "text", most=MOST_JCAMP_CHARS))
+    spectra = [_spectrum(spectrum) for spectrum in found.spectra]
+    return {
+        **spectra[0],
+        "readings": readings_to_json(found.readings),
+        "warnings": list(found.warnings),
+        "spectra": spectra,
+    }
+
+
+def _spectrum(spectrum: Spectrum) -> dict[str, Any]:
+    x, y = thinned(spectrum.x, spectrum.y, _SHOWN_POINTS)
+    return {
+        "kind": spectrum.kind,
+        "title": spectrum.title,
+        "x": [round(value, 4) for value in x],
+        "y": [float(f"{value:.5g}") for value in y],
+        "x_unit": spectrum.x_unit,
+        "y_unit": spectrum.y_unit,
+        "points": len(spectrum.x),
+        "peaks": [{"x": p.x, "y": p.y, "note": p.note} for p in spectrum.peaks],
+        "nucleus": spectrum.nucleus,
+        "mhz": spectrum.mhz,
     }
 
 
