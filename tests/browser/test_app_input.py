@@ -69,6 +69,15 @@ def test_shift_that_is_no_number_is_kept_and_not_counted(hand: Hand) -> None:
     expect(hand.page.locator(".slip")).to_contain_text("not counted")
 
 
+def test_shift_out_of_all_range_is_said_at_its_row(hand: Hand) -> None:
+    hand.put_up("CCO")
+    hand.station("Readings")
+    hand.tap("Add a signal")
+    hand.keys("4 0 0")
+    hand.back()
+    expect(hand.page.locator(".slip")).to_contain_text("400 ppm is no possible 1H shift", timeout=60_000)
+
+
 def test_negative_shift_is_taken(hand: Hand) -> None:
     """Protons above the face of an aromatic ring and hydrides lie below zero (common practice)."""
     hand.tap("Add a signal")
