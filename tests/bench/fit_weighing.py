@@ -34,7 +34,7 @@ def published() -> list[dict[str, Any]]:
 def histogram(
     values: Iterable[float], lo: float, hi: float, width: float, blur: int, floor: float
 ) -> list[list[str]]:
-    """Rows (lo, hi, share): counts smoothed by a triangle of ``blur`` bins each side, plus ``floor`` per bin."""
+    """Rows (lo, hi, share): counts smoothed over ``blur`` bins each side, plus ``floor`` per bin."""
     bins = round((hi - lo) / width)
     counts = [0.0] * bins
     for value in values:
@@ -83,25 +83,29 @@ def write_backgrounds(cases: list[dict[str, Any]]) -> None:
 
 
 def count_patterns(cases: list[dict[str, Any]]) -> dict[str, Counter[str]]:
-    """Printed patterns by kind of predicted one, from the assignment of every truth."""
-    from hoodside.molecule import read_structure
-    from hoodside.predict.whole import predict_all
+    """Printed patterns by kind of expected one, from the assignment of every truth."""
     from hoodside.readings.from_json import readings_from_json
-    from hoodside.weigh.protons.pattern import expected_kind, printed_kind
+    from hoodside.readings.patterns import bare
+    from hoodside.weigh.expectations import expectations
+    from hoodside.weigh.protons.pattern import relation
     from hoodside.weigh.protons.signals import prepare
     from hoodside.weigh.protons.solve import solve
 
     counts: dict[str, Counter[str]] = {"anyhow": Counter()}
     for case in cases:
         readings = readings_from_json(case)
-        groups = predict_all(read_structure(case["smiles"]), readings.solvent, readings.mhz or 400.0).h1
-        solution = solve(groups, prepare(readings))
+        expected = expectations(case["smiles"], readings)
+        solution = solve(expected.h1, expected.patterns, prepare(readings))
         for k, signal in enumerate(solution.signals):
-            held = [groups[m] for m in solution.members(k)]
-            if signal.pattern:
-                counts["anyhow"][printed_kind(signal.pattern)] += 1
-                if held:
-                    counts.setdefault(expected_kind(held), Counter())[printed_kind(signal.pattern)] += 1
+            members = solution.members(k)
+            if not signal.pattern:
+                continue
+            broad = ["broad"] if signal.pattern.startswith("br") else []
+            counts["anyhow"].update([bare(signal.pattern), "all", *broad])
+            if members:
+                awaited = expected.patterns.awaited(members)
+                row = counts.setdefault(awaited.kind, Counter())
+                row.update([relation(awaited, signal.pattern), "all", *broad])
     return counts
 
 
@@ -116,10 +120,21 @@ def write_patterns(counts: dict[str, Counter[str]]) -> None:
 def forget() -> None:
     """Drop what was read from the tables before."""
     from hoodside.facts import load_table
-    from hoodside.weigh import background
-    from hoodside.weigh.protons import pattern, score
+    from hoodside.weigh import background, expectations
+    from hoodside.weigh.protons import coupling, pattern, score
 
-    for cached in (load_table, background.spread, pattern._counts, pattern.kind_weight, score._anyhow_count):
+    for cached in (
+        load_table,
+        background.spread,
+        pattern._counts,
+        pattern._shares,
+        pattern._anyhow,
+        pattern.anyhow_share,
+        pattern._broad_weight,
+        coupling._one,
+        score._anyhow_count,
+        expectations._kept,
+    ):
         cached.cache_clear()
 
 
@@ -128,7 +143,9 @@ def main() -> None:
     if "--write" in sys.argv:
         write_backgrounds(cases)
         if not (FACTS / "multiplicity_confusion.csv").is_file():
-            write_patterns({"anyhow": Counter({"m": 700, "d": 460, "s": 440, "t": 200})})
+            write_patterns(
+                {"anyhow": Counter({"m": 700, "d": 460, "s": 440, "t": 200, "broad": 90, "all": 2300})}
+            )
     for _ in range(ROUNDS if "--write" in sys.argv else 1):
         counts = count_patterns(cases)
         if "--write" in sys.argv:

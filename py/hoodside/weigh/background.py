@@ -1,4 +1,4 @@
-"""How readings are spread over all published compounds: the "some other compound" of every likelihood ratio."""
+"""How readings spread over all published compounds: the "some other compound" of every likelihood ratio."""
 
 from __future__ import annotations
 

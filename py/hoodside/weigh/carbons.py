@@ -9,6 +9,8 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
+from functools import lru_cache
+from math import hypot
 
 from hoodside.predict.model import CarbonGroup
 from hoodside.readings import CarbonLine, Readings
@@ -23,7 +25,9 @@ _HALF = 0.15
 #: Lines this near are often seen as one, ppm.
 _COINCIDE = 0.4
 #: Share of predictions or lines that are wrong outright.
-_WRONG = 0.01
+_WRONG = 0.03
+#: Added in quadrature to the stated deviation of a shift, ppm; see the note in ``protons.score``.
+_ADDED = 1.2
 #: A group whose line is not listed, decibans: with and without H of its own (common practice).
 _MISSING_WITH_H, _MISSING_QUATERNARY = -14.0, -11.0
 #: Share of kinds of carbon (DEPT) that are misread.
@@ -45,7 +49,7 @@ def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, fluorines: 
     """All 13C lines of the readings against the predicted groups of a structure with so many F."""
     if not readings.c13:
         return Weighed()
-    lines = [_prepared(line, readings.solvent, fluorines) for line in readings.c13]
+    lines = _all_prepared(readings.c13, readings.solvent, fluorines > 0)
     given = pair_lines(groups, lines)
     findings = [*_line_findings(groups, lines, given), *_missing_findings(groups, given)]
     return Weighed(
@@ -64,10 +68,15 @@ def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, fluorines: 
     )
 
 
-def _prepared(line: CarbonLine, solvent: str, fluorines: int) -> _Line:
+@lru_cache(maxsize=8)
+def _all_prepared(lines: tuple[CarbonLine, ...], solvent: str, fluorine: bool) -> list[_Line]:
+    return [_prepared(line, solvent, fluorine) for line in lines]
+
+
+def _prepared(line: CarbonLine, solvent: str, fluorine: bool) -> _Line:
     share = spread("c13_background").between(line.ppm - _HALF, line.ppm + _HALF)
     stray = carbon_stray(line, solvent)
-    if fluorines and stray.weight_db < _SPLIT_BY_F:
+    if fluorine and stray.weight_db < _SPLIT_BY_F:
         stray = Stray(_SPLIT_BY_F, "a line split by fluorine")
     return _Line(line, decibans(share), stray)
 
@@ -138,7 +147,7 @@ def _fill(
 def place_weight(group: CarbonGroup, line: CarbonLine, anyhow_db: float) -> float:
     """Weight of a line at its place, and of its kind where told, for a group."""
     lo, hi = line.ppm - _HALF, line.ppm + _HALF
-    inside = t_between(lo, hi, group.ppm, group.sd)
+    inside = t_between(lo, hi, group.ppm, hypot(group.sd, _ADDED))
     weight = decibans((1 - _WRONG) * inside + _WRONG * odds(anyhow_db)) - anyhow_db
     return weight + _kind_weight(group, line)
 

@@ -6,7 +6,7 @@ from functools import cached_property, lru_cache
 
 from hoodside.molecule import Structure, read_structure
 from hoodside.predict.carbon import predict_carbons
-from hoodside.predict.coupling import predict_couplings
+from hoodside.predict.coupling import Coupling, predict_couplings
 from hoodside.predict.formula import Formula, formula_of
 from hoodside.predict.infrared import predict_bands
 from hoodside.predict.mass import predict_ions
@@ -14,6 +14,7 @@ from hoodside.predict.model import CarbonGroup, IrExpectation, MassExpectation, 
 from hoodside.predict.multiplet import apply_multiplets
 from hoodside.predict.proton import predict_protons
 from hoodside.readings import Readings
+from hoodside.weigh.protons.pattern import Patterns
 
 USUAL_SOLVENT, USUAL_MHZ = "CDCl3", 400.0
 #: Structures kept between checks: a case with its rivals is weighed again after every reading typed.
@@ -35,8 +36,20 @@ class Expectations:
     @cached_property
     def h1(self) -> tuple[ProtonGroup, ...]:
         """1H groups with patterns and couplings."""
-        groups = predict_protons(self.structure, self._solvent)
-        return apply_multiplets(groups, predict_couplings(self.structure, groups), self._mhz)
+        return apply_multiplets(self._bare_h1, self._couplings, self._mhz)
+
+    @cached_property
+    def patterns(self) -> Patterns:
+        """What each set of 1H groups should look like as one signal."""
+        return Patterns(self.h1, self._couplings, self._mhz)
+
+    @cached_property
+    def _bare_h1(self) -> tuple[ProtonGroup, ...]:
+        return predict_protons(self.structure, self._solvent)
+
+    @cached_property
+    def _couplings(self) -> tuple[Coupling, ...]:
+        return tuple(predict_couplings(self.structure, self._bare_h1))
 
     @cached_property
     def c13(self) -> tuple[CarbonGroup, ...]:

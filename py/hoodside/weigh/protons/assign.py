@@ -80,7 +80,7 @@ class _Search:
         puzzle = self.puzzle
         fixed = sorted((g for g, r in enumerate(puzzle.roaming) if not r), key=lambda g: -puzzle.shifts[g])
         signals = sorted(range(len(puzzle.places)), key=lambda s: -puzzle.places[s])
-        best, back = self._table(fixed, signals)
+        back = self._table(fixed, signals)
         given = [NOWHERE] * len(puzzle.sizes)
         at = len(fixed)
         for row in range(len(signals), 0, -1):
@@ -99,7 +99,7 @@ class _Search:
         for s in signals:
             best, taken = self._next_row(best, fixed, s)
             back.append(taken)
-        return best, back
+        return back
 
     def _next_row(
         self, before: list[float], fixed: list[int], s: int

@@ -3,8 +3,8 @@
 For a signal given the groups B of a structure: log of (product over B of the chance that the group lies in
 the signal's window) x (chance of the printed number of H) x (chance of the printed pattern) x (couplings),
 over the same for the signals of published compounds at large. A group more in a signal costs its chance to
-lie just there, so that accidental overlap is allowed but not free. The two H of one CH2 share their errors and
-so count as one place when they share a signal.
+lie just there, so that accidental overlap is allowed but not free. The two H of one CH2 share their errors
+and so count as one place when they share a signal.
 """
 
 from __future__ import annotations
@@ -12,18 +12,22 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cache
-from math import exp
+from math import exp, hypot
 
 from hoodside.facts import load_table
 from hoodside.predict.model import ProtonGroup
 from hoodside.weigh.background import size_class
 from hoodside.weigh.decibans import decibans, odds, t_between
-from hoodside.weigh.protons.coupling import coupling_weight
-from hoodside.weigh.protons.pattern import is_pair, pattern_weight
+from hoodside.weigh.protons.pattern import Patterns
 from hoodside.weigh.protons.signals import Signal
 
+#: Degrees of freedom of the error law of 1H shifts (that of the predictor).
+_FREEDOM = 3
 #: Share of predictions or printed shifts that are wrong outright.
-_WRONG = 0.01
+_WRONG = 0.04
+#: What the stated deviation of a shift is multiplied with, and what is added in quadrature (ppm): assignments
+#: are not known in published spectra, so stated errors come out too small. Fitted with ``TRUST``.
+_WIDER, _ADDED = 1.4, 0.03
 #: Spread of a printed number of H about the true one: absolute, and relative for raw integrals.
 _COUNT_SD, _RAW_SD = 0.25, 0.08
 #: Share of numbers of H that are off by whole H, falling off by e per H.
@@ -51,17 +55,20 @@ class Terms:
 
 @dataclass(frozen=True, slots=True)
 class Scorer:
-    """Weighs signals against the groups of one structure. ``places[g][s]``: weight of group g's place alone."""
+    """Weighs signals against the groups of one structure. ``places[g][s]``: the place of g in s alone."""
 
     groups: Sequence[ProtonGroup]
+    patterns: Patterns
     signals: Sequence[Signal]
     raw: bool
     places: Sequence[Sequence[float]]
 
     @classmethod
-    def of(cls, groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: bool) -> Scorer:
+    def of(
+        cls, groups: Sequence[ProtonGroup], patterns: Patterns, signals: Sequence[Signal], raw: bool
+    ) -> Scorer:
         """Prepare the places of every group in every signal."""
-        return cls(groups, signals, raw, [[_place(g, s) for s in signals] for g in groups])
+        return cls(groups, patterns, signals, raw, [[_place(g, s) for s in signals] for g in groups])
 
     def total(self, signal: int, members: tuple[int, ...]) -> float:
         """Weight of a signal that holds ``members`` (indices of groups)."""
@@ -70,12 +77,12 @@ class Scorer:
     def terms(self, signal: int, members: tuple[int, ...]) -> Terms:
         """The same in parts."""
         seen = self.signals[signal]
-        held = [self.groups[m] for m in members]
+        shape, coupling = self.patterns.weigh(members, seen.pattern, seen.j)
         return Terms(
             place=self._place(signal, members) - seen.anyhow_db,
-            count=count_weight(sum(g.n for g in held), seen.n, self.raw),
-            pattern=pattern_weight(held, seen.pattern),
-            coupling=_couplings(held, seen),
+            count=count_weight(sum(self.groups[m].n for m in members), seen.n, self.raw),
+            pattern=shape,
+            coupling=coupling,
         )
 
     def _place(self, signal: int, members: tuple[int, ...]) -> float:
@@ -114,17 +121,8 @@ def count_weight(expected: int, printed: float | None, raw: bool) -> float:
 
 
 def _place(group: ProtonGroup, signal: Signal) -> float:
-    inside = t_between(signal.lo, signal.hi, group.ppm, group.sd)
+    inside = t_between(signal.lo, signal.hi, group.ppm, hypot(_WIDER * group.sd, _ADDED), _FREEDOM)
     return decibans((1 - _WRONG) * inside + _WRONG * odds(signal.anyhow_db))
-
-
-def _couplings(held: list[ProtonGroup], signal: Signal) -> float:
-    if not signal.j or not (len(held) == 1 or is_pair(held)):
-        return 0.0
-    expected = held[0].j
-    if is_pair(held):
-        expected = tuple(j for j in expected if j < 9.5)
-    return coupling_weight(expected, signal.j)
 
 
 @cache

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from functools import lru_cache
 
 from hoodside.readings import ProtonSignal, Readings
 from hoodside.weigh.background import proton_spread
@@ -32,8 +33,13 @@ class Signal:
 
 
 def prepare(readings: Readings) -> tuple[Signal, ...]:
-    """All 1H signals of the readings."""
-    return tuple(_signal(i, signal, readings.solvent) for i, signal in enumerate(readings.h1))
+    """All 1H signals of the readings, remembered: every structure of a case asks for them."""
+    return _prepared(readings.h1, readings.solvent)
+
+
+@lru_cache(maxsize=8)
+def _prepared(signals: tuple[ProtonSignal, ...], solvent: str) -> tuple[Signal, ...]:
+    return tuple(_signal(i, signal, solvent) for i, signal in enumerate(signals))
 
 
 def rescaled(signals: Sequence[Signal], factor: float) -> tuple[Signal, ...]:

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 
 from hoodside.predict.model import ProtonGroup
 from hoodside.weigh.protons.assign import NOWHERE, Puzzle, assign
+from hoodside.weigh.protons.pattern import Patterns
 from hoodside.weigh.protons.score import Scorer, missing_weight
 from hoodside.weigh.protons.signals import Signal, rescaled
 
@@ -28,20 +29,24 @@ class Solution:
         return tuple(g for g, s in enumerate(self.given) if s == signal)
 
 
-def solve(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: bool = False) -> Solution:
+def solve(
+    groups: Sequence[ProtonGroup], patterns: Patterns, signals: Sequence[Signal], raw: bool = False
+) -> Solution:
     """The best assignment of groups to signals."""
     if not raw:
-        return _solve(groups, signals, False)
+        return _solve(groups, patterns, signals, False)
     scaled = rescaled(signals, _first_factor(groups, signals))
-    solution = _solve(groups, scaled, True)
+    solution = _solve(groups, patterns, scaled, True)
     for _ in range(_ROUNDS - 1):
         scaled = rescaled(scaled, _better_factor(solution))
-        solution = _solve(groups, scaled, True)
+        solution = _solve(groups, patterns, scaled, True)
     return solution
 
 
-def _solve(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: bool) -> Solution:
-    scorer = Scorer.of(groups, signals, raw)
+def _solve(
+    groups: Sequence[ProtonGroup], patterns: Patterns, signals: Sequence[Signal], raw: bool
+) -> Solution:
+    scorer = Scorer.of(groups, patterns, signals, raw)
     puzzle = Puzzle(
         shifts=[g.ppm for g in groups],
         sizes=[g.n for g in groups],
@@ -63,7 +68,7 @@ def _first_factor(groups: Sequence[ProtonGroup], signals: Sequence[Signal]) -> f
 
 
 def _better_factor(solution: Solution) -> float:
-    """Total H over total integral of the signals that hold something; a ratio of sums forgives one bad step."""
+    """Total H over total integral of the signals that hold something: one bad step is forgiven."""
     due = found = 0.0
     for g, s in zip(solution.groups, solution.given, strict=True):
         due += g.n if s != NOWHERE and not g.exchangeable else 0

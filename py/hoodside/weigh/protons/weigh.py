@@ -8,12 +8,12 @@ from hoodside.predict.model import ProtonGroup
 from hoodside.readings import Readings
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.protons.assign import NOWHERE
-from hoodside.weigh.protons.pattern import expected_kind, is_pair
+from hoodside.weigh.protons.pattern import Patterns, is_pair
 from hoodside.weigh.protons.score import Terms, missing_weight
 from hoodside.weigh.protons.signals import prepare
 from hoodside.weigh.protons.solve import Solution, solve
 from hoodside.weigh.trust import TRUST
-from hoodside.weigh.words import amount, atoms_of, group_name, joules, plural_h, printed
+from hoodside.weigh.words import amount, atoms_of, group_name, plural_h, printed
 
 _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
 _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
@@ -21,11 +21,11 @@ _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)
 _TOLD_APART = -3.0
 
 
-def weigh_protons(groups: Sequence[ProtonGroup], readings: Readings) -> Weighed:
+def weigh_protons(groups: Sequence[ProtonGroup], patterns: Patterns, readings: Readings) -> Weighed:
     """All 1H signals of the readings against the predicted groups of a structure."""
     if not readings.h1:
         return Weighed()
-    solution = solve(groups, prepare(readings), readings.raw_integrals)
+    solution = solve(groups, patterns, prepare(readings), readings.raw_integrals)
     findings: list[Finding] = []
     for k in range(len(solution.signals)):
         findings += _of_signal(solution, readings, k)
@@ -52,10 +52,10 @@ def _of_signal(solution: Solution, readings: Readings, k: int) -> Iterator[Findi
     )
     yield Finding("h1.count", TRUST["h1.count"] * terms.count, _count_text(solution, k, held), ref, atoms)
     if signal.mult:
-        text = _pattern_text(held, signal.mult)
+        text = _pattern_text(solution, members, signal.mult)
         yield Finding("h1.pattern", TRUST["h1.pattern"] * terms.pattern, text, ref, atoms, _COUNTED)
     if terms.coupling:
-        text = _coupling_text(held, signal.j, terms)
+        text = _coupling_text(solution, members, signal.j, terms)
         yield Finding(
             "h1.coupling", TRUST["h1.coupling"] * terms.coupling, text, ref, atoms, "facts/couplings_hh.csv"
         )
@@ -91,22 +91,21 @@ def _count_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
     return f"{amount(found)} H found, {due} H expected."
 
 
-def _pattern_text(held: list[ProtonGroup], seen: str) -> str:
-    kind = expected_kind(held)
-    if kind == "several":
-        return f"Printed {seen}; {len(held)} sets of H overlap here."
-    if held[0].exchangeable:
+def _pattern_text(solution: Solution, members: tuple[int, ...], seen: str) -> str:
+    awaited = solution.scorer.patterns.awaited(members)
+    held = [solution.groups[m] for m in members]
+    if awaited.kind == "several":
+        return f"Printed {seen}; {len(members)} sets of H overlap here."
+    if awaited.kind == "exchangeable":
         return f"Printed {seen}; exchangeable H usually come as one line, often broad."
-    first = held[0]
-    due = f"{first.mult}{joules(first.j)}" if first.mult else "not predicted"
-    note = " (each H of the CH₂)" if is_pair(held) else ""
-    return f"Printed {seen}; expected {due}{note}."
+    note = " from the neighbours of this CH₂" if is_pair(held) else ""
+    return f"Printed {seen}; expected {awaited.text}{note}."
 
 
-def _coupling_text(held: list[ProtonGroup], seen: Sequence[float], terms: Terms) -> str:
-    verb = "agree with" if terms.coupling > 0 else "do not suit"
-    expected = ", ".join(f"{j:g}" for j in held[0].j)
-    return f"J = {', '.join(f'{j:g}' for j in seen)} Hz {verb} the {expected} Hz expected."
+def _coupling_text(solution: Solution, members: tuple[int, ...], seen: Sequence[float], terms: Terms) -> str:
+    verb = "agrees with" if terms.coupling > 0 else "does not suit"
+    expected = solution.scorer.patterns.awaited(members).text
+    return f"J = {', '.join(f'{j:g}' for j in seen)} Hz {verb} the expected {expected}."
 
 
 def _stray_finding(solution: Solution, readings: Readings, k: int) -> Finding:
@@ -130,7 +129,7 @@ def _stray_text(solution: Solution, k: int) -> str:
 
 
 def _missing_findings(solution: Solution) -> Iterator[Finding]:
-    for g, (group, s) in enumerate(zip(solution.groups, solution.given, strict=True)):
+    for group, s in zip(solution.groups, solution.given, strict=True):
         if s == NOWHERE:
             text = _missing_text(group)
             yield Finding(
