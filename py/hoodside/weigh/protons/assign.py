@@ -90,8 +90,8 @@ class _Search:
             at = start
         return given
 
-    def _table(self, fixed: list[int], signals: list[int]) -> tuple[list[float], list[list[tuple[int, int]]]]:
-        """Best weight after some signals and so many groups; per cell which groups the last signal took."""
+    def _table(self, fixed: list[int], signals: list[int]) -> list[list[tuple[int, int]]]:
+        """After so many signals and so many groups: which groups the last signal takes at best."""
         best = [0.0]
         for g in fixed:
             best.append(best[-1] + self.puzzle.missing[g])
