@@ -20,6 +20,7 @@ METHODS: dict[str, str] = {
     "formulas": "formulas:formulas",
     "parse": "readings:parse",
     "jcamp": "readings:jcamp",
+    "report": "readings:report",
     "solvents": "readings:solvents",
     "wet_tests": "readings:wet_tests",
     "check": "checking:check",
@@ -33,6 +34,7 @@ METHODS: dict[str, str] = {
     "edit": "editing:edit",
     "outcomes": "steps:outcomes",
     "reagents": "steps:reagents",
+    "rivals": "rivals:rivals",
     "amounts": "quantities:amounts",
 }
 _HOME = "hoodside.methods."

@@ -23,8 +23,7 @@ def run(options: argparse.Namespace) -> int:
 
 
 def _lines(answer: dict[str, Any]) -> Iterator[str]:
-    rows = []
-    for rival in answer["rivals"]:
-        weight = rival.get("weight_db")
-        rows.append(["" if weight is None else f"{weight:.1f}", rival["smiles"], rival.get("how", "")])
-    yield from columns(rows, right=(0,))
+    rows = [[rival["smiles"], rival["formula"], "; ".join(rival["how"])] for rival in answer["rivals"]]
+    yield from columns(rows)
+    if answer.get("note"):
+        yield answer["note"]

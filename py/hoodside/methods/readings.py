@@ -7,7 +7,7 @@ from typing import Any
 from hoodside.facts import load_table
 from hoodside.methods.arguments import short_text
 from hoodside.predict.wet import wet_tests as all_wet_tests
-from hoodside.readings.from_json import readings_to_json
+from hoodside.readings.from_json import readings_from_json, readings_to_json
 from hoodside.readings.jcamp.curve import thinned
 from hoodside.readings.jcamp.records import MOST_CHARS as MOST_JCAMP_CHARS
 from hoodside.readings.jcamp.spectrum import Spectrum
@@ -99,3 +99,10 @@ def wet_tests() -> dict[str, Any]:
             for entry in all_wet_tests()
         ]
     }
+
+
+def report(**case: Any) -> dict[str, Any]:
+    """The readings of a check object as report lines, in the style of the ACS guidelines."""
+    from hoodside.record import report_lines
+
+    return {"lines": list(report_lines(readings_from_json(case)))}
