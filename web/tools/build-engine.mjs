@@ -21,6 +21,7 @@ async function compileArchives(out, debug) {
   for (const [inside, outside] of [['/stock', pyodideFolder], ['/py', join(repo, 'py')], ['/tools', here],
     ['/out', out]]) python.mountNodeFS(inside, outside);
   python.registerJsModule('hoodside_kernel', {});
+  python.registerJsModule('hoodside_numerics', {});
   python.globals.set('debug', debug);
   python.runPython(`
 import sys
@@ -36,6 +37,7 @@ compile_bundle.engine("/py/hoodside", "/out/hoodside.zip", debug)
 async function tryArchives(out) {
   const python = await loadPyodide({ indexURL: `${pyodideFolder}/`, stdLibURL: join(out, 'stdlib.zip') });
   python.registerJsModule('hoodside_kernel', {});
+  python.registerJsModule('hoodside_numerics', {});
   python.FS.writeFile('/lib/hoodside.zip', await readFile(join(out, 'hoodside.zip')));
   python.mountNodeFS('/tools', here);
   python.runPython(`

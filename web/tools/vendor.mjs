@@ -1,13 +1,15 @@
-// Copies the npm modules that the page imports into OUT and writes the import map that names them.
+// Copies the npm modules that the app imports into OUT, with all that they import in turn, and writes the
+// import map that names them to the page. Workers have no import map: they import the copies by path.
 // usage: node vendor.mjs OUT INDEX_HTML
+import { existsSync } from 'node:fs';
 import { copyFile, mkdir, readFile, writeFile } from 'node:fs/promises';
-import { dirname, join, resolve } from 'node:path';
+import { dirname, join, relative, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
 const packages = join(dirname(fileURLToPath(import.meta.url)), '../node_modules');
 
-/** Bare import -> file of the package that is its ES module. Add a line here to use another package. */
-const MODULES = {
+/** Bare import -> the ES module of the package. Add a line here to use another package. */
+const MODULES = /** @type {Record<string, string>} */ ({
   preact: 'preact/dist/preact.mjs',
   'preact/hooks': 'preact/hooks/dist/hooks.mjs',
   htm: 'htm/dist/htm.mjs',
@@ -16,20 +18,52 @@ const MODULES = {
   '@preact/signals': '@preact/signals/dist/signals.mjs',
   idb: 'idb/build/index.js',
   uplot: 'uplot/dist/uPlot.esm.js',
-};
+  'is-any-array': 'is-any-array/lib/index.js',
+  'ml-array-max': 'ml-array-max/lib/index.js',
+  'ml-array-min': 'ml-array-min/lib/index.js',
+  'ml-array-rescale': 'ml-array-rescale/lib/index.js',
+});
+/** What a page names; the other modules are only named by those above and below. */
+const FOR_PAGES = ['preact', 'preact/hooks', 'htm', 'htm/preact', '@preact/signals', 'idb', 'uplot'];
+/** Of ml-matrix the eigen-solver alone. */
+const FOR_WORKERS = ['ml-matrix/src/matrix.js', 'ml-matrix/src/dc/evd.js'];
 const STYLES = ['uplot/dist/uPlot.min.css'];
 
-const fileName = (/** @type {string} */ bare) => `${bare.replace('@', '').replace('/', '-')}.js`;
+const SPECIFIER = /(\b(?:from|import)\s*)(["'])([^"'\n]+)\2/g;
+const SOURCE_MAP = /\n?\/\/# sourceMappingURL=\S+\s*$/;
 
-/** @param {string} from @param {string} to */
-async function copyModule(from, to) {
-  const text = await readFile(join(packages, from), 'utf8');
-  await writeFile(to, text.replace(/\n?\/\/# sourceMappingURL=\S+\s*$/, '\n'));
+/** @param {string} specifier @param {string} importer @returns {string} path below node_modules */
+function locate(specifier, importer) {
+  if (!specifier.startsWith('.')) {
+    if (!MODULES[specifier]) throw new Error(`${importer} imports ${specifier}, which vendor.mjs does not list.`);
+    return MODULES[specifier];
+  }
+  const path = join(dirname(importer), specifier);
+  return existsSync(join(packages, path)) ? path : `${path}.js`;
+}
+
+/** Copy a module and its imports, each import rewritten to a relative path.
+ * @param {string} out @param {string} path @param {Set<string>} done */
+async function copyModule(out, path, done) {
+  if (done.has(path)) return;
+  done.add(path);
+  /** @type {string[]} */
+  const imported = [];
+  const text = (await readFile(join(packages, path), 'utf8')).replace(SOURCE_MAP, '\n').replace(
+    SPECIFIER, (_, lead, quote, specifier) => {
+      const target = locate(specifier, path);
+      imported.push(target);
+      const step = relative(dirname(path), target).replaceAll('\\', '/');
+      return `${lead}${quote}${step.startsWith('.') ? step : `./${step}`}${quote}`;
+    });
+  await mkdir(dirname(join(out, path)), { recursive: true });
+  await writeFile(join(out, path), text);
+  for (const target of imported) await copyModule(out, target, done);
 }
 
 /** Browsers want the import map before the first script. @param {string} index */
 async function insertMap(index) {
-  const imports = Object.fromEntries(Object.keys(MODULES).map((bare) => [bare, `./vendor/${fileName(bare)}`]));
+  const imports = Object.fromEntries(FOR_PAGES.map((bare) => [bare, `./vendor/${MODULES[bare]}`]));
   const map = `<script type="importmap">${JSON.stringify({ imports })}</script>`;
   const page = await readFile(index, 'utf8');
   const mapped = page.replace(/(?=<script|<link[^>]+modulepreload)/, `${map}\n    `);
@@ -38,7 +72,7 @@ async function insertMap(index) {
 }
 
 const [out, index] = process.argv.slice(2).map((path) => resolve(path));
-await mkdir(out, { recursive: true });
-for (const [bare, file] of Object.entries(MODULES)) await copyModule(file, join(out, fileName(bare)));
+const done = /** @type {Set<string>} */ (new Set());
+for (const path of [...FOR_PAGES.map((bare) => MODULES[bare]), ...FOR_WORKERS]) await copyModule(out, path, done);
 for (const file of STYLES) await copyFile(join(packages, file), join(out, /** @type {string} */ (file.split('/').at(-1))));
 await insertMap(index);

@@ -35,12 +35,22 @@ async function startMolecules() {
   return molecules;
 }
 
+async function loadNumerics() {
+  const [{ makeNumerics }, { default: Matrix }, { default: EigenvalueDecomposition }] = await Promise.all([
+    import('../engine/numerics-bridge.js'),
+    import('../vendor/ml-matrix/src/matrix.js'),
+    import('../vendor/ml-matrix/src/dc/evd.js'),
+  ]);
+  return makeNumerics({ Matrix, EigenvalueDecomposition });
+}
+
 async function wake() {
   reached('loading');
-  const [python, molecules, archive, { makeBridge }] = await Promise.all([
-    startPython(), startMolecules(), fetchEngine(), import('../engine/kernel-bridge.js')]);
+  const [python, molecules, archive, { makeBridge }, numerics] = await Promise.all([
+    startPython(), startMolecules(), fetchEngine(), import('../engine/kernel-bridge.js'), loadNumerics()]);
   python.FS.writeFile(ENGINE_ZIP, archive);
   python.registerJsModule('hoodside_kernel', makeBridge(molecules));
+  python.registerJsModule('hoodside_numerics', numerics);
   python.runPython(`import sys; sys.path.insert(0, "${ENGINE_ZIP}")`);
   const { handle } = python.pyimport('hoodside_start');
   reached('engine');

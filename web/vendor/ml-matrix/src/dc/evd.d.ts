@@ -1,0 +1,1 @@
+export { EigenvalueDecomposition as default } from 'ml-matrix';

@@ -1,0 +1,1 @@
+export { Matrix as default } from 'ml-matrix';
