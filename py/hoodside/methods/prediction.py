@@ -19,7 +19,7 @@ def predict(
 ) -> dict[str, Any]:
     """Every reading to expect of a structure, each number with the terms it is made of."""
     structure = structure_of(smiles, "smiles")
-    chosen = _solvent(short_text(solvent or USUAL_SOLVENT, "solvent"))
+    chosen = solvent_of(short_text(solvent or USUAL_SOLVENT, "solvent"))
     field = number(mhz or USUAL_MHZ, "mhz", FIELD)
     found = predict_all(structure, chosen, field, short_text(medium, "medium"))
     formula = formula_of(structure)
@@ -37,7 +37,7 @@ def predict(
     }
 
 
-def _solvent(name: str) -> str:
+def solvent_of(name: str) -> str:
     found = known_solvent(name)
     if not found:
         known = ", ".join(solvent_names())

@@ -1,0 +1,144 @@
+"""Multiplets and traces: spin systems, a structure's 1H trace at any field, J from printed lines."""
+
+from __future__ import annotations
+
+from typing import Any
+
+from hoodside.methods.arguments import integer
+from hoodside.methods.prediction import solvent_of
+from hoodside.methods.structures import structure_of
+from hoodside.predict.spins import envelope
+from hoodside.predict.spins.contract import lines_to_json, spins_from_json
+from hoodside.predict.spins.model import LineList
+from hoodside.predict.spins.molecule import FIELDS, predict_spectrum
+from hoodside.predict.spins.multiplet_reading import MultipletReading, read_multiplet
+from hoodside.predict.spins.partners import find_partners
+from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT
+from hoodside.readings.fields import Span, number, rows
+from hoodside.readings.from_json import readings_from_json
+
+_FIELD = Span("field", *FIELDS, "MHz")
+_SHIFT = Span("shift", -60, 60, "ppm")
+_LINE = Span("line", -60_000, 60_000, "Hz or ppm")
+_HEIGHT = Span("height", 0, 1e12)
+_WIDTH = Span("line width", 0.05, 200, "Hz")
+#: Exchangeable H come out this broad, Hz.
+_BROAD = 12.0
+_POINTS = 1600
+#: Share of the strongest line below which a stick is not sent to the screen.
+_SEEN = 0.002
+
+
+def spins(**system: Any) -> dict[str, Any]:
+    """Lines of one spin system; see ``predict.spins.contract``."""
+    return spins_from_json(system)
+
+
+def trace(
+    smiles: str,
+    solvent: str = USUAL_SOLVENT,
+    mhz: float = USUAL_MHZ,
+    linewidth_hz: float = 1.0,
+    from_ppm: float | None = None,
+    to_ppm: float | None = None,
+    points: int = _POINTS,
+) -> dict[str, Any]:
+    """The simulated 1H trace of a structure at a field, with its groups and the lines of each spin system."""
+    structure = structure_of(smiles, "smiles")
+    field = number(mhz or USUAL_MHZ, "mhz", _FIELD)
+    width = number(linewidth_hz, "linewidth_hz", _WIDTH)
+    groups, systems = predict_spectrum(structure, solvent_of(solvent or USUAL_SOLVENT), field)
+    lo, hi = _ends([g.ppm for g in groups], from_ppm, to_ppm)
+    heights = [0.0] * integer(points, "points", 2, 20_000)
+    for system in systems:
+        broad = max(width, _BROAD) if system.broad else width
+        _add(heights, system.lines, lo * field, hi * field, broad)
+    top = max(heights, default=0.0) or 1.0
+    return {
+        "mhz": field,
+        "from_ppm": lo,
+        "step_ppm": (hi - lo) / (len(heights) - 1),
+        "heights": [round(h / top, 5) for h in heights],
+        "systems": [
+            {
+                "groups": list(system.groups),
+                "broad": system.broad,
+                "method": system.lines.method,
+                "error_hz": round(system.lines.error_hz, 4),
+                "lines": lines_to_json(system.lines, field, _SEEN),
+            }
+            for system in systems
+        ],
+        "h1": [
+            {
+                "ppm": round(g.ppm, 3),
+                "n": g.n,
+                "mult": g.mult,
+                "j": [round(j, 1) for j in g.j],
+                "atoms": list(g.atoms),
+            }
+            for g in groups
+        ],
+    }
+
+
+def multiplet(
+    lines: list[Any], heights: list[Any] | None = None, mhz: float = USUAL_MHZ, unit: str = "ppm"
+) -> dict[str, Any]:
+    """Pattern and J of one multiplet from its printed lines (``unit`` "ppm" or "hz") and rough heights."""
+    field = number(mhz or USUAL_MHZ, "mhz", _FIELD)
+    scale = 1.0 if unit == "hz" else field
+    found = rows(lines, "lines", lambda entry, path: number(entry, path, _LINE) * scale)
+    sizes = rows(heights, "heights", lambda entry, path: number(entry, path, _HEIGHT)) if heights else None
+    analysis = read_multiplet(found, sizes)
+    return {
+        "readings": [_reading(r, field) for r in analysis.readings],
+        "warnings": list(analysis.warnings),
+        "spacings_hz": [round(b - a, 2) for a, b in zip(sorted(found), sorted(found)[1:], strict=False)],
+    }
+
+
+def partners(h1: list[Any]) -> dict[str, Any]:
+    """Which 1H signals share a J within the measuring error, and which J stand alone."""
+    shared, lone = find_partners(readings_from_json({"h1": h1}).h1)
+    return {
+        "shared": [
+            {"a": s.a, "b": s.b, "hz": round((s.hz_a + s.hz_b) / 2, 1), "counts_fit": s.counts_fit}
+            for s in shared
+        ],
+        "lone": [{"signal": entry.signal, "hz": entry.hz} for entry in lone],
+    }
+
+
+def _reading(found: MultipletReading, mhz: float) -> dict[str, Any]:
+    return {
+        "pattern": found.pattern,
+        "j": [round(j, 2) for j in found.j],
+        "partners": [s.count for s in found.splittings],
+        "centre_ppm": found.centre_hz / mhz,
+        "centre_hz": found.centre_hz,
+        "rms_hz": round(found.rms_hz, 3),
+    }
+
+
+def _ends(shifts: list[float], from_ppm: float | None, to_ppm: float | None) -> tuple[float, float]:
+    """Low and high end of the trace, ppm: as asked, else all signals with a margin."""
+    if from_ppm is not None and to_ppm is not None:
+        ends = number(from_ppm, "from_ppm", _SHIFT), number(to_ppm, "to_ppm", _SHIFT)
+        if ends[0] != ends[1]:
+            return min(ends), max(ends)
+    return (min(shifts, default=0.0) - 0.5, max(shifts, default=10.0) + 0.5)
+
+
+def _add(heights: list[float], lines: LineList, lo_hz: float, hi_hz: float, width: float) -> None:
+    """Add a system's envelope, the highest point within each step so that no narrow line is lost."""
+    drawn = envelope(lines, lo_hz, hi_hz, max(width, (hi_hz - lo_hz) / 20_000))
+    step = (hi_hz - lo_hz) / (len(heights) - 1)
+    highest: dict[int, float] = {}
+    for k, height in enumerate(drawn.heights):
+        place = round(k * drawn.step_hz / step)
+        if height > highest.get(place, 0.0):
+            highest[place] = height
+    for place, height in highest.items():
+        if 0 <= place < len(heights):
+            heights[place] += height
