@@ -47,7 +47,8 @@ def find_outcomes(
         )
     partner = partner or _named_partner(reagents)
     read = _in_turn(reagents, partner)
-    now, found = settled(start), []
+    now = settled(start)
+    found: list[Outcome] = []
     for place, one in enumerate(read):
         last = place == len(read) - 1
         # A work-up that calls for nothing leaves what the step before gave.
