@@ -1,0 +1,159 @@
+"""Look-alikes grown move by move, cheapest first.
+
+A uniform-cost search (E. W. Dijkstra, Numer. Math. 1959, 1, 269) over isomer moves: what is popped next is
+never dearer than what has been found, so that the best N are known once N have been found below the bound.
+"""
+
+from __future__ import annotations
+
+import heapq
+import math
+from collections.abc import Callable, Iterator
+from dataclasses import dataclass
+
+from hoodside.errors import StructureError
+from hoodside.molecule.structure import Structure
+from hoodside.rivals.configurations import diastereomers, double_bond_forms
+from hoodside.rivals.held_back import NEVER, doubts, penalty
+from hoodside.rivals.model import Rival
+from hoodside.rivals.names import flat, name_of, tautomer_key
+from hoodside.rivals.site import Site, site_of
+from hoodside.rivals.steps import Step, steps_from
+from hoodside.rivals.words import describe
+from hoodside.rivals.writer import write_smiles
+
+#: Cost of turning over one stereounit, and of a Z double bond where an E one would do.
+TURNED = 0.4
+CIS = 0.5
+#: What a second and later move adds beyond its own cost.
+AGAIN = 0.6
+#: No move costs less: the bound for what a structure not yet opened may give.
+_LEAST = 0.6
+_MOST_MOVES = 3
+#: Structures less likely than this are no stepping stones.
+_STONE = 2.5
+_SLICE = 25
+
+
+@dataclass(slots=True)
+class _Stone:
+    """A structure reached, from which to go on."""
+
+    smiles: str
+    how: tuple[str, ...]
+
+
+@dataclass(slots=True)
+class _Leap:
+    """A step not yet made."""
+
+    step: Step
+    how: tuple[str, ...]
+
+
+@dataclass(slots=True)
+class _Form:
+    """An isomer made, not yet looked at. ``final``: its like is opened elsewhere, so it is not."""
+
+    smiles: str
+    how: tuple[str, ...]
+    final: bool
+    tautomer: bool = False
+
+
+class Growth:
+    """One search. ``keep`` says whether a structure may be a rival, by its SMILES."""
+
+    def __init__(self, intended: Structure, limit: int, budget: int, keep: Callable[[str], bool]) -> None:
+        self._limit, self._budget, self._keep = limit, budget, keep
+        self._site = Site(intended)
+        self._allowed = doubts(intended.source)
+        self._seen = {name_of(intended.smiles), flat(intended.smiles), tautomer_key(intended.smiles)}
+        self._heap: list[tuple[float, int, _Stone | _Leap | _Form]] = []
+        self._count = 0
+        self._dearest: list[float] = []  # costs of the best, negated: the dearest of them comes first
+        self.looked_at = 0
+        #: (total cost, rival), in the order found
+        self.found: list[tuple[float, Rival]] = []
+
+    def run(self) -> Iterator[list[Rival]]:
+        """Rivals in slices, roughly best first."""
+        self._start()
+        told = 0
+        while self._heap and self.looked_at < self._budget and not self._settled():
+            self._take(*heapq.heappop(self._heap))
+            if len(self.found) >= told + _SLICE:
+                yield [rival for _, rival in self.found[told:]]
+                told = len(self.found)
+        if told < len(self.found):
+            yield [rival for _, rival in self.found[told:]]
+
+    def best(self) -> list[Rival]:
+        """The best so far, most plausible first."""
+        return [rival for _, rival in sorted(self.found, key=lambda f: (f[0], f[1].smiles))[: self._limit]]
+
+    def _settled(self) -> bool:
+        """Whether nothing still waiting can be among the best."""
+        return len(self._dearest) == self._limit and self._heap[0][0] >= -self._dearest[0]
+
+    def _start(self) -> None:
+        for count, other in diastereomers(self._site.graph):
+            form = _Form(write_smiles(other), ("another relative configuration",), True)
+            self._push(TURNED * count, form)
+        self._open(self._site, 0.0, ())
+
+    def _push(self, cost: float, what: _Stone | _Leap | _Form) -> None:
+        self._count += 1
+        heapq.heappush(self._heap, (cost, self._count, what))
+
+    def _open(self, site: Site, cost: float, how: tuple[str, ...]) -> None:
+        for step in steps_from(site):
+            self._push(cost + step.cost, _Leap(step, how))
+
+    def _take(self, cost: float, _number: int, what: _Stone | _Leap | _Form) -> None:
+        if isinstance(what, _Stone):
+            self._open(site_of(what.smiles), cost - _LEAST, what.how)
+        elif isinstance(what, _Leap):
+            self._make(cost, what)
+        else:
+            self._look_at(cost, what)
+
+    def _make(self, cost: float, leap: _Leap) -> None:
+        graph = leap.step.make()
+        if graph is None:
+            return
+        how = (*leap.how, describe(leap.step))
+        for cis, form in double_bond_forms(graph, leap.step.site.graph):
+            made = _Form(write_smiles(form), how, bool(cis), leap.step.rule.where == "tautomer")
+            if cis:
+                self._push(cost + CIS * cis, made)
+            else:
+                self._look_at(cost, made)
+
+    def _look_at(self, cost: float, form: _Form) -> None:
+        self.looked_at += 1
+        try:
+            name = name_of(form.smiles)
+        except StructureError:
+            return
+        if name in self._seen:
+            return
+        key = tautomer_key(name)
+        if key and key in self._seen and not form.tautomer:
+            return
+        self._seen |= {name, key}
+        doubt = penalty(name, self._allowed)
+        if doubt >= NEVER or not self._keep(name):
+            return
+        total = cost + doubt
+        self.found.append((total, Rival(name, form.how, len(form.how), plausibility(total))))
+        heapq.heappush(self._dearest, -total)
+        if len(self._dearest) > self._limit:
+            heapq.heappop(self._dearest)
+        if not form.final and len(form.how) < _MOST_MOVES and doubt < _STONE:
+            self._push(cost + AGAIN + _LEAST, _Stone(name, form.how))
+
+
+def plausibility(cost: float) -> float:
+    """Cost of the moves and of what speaks against the skeleton, as a figure from 0 to 1."""
+    return round(math.exp(-cost / 2), 4)

@@ -1,0 +1,93 @@
+"""Rivals: how many of the look-alikes that chemists listed are put up unprompted, and how fast.
+
+A listed look-alike counts as recovered when it is among the best 200: the same constitution where the list
+leaves its configuration open, the same relative configuration where the list marks it.
+"""
+
+from __future__ import annotations
+
+import argparse
+import json
+import re
+import time
+from dataclasses import dataclass, field
+from pathlib import Path
+
+from bench.tables import Figure, print_figures
+from hoodside.molecule.structure import Structure, read_structure
+from hoodside.rivals import Rival, find_rivals, iterate_rivals
+from hoodside.rivals.names import flat, name_of
+
+CASES = Path(__file__).parents[1] / "cases" / "published.json"
+LIMIT = 200
+_DEPTHS = (20, 50, 100)
+
+
+@dataclass
+class _Tally:
+    ranks: list[int | None] = field(default_factory=list)
+    missed: list[str] = field(default_factory=list)
+    seconds: list[float] = field(default_factory=list)
+    firsts: list[float] = field(default_factory=list)
+    sizes: list[int] = field(default_factory=list)
+
+
+def run(every: int = 1, show_missed: bool = False) -> None:
+    """Print recovery at several depths of the list, and times; of every n-th case only, if asked."""
+    tally = _Tally()
+    for case in json.loads(CASES.read_text("utf-8"))[::every]:
+        _measure(read_structure(case["smiles"]), case["rivals"], tally)
+    print("\n".join(tally.missed) if show_missed else "", end="\n" if show_missed else "")
+    _print(tally)
+
+
+def _measure(intended: Structure, listed: list[str], tally: _Tally) -> None:
+    began = time.perf_counter()
+    next(iterate_rivals(intended, limit=LIMIT), None)
+    tally.firsts.append(time.perf_counter() - began)
+    began = time.perf_counter()
+    found = find_rivals(intended, limit=LIMIT).rivals
+    tally.seconds.append(time.perf_counter() - began)
+    tally.sizes.append(len(found))
+    for smiles in listed:
+        rank = rank_of(smiles, found)
+        tally.ranks.append(rank)
+        if rank is None:
+            tally.missed.append(f"  {intended.smiles} -> {name_of(smiles)}")
+
+
+def _print(tally: _Tally) -> None:
+    total = len(tally.ranks)
+    hits = [rank for rank in tally.ranks if rank is not None]
+    name = f"listed look-alikes among the best {LIMIT}"
+    print_figures(
+        [
+            Figure(name, 100 * len(hits) / total, "%", least=85, note=f"of {total}"),
+            *(
+                Figure(f"... among the best {n}", 100 * sum(r < n for r in hits) / total, "%")
+                for n in _DEPTHS
+            ),
+            Figure("time per compound, mean", sum(tally.seconds) / len(tally.seconds), "s", most=1),
+            Figure("time per compound, slowest", max(tally.seconds), "s"),
+            Figure("first slice, mean", 1000 * sum(tally.firsts) / len(tally.firsts), "ms", most=60),
+            Figure("rivals put up, mean", sum(tally.sizes) / len(tally.sizes)),
+        ]
+    )
+
+
+def rank_of(listed: str, found: tuple[Rival, ...]) -> int | None:
+    """Place of a listed structure, from 0; None when it is not there."""
+    name = name_of(listed)
+    is_open = not re.search(r"[@/\\]", name)
+    for rank, rival in enumerate(found):
+        if name == rival.smiles or (is_open and name == flat(rival.smiles)):
+            return rank
+    return None
+
+
+if __name__ == "__main__":
+    parser = argparse.ArgumentParser(description="Recovery of listed look-alikes.")
+    parser.add_argument("--every", type=int, default=1)
+    parser.add_argument("--missed", action="store_true")
+    chosen = parser.parse_args()
+    run(chosen.every, chosen.missed)
