@@ -89,6 +89,34 @@ PROTON: list[tuple[str, list[Signal]]] = [
         [(4.55, "d", (12.0,), 1), (4.42, "d", (12.0,), 1), (1.20, "s", (), 6), (7.20, "d", (8.0,), 2)],
     ),
     (
+        "1H NMR (400MHz,CDCl3)δ7.81(d,J=8.2Hz,2H),7.39(d,J≈8Hz,2H),\n2.98(sept,J=6.9Hz,1H)",
+        [(7.81, "d", (8.2,), 2), (7.39, "d", (8.0,), 2), (2.98, "sept", (6.9,), 1)],
+    ),
+    (
+        "1H NMR (400 MHz, CDCl3) δ ppm 1.39 (s, 9 H) 4.50 (br. s., 1 H) 2.98 (spt, J=6.9 Hz, 1 H) "
+        "1.63 (quin, J=7.0 Hz, 2 H) 1.45 (sxt, J=7.3 Hz, 2 H)",
+        [
+            (1.39, "s", (), 9),
+            (4.50, "br s", (), 1),
+            (2.98, "sept", (6.9,), 1),
+            (1.63, "quint", (7.0,), 2),
+            (1.45, "sext", (7.3,), 2),
+        ],
+    ),
+    (
+        "1H NMR (CDCl3) δ 5.27 (d, 1 H, J1,2 4.0 Hz, H-1), 2.1, 2.0, 1.9 (3 s, 9 H, 3 Ac), "
+        "6.8, 7.2 (AB system, 4H, J = 8.6 Hz)",
+        [
+            (5.27, "d", (4.0,), 1),
+            (2.1, "s", (), 3),
+            (2.0, "s", (), 3),
+            (1.9, "s", (), 3),
+            (6.8, "d", (8.6,), 2),
+            (7.2, "d", (8.6,), 2),
+        ],
+    ),
+    ("7.81, d, 8.2, 2H\n2.98, sept, 6.9, 1H", [(7.81, "d", (8.2,), 2), (2.98, "sept", (6.9,), 1)]),
+    (
         "NMR (60 MHz, CCl4): δ 7.2 (m, 5H), 2.6 (q, 2H, J = 7), 1.2 (t, 3H, J = 7)",
         [(7.2, "m", (), 5), (2.6, "q", (7.0,), 2), (1.2, "t", (7.0,), 3)],
     ),
@@ -129,6 +157,10 @@ CARBON = [
     (
         "δC(75 MHz; CDCl3) 14.3 (q), 60.2 (t), 122.0 (d) and 166.6 (s)",
         [(14.3, "CH3", 1, ()), (60.2, "CH2", 1, ()), (122.0, "CH", 1, ()), (166.6, "C", 1, ())],
+    ),
+    (
+        "13C NMR (CDCl3, 100 MHz) δ 173.9 (Cq), 128.5, 128.4 (each 2C), 29.3 (2 × CH2)",
+        [(173.9, "C", 1, ()), (128.5, "", 2, ()), (128.4, "", 2, ()), (29.3, "CH2", 2, ())],
     ),
     (
         "192,0; 156,2; 134,5; 23,6",
@@ -274,6 +306,12 @@ def test_a_whole_experimental_paragraph() -> None:
     assert (readings.solvent, readings.mhz, readings.ir_medium) == ("CDCl3", 400, "neat")
     assert not parsed.unread
     assert any("19F" in p.text and "not used" in p.means for p in parsed.pieces)
+
+
+def test_fragments_named_as_losses_stay_fragments() -> None:
+    readings = parse_report("MS (EI): m/z (%) = 178 (25) [M]+, 149 (100) [M–C2H5]+, 121 (35).").readings
+    assert [(p.mz, p.rel) for p in readings.ms] == [(178, 25), (149, 100), (121, 35)]
+    assert readings.hrms is None
 
 
 def test_soft_ionisation_gives_an_adduct_not_fragments() -> None:

@@ -3,12 +3,13 @@
 from __future__ import annotations
 
 import re
+from dataclasses import replace
 
 from hoodside.readings.model import CarbonLine
 from hoodside.readings.report.conditions import read_conditions
 from hoodside.readings.report.details import J_HEAD, NUMBER
 from hoodside.readings.report.model import Gathered
-from hoodside.readings.report.plain import group_end, split_terms, with_decimal_points
+from hoodside.readings.report.plain import follows_word, group_end, split_terms, with_decimal_points
 from hoodside.readings.solvents import known_solvent
 
 LOWEST, HIGHEST = -60.0, 320.0
@@ -65,7 +66,7 @@ def _pass_over(plain: str, at: int, end: int, into: Gathered) -> int:
 
 def _read_line(plain: str, at: int, end: int, into: Gathered) -> int:
     found = _LINE.match(plain, at, end)
-    if not found or (at and (plain[at - 1].isalnum() or plain[at - 1] in "-_")):
+    if not found or follows_word(plain, at):
         return at
     stop = found.end()
     values = [float(v) for v in found.group("a", "b") if v]
@@ -87,6 +88,8 @@ def _read_line(plain: str, at: int, end: int, into: Gathered) -> int:
         into.took(at, stop, f"{ppm:g} ppm: line of the solvent, not taken over")
     else:
         line = CarbonLine(round(ppm, 4), said.kind, said.n, tuple(sorted(said.j, reverse=True)))
+        if said.each and into.c13 and into.c13[-1] == CarbonLine(into.c13[-1].ppm):
+            into.c13[-1] = replace(into.c13[-1], n=said.n, kind=said.kind)
         into.add(into.c13, line, at, stop, _words(line))
     return stop
 
@@ -108,6 +111,7 @@ class _Said:
         self.n = 1
         self.j: list[float] = []
         self.solvent = False
+        self.each = False  # said of this line and of the bare one before it
 
     def read(self, plain: str, start: int, end: int) -> None:
         letters = []
@@ -128,6 +132,8 @@ class _Said:
             self.j += [float(v) for v in values]
             return
         self.solvent = self.solvent or (bool(known_solvent(term)) and any(c.isdigit() for c in term))
+        self.each = self.each or term.startswith("each")
+        term = term.removeprefix("each").strip()
         count = _COUNT.search(term)
         if count:
             self.n = int(count["a"] or count["b"] or count["c"])

@@ -23,14 +23,14 @@ _SUBSCRIPT = (
     r"|(?:gem|vic|cis|trans|ortho|meta|para|o|m|p|ax|eq|aa|ae|ee)\b(?:[,\-](?:ax|eq))?))?"
 )
 J_HEAD = re.compile(
-    rf"(?:(?P<times>\d)\s*x\s*)?(?:\d\s?)?J(?:'?s)?{_SUBSCRIPT}\s*(?:values?|=|:|~|of|is|ca\.?|\s){{0,4}}\s*"
+    rf"(?:(?P<times>\d)\s*x\s*)?(?:\d\s?)?J(?:'?s)?{_SUBSCRIPT}\s*(?:values?|[=:~≈]|of|is|ca\.?|\s){{0,4}}\s*"
 )
 # A whole number may also be a locant ("2,6-H") and is then no J.
 _J_VALUE = re.compile(
     r"(?:(?P<times>\d)\s*x\s*)?[-+~<>]?\s?"
     r"(?P<j>\d{1,4}\.\d{1,6}|\d{1,4}(?!\.?\d|'*(?:,\s?\d{1,2}'*){0,4}-[A-Z]))(?!\d)"
-    rf"(?:\s?-\s?(?P<to>{NUMBER})(?!\d))?(?!\s*H(?!z)|\s*x\s*[A-Z]|\s?%)"
-    r"(?:\s?\(?\s?x\s?(?P<times2>\d)\)?|\s?\((?P<times3>\d)\s?x\))?\s*(?P<hz>Hz|hz|HZ|cps|c/s)?\.?"
+    rf"(?:\s?-\s?(?P<to>{NUMBER})(?!\d))?(?!\s*H(?!z)|\s*x\s*[A-Z]|\s*x\s*\d\s*H|\s?%)"
+    r"(?:\s?\(?\s?x\s?(?P<times2>\d)(?!\s?H)\)?|\s?\((?P<times3>\d)\s?x\))?\s*(?P<hz>Hz|hz|HZ|cps|c/s)?\.?"
 )
 J_WITH_UNIT = re.compile(rf"-?{NUMBER}(?:\s?-\s?{NUMBER})?\s*(?:Hz|cps)")
 _J_NEXT = re.compile(r"\s*(?:,|;|and|&|/|or)\s*(?=[-+~]?\s?\d)")
@@ -52,6 +52,7 @@ class Details:
     repeat: int = 1  # "2 x s": so many patterns of the kind
     notes: list[str] = field(default_factory=list)
     broad: bool = False
+    system: str = ""  # the spin system named in place of a pattern
     unclear: list[tuple[int, int]] = field(default_factory=list)
     bare: bool = False  # printed without brackets, so that a comma may end it
     j_open: bool = False  # a list of J has begun and no unit closed it
@@ -60,6 +61,11 @@ class Details:
     def empty(self) -> bool:
         """Whether nothing was said."""
         return not (self.mult or self.j or self.n or self.notes or self.broad)
+
+    @property
+    def is_ab(self) -> bool:
+        """Whether it is an AB pattern: two doublets that may have been printed as one signal."""
+        return self.mult == "ABq" or (self.system == "AB" and len(self.j) == 1)
 
     @property
     def pattern(self) -> str:
@@ -173,7 +179,7 @@ def _read_pattern(plain: str, at: int, end: int, into: Details) -> int:
         r"[ABMXYK\d'\s]{2,14}(?:system|m\b|part\b|pattern\b|type\b)?(?![A-Za-z])", plain[at:end]
     )
     if system and not into.mult and names_spin_system(system[0].strip()):
-        into.mult = "m"
+        into.mult, into.system = "m", system[0].split()[0]
         return at + system.end()
     # The longest run of words that names a pattern: "br s" before "br".
     ends = [m.end() for m in re.finditer(r"[A-Za-z'.]+", words[0])]

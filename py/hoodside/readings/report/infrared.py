@@ -8,7 +8,7 @@ from hoodside.readings.infrared_words import band_words
 from hoodside.readings.model import IrBand
 from hoodside.readings.report.conditions import ir_medium, read_conditions
 from hoodside.readings.report.model import Gathered
-from hoodside.readings.report.plain import group_end, split_terms
+from hoodside.readings.report.plain import follows_word, group_end, split_terms
 
 LOWEST, HIGHEST = 200.0, 4500.0
 _UNIT = r"(?:/?\s?[(\[]?\s?cm\s{0,5}\^?\{?\s?-\s?1\s?\}?\s?[)\]]?)"
@@ -64,7 +64,7 @@ def _pass_over(plain: str, at: int, end: int, into: Gathered) -> int:
 
 def _read_band(plain: str, at: int, end: int, into: Gathered) -> int:
     found = _BAND.match(plain, at, end)
-    if not found or (at and plain[at - 1].isalnum()):
+    if not found or follows_word(plain, at):
         return at
     ends = [float(value.replace(",", "")) for value in found.group("a", "b") if value]
     strength, shape, stop = _said_after(plain, found.end(), end)

@@ -24,8 +24,11 @@ _PEAK = re.compile(r"(?P<mz>\d{1,4}(?:\.\d{1,6})?)(?![\d.]*\d)(?!\s?(?:eV|%|°|V
 _GAP = re.compile(r"[\s,;:.=]+|and\b|&|m\s?/\s?[zZe]\b|\(\s?%\s?\)|%|\(\s?rel[^()]{0,30}\)|\[\s?%\s?\]")
 _REL = re.compile(r"(?<![A-Za-z\d.\[+-])(?P<rel>\d{1,3}(?:\.\d{1,2})?)\s?%?(?![\w.]*\w)")
 _WORD = re.compile(r"[^\s,;()\[\]]+")
+_LONG_WORD = re.compile(r"[A-Za-z]{3,}")
 _NOTED = re.compile(r"\s?\(\s?[a-z]")
 _SOFT = re.compile(r"ESI|APCI|MALDI|FAB|APPI|DART|electrospray|LC-?MS", re.IGNORECASE)
+#: Ions that no fragmentation gives: they tell of soft ionisation wherever they are printed.
+_SOFT_IONS = ("[M+H]+", "[M+Na]+", "[M+K]+", "[M+NH4]+", "[M-H]-")
 _MOST_PROSE = 3
 #: Window for the mass of an adduct at unit resolution, ppm.
 _UNIT_RESOLUTION = 1000.0
@@ -82,7 +85,7 @@ def _read_peak(plain: str, at: int, end: int, into: Gathered, soft: bool) -> int
     mz = float(found["mz"])
     if not LOWEST <= mz <= HIGHEST:
         into.missed(at, stop, f"An m/z lies from {LOWEST:g} to {HIGHEST:g}.")
-    elif adduct and (soft or adduct != "[M]+."):
+    elif adduct and (soft or adduct in _SOFT_IONS):
         _take_adduct(plain, at, stop, mz, adduct, into)
     elif soft:
         into.took(at, stop, f"m/z {mz:g}: an ion of soft ionisation without its adduct, not taken over")
@@ -154,7 +157,7 @@ def read_high_res(plain: str, start: int, end: int, into: Gathered) -> None:
     last = max(masses[-1].end(), label.end() if label else 0)
     into.took(start, last, words + (f", {into.formula}" if into.formula else ""))
     tail = plain[last:end].strip(" .,;:)]\n")
-    if len(tail.split()) > _MOST_PROSE:
+    if len(_LONG_WORD.findall(tail)) > _MOST_PROSE:
         into.missed(last, end, "It says nothing of an accurate mass.")
 
 

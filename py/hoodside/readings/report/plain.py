@@ -78,6 +78,11 @@ def group_end(plain: str, start: int, end: int) -> int:
     return -1
 
 
+def follows_word(plain: str, at: int) -> bool:
+    """Whether a number at an offset is the tail of a name ("C12", "H-2") and so no reading."""
+    return at > 0 and plain[at - 1] != "δ" and (plain[at - 1].isalnum() or plain[at - 1] in "-_")
+
+
 def split_terms(plain: str, start: int, end: int) -> list[tuple[int, int]]:
     """The stretches between commas and semicolons that stand outside inner brackets."""
     terms, depth, begin = [], 0, start

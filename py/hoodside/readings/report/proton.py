@@ -17,7 +17,7 @@ from hoodside.readings.report.details import (
     read_token,
 )
 from hoodside.readings.report.model import Gathered
-from hoodside.readings.report.plain import group_end, with_decimal_points
+from hoodside.readings.report.plain import follows_word, group_end, with_decimal_points
 from hoodside.readings.solvents import known_solvent
 
 LOWEST, HIGHEST = -5.0, 25.0
@@ -140,9 +140,16 @@ class _Reader:
         """Whether a number outside brackets is a J or a number of H of the open signal."""
         if self._counts(at) or J_WITH_UNIT.match(self.plain, at, self.end):
             return True
-        if self.patterned >= 0 and not details.j and not self.plain[self.patterned : at].strip(" "):
-            return details.mult not in ("s", "m", "br s", "br m")
+        if self.patterned >= 0 and not details.j and details.mult not in ("s", "m", "br s", "br m"):
+            between = self.plain[self.patterned : at].strip(" ")
+            return not between or (between == "," and self._count_follows(at))
         return details.j_open and not self._shift_here(at)
+
+    def _count_follows(self, at: int) -> bool:
+        """Whether a number of H follows a number ("8.2, 2H"), so that a table has J in this column."""
+        found = _SHIFT.match(self.plain, at, self.end)
+        rest = self.plain[found.end() : found.end() + 8].lstrip(" ,") if found else ""
+        return self.signals[-1].details.n is None and COUNT.match(rest) is not None
 
     def _shift_here(self, at: int) -> bool:
         """Whether a number that follows a J or a pattern starts the next signal."""
@@ -159,7 +166,7 @@ class _Reader:
 
     def _shift(self, at: int) -> int:
         found = _SHIFT.match(self.plain, at, self.end)
-        if not found or (at and (self.plain[at - 1].isalnum() or self.plain[at - 1] in "-_")):
+        if not found or follows_word(self.plain, at):
             return at
         stop = found.end()
         ends = [float(value) for value in found.group("a", "b") if value]
@@ -212,7 +219,7 @@ def _shared_out(signals: list[_Signal]) -> list[_Signal]:
     """Give bare shifts their share of what is said of both: "7.81, 7.20 (2d, J = 8.2 Hz, 4H)"."""
     for i, signal in enumerate(signals):
         count = signal.details.repeat
-        if signal.details.mult == "ABq" and i and signals[i - 1].details.empty:
+        if signal.details.is_ab and i and signals[i - 1].details.empty:
             count = 2
         bare = signals[max(0, i - count + 1) : i]
         if count < 2 or len(bare) != count - 1 or any(not s.details.empty or s.bracketed for s in bare):
@@ -220,7 +227,7 @@ def _shared_out(signals: list[_Signal]) -> list[_Signal]:
         details = signal.details
         if details.n is not None and not details.each:
             details.n /= count
-        if details.mult == "ABq":
+        if details.is_ab:
             details.mult = "d"
         for other in bare:
             other.details = details
