@@ -15,7 +15,7 @@ from hoodside.predict.formula import (
     unsaturation,
 )
 from hoodside.readings.fields import number, record, refusal, show
-from hoodside.readings.from_json import MZ, TOLERANCE
+from hoodside.readings.spans import MZ, TOLERANCE
 
 _LEAST_PEAK = 0.5  # per cent of the tallest
 

@@ -7,8 +7,8 @@ from typing import Any
 from hoodside.methods.arguments import short_text
 from hoodside.predict.infrared import groups_for_band, ir_regions
 from hoodside.readings.fields import number
-from hoodside.readings.from_json import WAVENUMBER
 from hoodside.readings.infrared_words import strength_and_shape
+from hoodside.readings.spans import WAVENUMBER
 
 
 def regions() -> dict[str, Any]:

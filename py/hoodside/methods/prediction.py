@@ -10,8 +10,8 @@ from hoodside.predict.formula import exact_mass, formula_of, unsaturation
 from hoodside.predict.model import CarbonGroup, IrExpectation, MassExpectation, ProtonGroup, Term
 from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT, predict_all
 from hoodside.readings.fields import number, refusal
-from hoodside.readings.from_json import FIELD
 from hoodside.readings.solvents import known_solvent, solvent_names
+from hoodside.readings.spans import FIELD
 
 
 def predict(
