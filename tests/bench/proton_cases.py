@@ -3,7 +3,8 @@
 from __future__ import annotations
 
 import json
-from dataclasses import dataclass, field
+from dataclasses import dataclass
+from itertools import pairwise
 from pathlib import Path
 
 import numpy as np
@@ -34,19 +35,19 @@ class Compound:
     sites: list[Site]
     signals: list[Signal]
     origin: str  # file of tests/cases
-    twins: list[int] = field(default_factory=list)  # index of the other H of the same CH2, or -1
 
     @property
     def scheme(self) -> np.ndarray:
         return np.array([s.estimate.ppm for s in self.sites])
 
-    def is_twin(self, i: int) -> bool:
-        """Whether a group is one of two H on one saturated carbon that differ."""
-        return self.twins[i] >= 0 and self.sites[i].is_twin
-
     def pairs(self) -> list[tuple[int, int]]:
-        """Both groups of every such carbon."""
-        return [(i, j) for i, j in enumerate(self.twins) if i < j and self.is_twin(i)]
+        """Groups that differ only by where they stand: the two H of a CH2, the methyls of a slow rotor."""
+        twins = [i for i, s in enumerate(self.sites) if s.twin is not None]
+        return [(i, j) for i, j in pairwise(twins) if self._paired(i, j)]
+
+    def _paired(self, i: int, j: int) -> bool:
+        one, two = self.sites[i], self.sites[j]
+        return (one.twin, two.twin) == (0, 1) and one.hydrogens.n == two.hydrogens.n
 
     def expected(self, ppm: np.ndarray) -> list[Expected]:
         """The groups as the matching sees them, with the shifts now predicted."""
@@ -110,15 +111,8 @@ def solvent_compounds() -> list[Compound]:
 def compound(name: str, smiles: str, solvent: str, printed: list, origin: str) -> Compound:  # type: ignore[type-arg]
     structure = read_structure(smiles)
     found = sites(structure, solvent)
-    place = {(s.hydrogens.atoms[0], s.hydrogens.slot): i for i, s in enumerate(found)}
-    twins = [
-        place.get((s.hydrogens.atoms[0], 1 - s.hydrogens.slot), -1)
-        if s.hydrogens.relation == "diastereotopic"
-        else -1
-        for s in found
-    ]
     return Compound(
-        name, structure.inchikey.split("-")[0], smiles, solvent, found, read_signals(printed), origin, twins
+        name, structure.inchikey.split("-")[0], smiles, solvent, found, read_signals(printed), origin
     )
 
 

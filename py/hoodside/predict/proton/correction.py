@@ -32,12 +32,12 @@ class Refinement:
 
 
 def refine(features: Mapping[str, float], environment: str, twin: int | None) -> Refinement:
-    """The learned correction for one H; ``twin`` is 0 or 1 for the two H of a CH2 that differ, else None."""
+    """The learned correction for one H; ``twin`` is 0 or 1 for one of a pair, else None."""
     found = learned_table("proton_learned").correct(features)
     terms = [Term(_evidence(found.cases, found.radius), found.delta, _SOURCE)]
     if twin is not None:
         half = half_split(features)
-        terms.append(Term("diastereotopic pair", -half if twin else half, _SPLIT_SOURCE))
+        terms.append(Term("one of a pair", -half if twin else half, _SPLIT_SOURCE))
     scale = _scales().get(environment, _scales()["any"])
     return Refinement(tuple(terms), scale * float(found.variance**0.5))
 

@@ -15,7 +15,7 @@ from collections.abc import Iterator
 
 from hoodside.predict.environment import circular_codes
 from hoodside.predict.proton.alkene import ligand_positions
-from hoodside.predict.proton.aromatic import aromatic_rings, position_in
+from hoodside.predict.proton.aromatic import aromatic_rings, position_in, ring_substituents
 from hoodside.predict.proton.estimate import Estimate
 from hoodside.predict.proton.faces import ring_face
 from hoodside.predict.proton.geometry import across
@@ -49,6 +49,19 @@ def _names(view: View, atom: int, slot: int, estimate: Estimate, solvent: str) -
         yield from _alkene(view, atom, far, slot)
     if solvent != "CDCl3":
         yield from (f"v{solvent}", f"v{solvent} {kind}", f"v{solvent} {estimate.environment}")
+        yield from (f"v{solvent} {name}" for name in _polar_groups(view, atom))
+
+
+def _polar_groups(view: View, atom: int) -> Iterator[str]:
+    """Groups close by whose hydrogen bonds to the solvent move the H."""
+    structure = view.structure
+    if structure.atoms[atom].aromatic:
+        yield from (f"{where} {group.key}" for where, group, _ in ring_substituents(view, atom))
+        return
+    for near in structure.neighbours[atom]:
+        group = view.substituent(atom, near)
+        if group.kind != "alkyl":
+            yield f"on {group.key}"
 
 
 def _own_kind(view: View, atom: int) -> str:

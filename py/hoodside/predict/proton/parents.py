@@ -25,6 +25,7 @@ class Parent:
     shifts: tuple[tuple[int, float], ...]  # (position in the pattern, ppm)
     hydrogens: tuple[int, ...]  # H of the parent by position in the pattern
     in_ring: tuple[bool, ...]
+    rings: frozenset[tuple[str, ...]]  # the rings as ``_ring_kinds`` tells them
     source: str
 
 
@@ -48,7 +49,8 @@ class Place:
 def find_places(structure: Structure) -> dict[int, Place]:
     """Per atom that bears H, its place in the largest parent found."""
     found: dict[int, Place] = {}
-    parents = all_parents()
+    there = _ring_kinds(structure)
+    parents = [p for p in all_parents() if p.rings <= there] if there else []
     for parent, matches in zip(parents, match_patterns(structure, [p.smarts for p in parents]), strict=True):
         fresh: dict[int, list[tuple[float, int, frozenset[int]]]] = {}
         for match in matches:
@@ -94,7 +96,17 @@ def _parent(name: str, smiles: str, rows: list[Row]) -> Parent:
         shifts,
         tuple(atom.hydrogens for atom in plain.atoms),
         tuple(bool(plain.rings_of[atom.index]) for atom in plain.atoms),
+        _ring_kinds(plain),
         rows[0]["source"],
+    )
+
+
+def _ring_kinds(structure: Structure) -> frozenset[tuple[str, ...]]:
+    """Every ring as the sorted symbols of its atoms, aromatic ones small."""
+    atoms = structure.atoms
+    return frozenset(
+        tuple(sorted(atoms[a].symbol.lower() if atoms[a].aromatic else atoms[a].symbol for a in ring))
+        for ring in structure.rings
     )
 
 

@@ -13,6 +13,8 @@ from hoodside.molecule.kernel import Matches
 _NESTED = re.compile(r"\$\([^()]*(?:\([^()]*(?:\([^()]*\)[^()]*)*\)[^()]*)*\)")
 _ATOM = re.compile(r"\[([^\]]*)\]|(Br|Cl|[BCNOPSFI])|([bcnops])")
 _FIRST = re.compile(r"#(\d+)|([A-Z][a-z]?)|(se|[bcnops])(?![a-z])")
+_WITH_H = re.compile(r"^[^!]*H[1-4]")
+_MOBILE = frozenset({"N", "O", "S"})
 _BRACKET = re.compile(r"\[[^\]]*\]")
 #: Marks beside element symbols in what a pattern asks for.
 _AROMATIC, _TRIPLE = "aromatic", "triple"
@@ -46,11 +48,15 @@ def _needs_of(bracket: str) -> set[str]:
     number, symbol, aromatic = found.groups()
     if number:
         return {SYMBOLS[int(number)]} - {"H"}
-    return {symbol} - {"H", "X", "R"} if symbol else {aromatic.capitalize(), _AROMATIC}
+    needs = {symbol} - {"H", "X", "R"} if symbol else {aromatic.capitalize(), _AROMATIC}
+    if (symbol or aromatic.upper()) in _MOBILE and _WITH_H.search(bracket):
+        needs.add(f"{symbol or aromatic.upper()}H")
+    return needs
 
 
 def _contents(structure: Structure) -> set[str]:
     there = set(structure.element_counts)
+    there |= {f"{a.symbol}H" for a in structure.atoms if a.hydrogens and a.symbol in _MOBILE}
     if any(atom.aromatic for atom in structure.atoms):
         there.add(_AROMATIC)
     if any(bond.order == 3 for bond in structure.bonds):

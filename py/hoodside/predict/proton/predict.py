@@ -15,6 +15,7 @@ from hoodside.predict.proton.correction import refine
 from hoodside.predict.proton.estimate import Estimate
 from hoodside.predict.proton.exchangeable import ExchangeRange, exchange_ranges
 from hoodside.predict.proton.features import hydrogen_features
+from hoodside.predict.proton.rotamers import split_rotamers
 from hoodside.predict.proton.schemes import combine
 from hoodside.predict.proton.sp3 import estimate_sp3
 from hoodside.predict.proton.view import View
@@ -30,7 +31,7 @@ class Site:
     estimate: Estimate
     features: dict[str, float]
     exchange: ExchangeRange | None
-    is_twin: bool = False  # one of two H on one saturated carbon that differ
+    twin: int | None = None  # 0 or 1: which of two that differ only by where they stand
 
 
 def predict_protons(structure: Structure, solvent: str = "CDCl3") -> tuple[ProtonGroup, ...]:
@@ -45,29 +46,32 @@ def predict_protons(structure: Structure, solvent: str = "CDCl3") -> tuple[Proto
 
 
 def sites(structure: Structure, solvent: str) -> list[Site]:
-    """Every set of equivalent H with its scheme estimate, in the order of ``hydrogen_sets``."""
+    """Every set of equivalent H with its scheme estimate, in the order of ``hydrogen_sets``.
+
+    The methyls of a dimethyl amide, which rotate slowly, are two sets.
+    """
     view = View(structure)
     ranges = exchange_ranges(structure, solvent)
     classes = class_estimates(structure)
     found = []
-    for hydrogens in hydrogen_sets(structure):
+    for hydrogens, rotamer in split_rotamers(structure, hydrogen_sets(structure)):
         atom = hydrogens.atoms[0]
         if atom in ranges:
             found.append(Site(hydrogens, _UNKNOWN, {}, ranges[atom]))
             continue
-        estimate = scheme_estimate(view, classes, atom, hydrogens.slot)
+        estimate = combine(scheme_estimates(view, classes, atom, hydrogens.slot))
         features = hydrogen_features(view, atom, hydrogens.slot, estimate, solvent)
-        is_twin = hydrogens.relation == "diastereotopic" and view.is_saturated(atom)
-        found.append(Site(hydrogens, estimate, features, None, is_twin))
+        is_pair = hydrogens.relation == "diastereotopic" and view.is_saturated(atom)
+        found.append(Site(hydrogens, estimate, features, None, hydrogens.slot if is_pair else rotamer))
     return found
 
 
-def scheme_estimate(view: View, classes: dict[int, Estimate], atom: int, slot: int) -> Estimate:
-    """The joint estimate of all schemes that apply to one H."""
+def scheme_estimates(view: View, classes: dict[int, Estimate], atom: int, slot: int) -> list[Estimate]:
+    """What each scheme that applies says of one H; the first names the class of hydrogen."""
     found = _by_bonding(view, atom, slot)
     if atom in classes:
         found.append(classes[atom])
-    return combine(found) if found else _UNKNOWN
+    return found or [_UNKNOWN]
 
 
 def _by_bonding(view: View, atom: int, slot: int) -> list[Estimate]:
@@ -86,7 +90,7 @@ def _group(site: Site) -> ProtonGroup:
 
 
 def _fixed(site: Site) -> ProtonGroup:
-    refined = refine(site.features, site.estimate.environment, site.hydrogens.slot if site.is_twin else None)
+    refined = refine(site.features, site.estimate.environment, site.twin)
     terms = (*site.estimate.terms, *refined.terms)
     return ProtonGroup(
         atoms=site.hydrogens.atoms,
