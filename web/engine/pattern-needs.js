@@ -6,7 +6,11 @@ const BARE = /^(Cl|Br|[BCNOSPFI]|[bcnosp]|\*)/;
 const SYMBOL = /^(Cl|Br|Si|Se|As|Sn|Ge|Te|[BCNOSPFIKUVWY]|[bcnosp]|se|as)(?![a-z])/;
 const BY_NUMBER = ['', 'H', 'He', 'Li', 'Be', 'B', 'C', 'N', 'O', 'F', 'Ne', 'Na', 'Mg', 'Al', 'Si', 'P', 'S', 'Cl'];
 
-/** Kinds of atom a SMARTS asks for, one list of alternatives per atom ("C" aliphatic, "c" aromatic). */
+/** @type {Record<number, string>} */
+const HEAVIER = { 32: 'Ge', 33: 'As', 34: 'Se', 35: 'Br', 50: 'Sn', 52: 'Te', 53: 'I' };
+
+/** Kinds of atom a SMARTS asks for, one list of alternatives per atom ("C" aliphatic, "c" aromatic).
+ * @param {string} smarts @returns {string[][]} */
 export function patternNeeds(smarts) {
   const needs = [];
   for (let at = 0; at < smarts.length; ) {
@@ -24,24 +28,25 @@ export function patternNeeds(smarts) {
   return needs;
 }
 
-/** True when a molecule with these counts of atom kinds might match. */
+/** True when a molecule with these counts of atom kinds might match.
+ * @param {string[][]} needs @param {Map<string, number>} counts */
 export function mightMatch(needs, counts) {
   const single = new Map();
   for (const kinds of needs) {
     if (!kinds.some((kind) => counts.has(kind))) return false;
     if (kinds.length === 1) single.set(kinds[0], (single.get(kinds[0]) ?? 0) + 1);
   }
-  for (const [kind, wanted] of single) if (counts.get(kind) < wanted) return false;
+  for (const [kind, wanted] of single) if ((counts.get(kind) ?? 0) < wanted) return false;
   return true;
 }
 
-/** Counts of atom kinds of a molecule, from RDKit's JSON graph. */
+/** Counts of atom kinds of a molecule, from RDKit's JSON graph. @param {any} graph @returns {Map<string, number>} */
 export function atomKinds(graph) {
   const molecule = graph.molecules[0];
-  const extension = molecule.extensions?.find((e) => e.name === 'rdkitRepresentation');
+  const extension = molecule.extensions?.find((/** @type {{ name: string }} */ e) => e.name === 'rdkitRepresentation');
   const aromatic = new Set(extension?.aromaticAtoms ?? []);
   const counts = new Map();
-  (molecule.atoms ?? []).forEach((atom, index) => {
+  (molecule.atoms ?? []).forEach((/** @type {{ z?: number }} */ atom, /** @type {number} */ index) => {
     const z = atom.z ?? graph.defaults.atom.z;
     const symbol = kindOf(z);
     const kind = aromatic.has(index) ? symbol.toLowerCase() : symbol;
@@ -50,11 +55,12 @@ export function atomKinds(graph) {
   return counts;
 }
 
-// Only the elements that patterns may need by name get one; the rest can never be missed.
+/** Only the elements that patterns may need by name get one; the rest can never be missed. @param {number} z */
 function kindOf(z) {
-  return BY_NUMBER[z] ?? { 32: 'Ge', 33: 'As', 34: 'Se', 35: 'Br', 50: 'Sn', 52: 'Te', 53: 'I' }[z] ?? `#${z}`;
+  return BY_NUMBER[z] ?? HEAVIER[z] ?? `#${z}`;
 }
 
+/** @param {string} text @param {number} start @param {string} open @param {string} close */
 function closing(text, start, open, close) {
   let depth = 0;
   for (let at = start; at < text.length; at += 1) {
@@ -64,17 +70,18 @@ function closing(text, start, open, close) {
   return text.length;
 }
 
-// Kinds a bracket atom allows, or null when it allows more than can be listed. SMARTS precedence: & or
-// nothing binds tightest, then "," and last ";" (Daylight Theory Manual, chapter 4). One factor that
-// names its kinds is enough, since the others can only narrow it.
+/** Kinds a bracket atom allows, or null when it allows more than can be listed. SMARTS precedence: & or
+ * nothing binds tightest, then "," and last ";" (Daylight Theory Manual, chapter 4). One factor that
+ * names its kinds is enough, since the others can only narrow it. @param {string} body */
 function bracketKinds(body) {
   for (const part of split(body, ';')) {
     const alternatives = split(part, ',').map(termKinds);
-    if (alternatives.every(Boolean)) return [...new Set(alternatives.flat())];
+    if (alternatives.every((kinds) => kinds !== null)) return [...new Set(alternatives.flat())];
   }
   return null;
 }
 
+/** @param {string} term */
 function termKinds(term) {
   for (const factor of split(term, '&')) {
     const number = /^#(\d+)(?!\d)/.exec(factor);
@@ -85,12 +92,13 @@ function termKinds(term) {
   return null;
 }
 
+/** @param {number} z */
 function bothKinds(z) {
   const symbol = kindOf(z);
   return z === 1 ? null : [symbol, symbol.toLowerCase()];
 }
 
-// Splits outside of recursive patterns.
+/** Splits outside of recursive patterns. @param {string} text @param {string} mark */
 function split(text, mark) {
   const parts = [''];
   for (let at = 0; at < text.length; at += 1) {
