@@ -39,6 +39,7 @@ METHODS: dict[str, str] = {
     "outcomes": "steps:outcomes",
     "reagents": "steps:reagents",
     "rivals": "rivals:rivals",
+    "changes": "changes:changes",
     "amounts": "quantities:amounts",
 }
 _HOME = "hoodside.methods."

@@ -1,0 +1,25 @@
+"""What should have changed on the way from a start to a product."""
+
+from __future__ import annotations
+
+from dataclasses import asdict
+from typing import Any
+
+from hoodside.advise import changes as advice
+from hoodside.methods.arguments import short_text
+from hoodside.methods.prediction import solvent_of
+from hoodside.methods.structures import structure_of
+from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT
+from hoodside.readings.fields import number
+from hoodside.readings.spans import FIELD
+
+
+def changes(start: str, product: str, solvent: str = USUAL_SOLVENT, mhz: float = USUAL_MHZ) -> dict[str, Any]:
+    """Readings to look for, the most telling first."""
+    found = advice.changes(
+        structure_of(start, "start"),
+        structure_of(product, "product"),
+        solvent_of(short_text(solvent or USUAL_SOLVENT, "solvent")),
+        number(mhz or USUAL_MHZ, "mhz", FIELD),
+    )
+    return {"changes": [{**asdict(change), "telling": round(change.telling, 1)} for change in found]}
