@@ -7,7 +7,7 @@ from hoodside.predict.wet import expected_results
 from hoodside.readings import Readings
 from hoodside.weigh.decibans import decibans
 from hoodside.weigh.finding import Finding, Weighed
-from hoodside.weigh.trust import TRUST
+from hoodside.weigh.trust import trust
 
 #: Share of compounds at large on which a test is positive (common practice).
 _ANYHOW = 0.35
@@ -31,6 +31,6 @@ def weigh_tests(structure: Structure, readings: Readings) -> Weighed:
         )
         text = f"{done.test} {done.result}; for this structure it {expected}: {e.why}."
         findings.append(
-            Finding("wet", TRUST["wet"] * decibans(ratio), text, (f"wet:{k}",), e.atoms, e.source)
+            Finding("wet", trust("wet") * decibans(ratio), text, (f"wet:{k}",), e.atoms, e.source)
         )
     return Weighed(tuple(findings))

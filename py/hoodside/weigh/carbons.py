@@ -18,7 +18,7 @@ from hoodside.weigh.background import spread
 from hoodside.weigh.decibans import decibans, odds, t_between
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.impurities import Stray, carbon_stray
-from hoodside.weigh.trust import TRUST
+from hoodside.weigh.trust import trust
 
 #: A printed line stands for places this far to either side, ppm (rounding and reference).
 _HALF = 0.15
@@ -35,6 +35,8 @@ _KIND_WRONG = 0.03
 _KINDS = 4
 #: A line too many where fluorine may split lines in two, decibans.
 _SPLIT_BY_F = -6.0
+#: Chance of a gap in a list that seems complete, and the share of lines that may lack before it does not.
+_SURELY_LISTED, _FORGIVEN = 0.002, 0.25
 _FEW_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
 
 
@@ -51,7 +53,8 @@ def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, fluorines: 
         return Weighed()
     lines = _all_prepared(readings.c13, readings.solvent, fluorines > 0)
     given = pair_lines(groups, lines)
-    findings = [*_line_findings(groups, lines, given), *_missing_findings(groups, given)]
+    listed = share_listed(groups, lines)
+    findings = [*_line_findings(groups, lines, given), *_missing_findings(groups, given, listed)]
     return Weighed(
         tuple(findings),
         tuple(Link(f"c13:{k}", f"c13:{g}", groups[g].atoms) for g, k in enumerate(given) if k >= 0),
@@ -86,7 +89,8 @@ def pair_lines(groups: Sequence[CarbonGroup], lines: Sequence[_Line]) -> list[in
     order = sorted(range(len(groups)), key=lambda g: -groups[g].ppm)
     places = sorted(range(len(lines)), key=lambda k: -lines[k].given.ppm)
     suits = [[place_weight(groups[g], lines[k].given, lines[k].anyhow_db) for k in places] for g in order]
-    gaps = [missing_weight(groups[g]) for g in order]
+    listed = share_listed(groups, lines)
+    gaps = [missing_weight(groups[g], listed) for g in order]
     strays = [lines[k].stray.weight_db for k in places]
     shared = [lines[k].anyhow_db for k in places]
     back = _fill(suits, gaps, strays, shared)
@@ -159,9 +163,18 @@ def _kind_weight(group: CarbonGroup, line: CarbonLine) -> float:
     return decibans(chance * _KINDS)
 
 
-def missing_weight(group: CarbonGroup) -> float:
-    """Weight of a group without a line, decibans."""
-    return _MISSING_QUATERNARY if group.kind == "C" else _MISSING_WITH_H
+def missing_weight(group: CarbonGroup, listed: float) -> float:
+    """Weight of a group without a line, decibans; ``listed``: lines over groups, at most 1.
+
+    While a list is still being typed, a carbon without line is most likely one not typed yet.
+    """
+    usual = _MISSING_QUATERNARY if group.kind == "C" else _MISSING_WITH_H
+    return max(usual, decibans(max(1 - listed, _SURELY_LISTED)))
+
+
+def share_listed(groups: Sequence[CarbonGroup], lines: Sequence[_Line]) -> float:
+    """Lines over groups, at most 1. A few lines short is accidental equivalence, half of them a stub."""
+    return min(_FORGIVEN + len(lines) / max(len(groups), 1), 1.0)
 
 
 def _line_findings(groups: Sequence[CarbonGroup], lines: list[_Line], given: list[int]) -> Iterator[Finding]:
@@ -170,7 +183,7 @@ def _line_findings(groups: Sequence[CarbonGroup], lines: list[_Line], given: lis
         ref = (f"c13:{k}",)
         if not held:
             text, source = _stray_text(line), _FEW_SOURCE if line.stray.name else ""
-            yield Finding("c13.stray", TRUST["c13.stray"] * line.stray.weight_db, text, ref, (), source)
+            yield Finding("c13.stray", trust("c13.stray") * line.stray.weight_db, text, ref, (), source)
             continue
         weight = line.anyhow_db * (len(held) - 1) + decibans(_COINCIDE / _HALF) * (len(held) - 1)
         kinds = 0.0
@@ -184,7 +197,7 @@ def _line_findings(groups: Sequence[CarbonGroup], lines: list[_Line], given: lis
         source = first.terms[0].source if first.terms else ""
         yield Finding(
             "c13.shift",
-            TRUST["c13.shift"] * weight,
+            trust("c13.shift") * weight,
             _line_text(line, [groups[g] for g in held]),
             ref,
             atoms,
@@ -192,14 +205,14 @@ def _line_findings(groups: Sequence[CarbonGroup], lines: list[_Line], given: lis
         )
         if kinds:
             yield Finding(
-                "c13.kind", TRUST["c13.kind"] * kinds, _kind_text(line, first), ref, atoms, "DEPT or HSQC"
+                "c13.kind", trust("c13.kind") * kinds, _kind_text(line, first), ref, atoms, "DEPT or HSQC"
             )
 
 
-def _missing_findings(groups: Sequence[CarbonGroup], given: list[int]) -> Iterator[Finding]:
+def _missing_findings(groups: Sequence[CarbonGroup], given: list[int], listed: float) -> Iterator[Finding]:
     for group, k in zip(groups, given, strict=True):
         if k < 0:
-            weight = TRUST["c13.missing"] * missing_weight(group)
+            weight = trust("c13.missing") * missing_weight(group, listed)
             yield Finding("c13.missing", weight, _missing_text(group), (), group.atoms)
 
 

@@ -6,7 +6,7 @@ from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any
 
-from hoodside.advise.next import advise
+from hoodside.advise.next import Standing, advise
 from hoodside.errors import FormulaError, InvalidInputError, StructureError
 from hoodside.predict.formula import parse_formula, unsaturation
 from hoodside.predict.model import ProtonGroup
@@ -15,7 +15,7 @@ from hoodside.readings.from_json import readings_from_json
 from hoodside.weigh.expectations import expectations
 from hoodside.weigh.sentence import name_of, sentence
 from hoodside.weigh.structure import Tally, weigh_structure
-from hoodside.weigh.verdict import Verdict, judge, shares
+from hoodside.weigh.verdict import CLASHES, Verdict, judge, shares
 
 #: More candidates than this are not weighed at once.
 MOST_CANDIDATES = 200
@@ -49,10 +49,16 @@ def check_case(case: dict[str, Any]) -> dict[str, Any]:
         "dbe": formula[1],
         "warnings": warnings,
         "candidates": [_candidate(i, ranked) for i in range(len(ranked))],
-        "next": [
-            entry.to_dict() for entry in advise(readings, [(r.tally, r.share, r.verdict) for r in ranked])
-        ],
+        "next": [entry.to_dict() for entry in advise(readings, _standing(ranked))],
     }
+
+
+def _standing(ranked: Sequence[Ranked]) -> list[Standing]:
+    return [
+        Standing(place, name_of(r.index), r.share, r.tally.expected)
+        for place, r in enumerate(ranked)
+        if r.verdict.verdict != CLASHES
+    ]
 
 
 def candidates_of(case: dict[str, Any]) -> list[str]:

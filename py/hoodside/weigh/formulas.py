@@ -20,7 +20,7 @@ from hoodside.predict.formula import (
 from hoodside.readings import Readings
 from hoodside.weigh.decibans import decibans, t_density
 from hoodside.weigh.finding import Finding, Weighed
-from hoodside.weigh.trust import TRUST
+from hoodside.weigh.trust import trust
 from hoodside.weigh.words import formula_text, listed
 
 #: Chance that a formula taken as given is wrong.
@@ -71,7 +71,7 @@ def _given(formula: Formula, readings: Readings, ruled_out: bool) -> Iterator[Fi
     mine = formula_text(formula.text)
     if ruled_out:
         text = f"The structure is {mine}, not {formula_text(readings.formula)}."
-        yield Finding("formula", TRUST["formula"] * decibans(_FORMULA_WRONG), text, ("formula",))
+        yield Finding("formula", trust("formula") * decibans(_FORMULA_WRONG), text, ("formula",))
     else:
         yield Finding("formula", 0.0, f"Formula {mine} as given.", ("formula",))
 
@@ -96,7 +96,7 @@ def _accurate(formula: Formula, readings: Readings) -> Iterator[Finding]:
         f"{within} ± {mass.ppm:g} ppm."
     )
     yield Finding(
-        "hrms", TRUST["hrms"] * decibans(ratio), text, ("hrms",), (), "AME2020 masses (facts/isotopes.csv)"
+        "hrms", trust("hrms") * decibans(ratio), text, ("hrms",), (), "AME2020 masses (facts/isotopes.csv)"
     )
 
 
@@ -118,5 +118,5 @@ def _combustion(formula: Formula, readings: Readings) -> Iterator[Finding]:
         text += f" It would fit with {fits[0].amount:g} {formula_text(fits[0].solvent)}."
         weight = max(weight, _SOLVATE)
     yield Finding(
-        "analysis", TRUST["analysis"] * weight, text, ("analysis",), (), lines[0].source if lines else ""
+        "analysis", trust("analysis") * weight, text, ("analysis",), (), lines[0].source if lines else ""
     )

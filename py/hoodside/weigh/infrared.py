@@ -9,7 +9,7 @@ from hoodside.predict.infrared.evidence import BandEvidence, weigh_bands, weigh_
 from hoodside.predict.model import IrExpectation
 from hoodside.readings import Readings
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
-from hoodside.weigh.trust import TRUST
+from hoodside.weigh.trust import trust
 
 #: Bands under this wavenumber are the compound's own fingerprint, seldom read one by one, cm-1.
 _FINGERPRINT = 1500.0
@@ -52,7 +52,7 @@ def _bands(evidence: Sequence[BandEvidence], readings: Readings) -> Iterator[Fin
         if entry.reading < 0 and entry.expected is not None:
             yield Finding(
                 "ir.missing",
-                TRUST["ir.missing"] * entry.weight_db,
+                trust("ir.missing") * entry.weight_db,
                 _absent_text(entry.expected),
                 (),
                 entry.expected.atoms,
@@ -62,7 +62,7 @@ def _bands(evidence: Sequence[BandEvidence], readings: Readings) -> Iterator[Fin
         cm1 = readings.ir[entry.reading].cm1
         e = entry.expected
         text = _stray_text(cm1) if e is None else _seen_text(cm1, e)
-        weight = TRUST["ir.band"] * entry.weight_db
+        weight = trust("ir.band") * entry.weight_db
         yield Finding(
             "ir.band", weight, text, (f"ir:{entry.reading}",), e.atoms if e else (), e.source if e else ""
         )
@@ -82,7 +82,7 @@ def _clear(evidence: Sequence[BandEvidence], readings: Readings) -> Iterator[Fin
         band = worst.expected
         yield Finding(
             "ir.clear",
-            TRUST["ir.clear"] * worst.weight_db,
+            trust("ir.clear") * worst.weight_db,
             f"Clear from {span}, yet {band.group} should give a {band.strength} {band.mode} near "
             f"{band.typical:.0f} cm⁻¹.",
             (f"ir_clear:{i}",),

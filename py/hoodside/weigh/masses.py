@@ -9,7 +9,7 @@ from hoodside.predict.model import MassExpectation
 from hoodside.readings import MassPeak, Readings
 from hoodside.weigh.decibans import decibans, t_density
 from hoodside.weigh.finding import Finding, Link, Weighed
-from hoodside.weigh.trust import TRUST
+from hoodside.weigh.trust import trust
 
 #: Ions made from a whole molecule by soft ionisation, as nominal mass differences (facts/ms_adducts.csv).
 _ADDUCTS = {1: "[M+H]⁺", 23: "[M+Na]⁺", 18: "[M+NH₄]⁺", 39: "[M+K]⁺", -1: "[M−H]⁻"}
@@ -66,15 +66,15 @@ def _peak(
     ref = (f"ms:{k}",)
     if mz in whole:
         weight = decibans(0.7 * _MASSES / 3)
-        return Finding("ms.molecule", TRUST["ms.molecule"] * weight, f"m/z {mz} is {whole[mz]}.", ref)
+        return Finding("ms.molecule", trust("ms.molecule") * weight, f"m/z {mz} is {whole[mz]}.", ref)
     if mz > nominal + _SLACK:
         text = f"m/z {mz} lies above the molecular mass of {nominal}."
-        return Finding("ms.molecule", TRUST["ms.molecule"] * _TOO_HEAVY, text, ref)
+        return Finding("ms.molecule", trust("ms.molecule") * _TOO_HEAVY, text, ref)
     if mz > nominal:
         return Finding("ms.ion", 0.0, f"m/z {mz} is an isotope peak of the molecular ion.", ref)
     likely = sum(e.weight for e in expected if round(e.mz) == mz)
     ratio = (_STRAYS / _MASSES + likely) / total * _MASSES
-    weight = TRUST["ms.ion"] * decibans(max(ratio, 0.05))
+    weight = trust("ms.ion") * decibans(max(ratio, 0.05))
     if mz in fragments:
         ion = expected[fragments[mz]]
         return Finding("ms.ion", weight, f"m/z {mz}: {ion.label}.", ref, ion.atoms, ion.source)
@@ -96,7 +96,7 @@ def _isotopes(formula: Formula, nominal: int, peaks: Sequence[MassPeak]) -> Iter
     weight = decibans((1 - _RATIO_WRONG) * suits + _RATIO_WRONG)
     text = f"M+2 is {100 * seen:.0f} % of M; {100 * due:.0f} % expected for {formula.text}."
     refs = (f"ms:{at[nominal]}", f"ms:{at[nominal + 2]}")
-    yield Finding("ms.isotopes", TRUST["ms.isotopes"] * weight, text, refs, (), "IUPAC isotopic abundances")
+    yield Finding("ms.isotopes", trust("ms.isotopes") * weight, text, refs, (), "IUPAC isotopic abundances")
 
 
 #: An M+2 peak as tall as this is always listed beside M in a full list.
@@ -109,7 +109,7 @@ def _no_isotope_peak(
     due = _ratio(formula)
     if nominal in at and len(peaks) >= _SPECTRUM and due > _TALL and (peaks[at[nominal]].rel or 0) > 5:
         text = f"No M+2 peak beside M, though {100 * due:.0f} % of it is expected."
-        yield Finding("ms.isotopes", TRUST["ms.isotopes"] * -4.0, text, (f"ms:{at[nominal]}",))
+        yield Finding("ms.isotopes", trust("ms.isotopes") * -4.0, text, (f"ms:{at[nominal]}",))
 
 
 def _ratio(formula: Formula) -> float:

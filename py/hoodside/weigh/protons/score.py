@@ -37,6 +37,8 @@ _COUNT_FLOOR = -30.0
 _PAIR = -1.0
 #: A group without signal: exchangeable H are often not listed; any other H is a gap, more so the larger.
 _MISSING_EXCHANGEABLE, _MISSING, _MISSING_PER_H = -3.0, -11.0, -1.5
+#: A list that holds this share of the H seems complete; the chance of a gap in it then.
+_SEEMS_COMPLETE, _SURELY_LISTED = 0.75, 0.002
 
 
 @dataclass(frozen=True, slots=True)
@@ -61,6 +63,7 @@ class Scorer:
     patterns: Patterns
     signals: Sequence[Signal]
     raw: bool
+    listed: float  # how complete the list of signals seems, 0 to 1
     places: Sequence[Sequence[float]]
 
     @classmethod
@@ -68,7 +71,12 @@ class Scorer:
         cls, groups: Sequence[ProtonGroup], patterns: Patterns, signals: Sequence[Signal], raw: bool
     ) -> Scorer:
         """Prepare the places of every group in every signal."""
-        return cls(groups, patterns, signals, raw, [[_place(g, s) for s in signals] for g in groups])
+        places = [[_place(g, s) for s in signals] for g in groups]
+        return cls(groups, patterns, signals, raw, share_listed(groups, signals, raw), places)
+
+    def missing(self, group: int) -> float:
+        """Weight of a group that no signal shows."""
+        return missing_weight(self.groups[group], self.listed)
 
     def total(self, signal: int, members: tuple[int, ...]) -> float:
         """Weight of a signal that holds ``members`` (indices of groups)."""
@@ -103,11 +111,25 @@ class Scorer:
         return next((k for k in members if k != m and self.groups[k].atoms == group.atoms), None)
 
 
-def missing_weight(group: ProtonGroup) -> float:
-    """Weight of a group that no signal shows, decibans."""
+def missing_weight(group: ProtonGroup, listed: float) -> float:
+    """Weight of a group that no signal shows, decibans.
+
+    ``listed``: how complete the list of signals seems, 0 to 1. While a list is still being typed, a
+    group without signal is most likely one not typed yet.
+    """
     if group.exchangeable:
         return _MISSING_EXCHANGEABLE * group.n
-    return _MISSING + _MISSING_PER_H * min(group.n, 9)
+    return max(_MISSING + _MISSING_PER_H * min(group.n, 9), decibans(max(1 - listed, _SURELY_LISTED)))
+
+
+def share_listed(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: bool) -> float:
+    """How complete the list of signals seems for a structure, 0 to 1; 1 where integrals do not tell."""
+    due = sum(g.n for g in groups if not g.exchangeable)
+    if raw or not due:
+        return 1.0
+    usual = due / len(groups)
+    found = sum(usual if s.n is None else s.n for s in signals if not s.stray.name)
+    return min(found / due / _SEEMS_COMPLETE, 1.0)
 
 
 def count_weight(expected: int, printed: float | None, raw: bool) -> float:

@@ -8,7 +8,7 @@ from dataclasses import dataclass
 from hoodside.predict.model import ProtonGroup
 from hoodside.weigh.protons.assign import NOWHERE, Puzzle, assign
 from hoodside.weigh.protons.pattern import Patterns
-from hoodside.weigh.protons.score import Scorer, missing_weight
+from hoodside.weigh.protons.score import Scorer
 from hoodside.weigh.protons.signals import Signal, rescaled
 
 #: Raw integrals are rescaled from the assignment this many times.
@@ -53,7 +53,7 @@ def _solve(
         roaming=[g.exchangeable for g in groups],
         places=[s.ppm for s in signals],
         room=[s.n for s in signals],
-        missing=[missing_weight(g) for g in groups],
+        missing=[scorer.missing(g) for g in range(len(groups))],
         suits=scorer.places,
         score=scorer.total,
     )

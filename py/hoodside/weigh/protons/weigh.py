@@ -9,10 +9,10 @@ from hoodside.readings import Readings
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.protons.assign import NOWHERE
 from hoodside.weigh.protons.pattern import Patterns, is_pair
-from hoodside.weigh.protons.score import Terms, missing_weight
+from hoodside.weigh.protons.score import Terms
 from hoodside.weigh.protons.signals import prepare
 from hoodside.weigh.protons.solve import Solution, solve
-from hoodside.weigh.trust import TRUST
+from hoodside.weigh.trust import trust
 from hoodside.weigh.words import amount, atoms_of, group_name, plural_h, printed
 
 _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
@@ -48,16 +48,16 @@ def _of_signal(solution: Solution, readings: Readings, k: int) -> Iterator[Findi
     ref, atoms = (f"h1:{k}",), atoms_of(held)
     signal = readings.h1[k]
     yield Finding(
-        "h1.shift", TRUST["h1.shift"] * terms.place, _place_text(solution, k, held), ref, atoms, _source(held)
+        "h1.shift", trust("h1.shift") * terms.place, _place_text(solution, k, held), ref, atoms, _source(held)
     )
-    yield Finding("h1.count", TRUST["h1.count"] * terms.count, _count_text(solution, k, held), ref, atoms)
+    yield Finding("h1.count", trust("h1.count") * terms.count, _count_text(solution, k, held), ref, atoms)
     if signal.mult:
         text = _pattern_text(solution, members, signal.mult)
-        yield Finding("h1.pattern", TRUST["h1.pattern"] * terms.pattern, text, ref, atoms, _COUNTED)
+        yield Finding("h1.pattern", trust("h1.pattern") * terms.pattern, text, ref, atoms, _COUNTED)
     if terms.coupling:
         text = _coupling_text(solution, members, signal.j, terms)
         yield Finding(
-            "h1.coupling", TRUST["h1.coupling"] * terms.coupling, text, ref, atoms, "facts/couplings_hh.csv"
+            "h1.coupling", trust("h1.coupling") * terms.coupling, text, ref, atoms, "facts/couplings_hh.csv"
         )
 
 
@@ -112,7 +112,7 @@ def _stray_finding(solution: Solution, readings: Readings, k: int) -> Finding:
     signal = solution.signals[k]
     return Finding(
         "h1.stray",
-        TRUST["h1.stray"] * signal.stray.weight_db,
+        trust("h1.stray") * signal.stray.weight_db,
         f"{_stray_text(solution, k)}",
         (f"h1:{k}",),
         (),
@@ -129,12 +129,12 @@ def _stray_text(solution: Solution, k: int) -> str:
 
 
 def _missing_findings(solution: Solution) -> Iterator[Finding]:
-    for group, s in zip(solution.groups, solution.given, strict=True):
+    for g, (group, s) in enumerate(zip(solution.groups, solution.given, strict=True)):
         if s == NOWHERE:
             text = _missing_text(group)
             yield Finding(
                 "h1.missing",
-                TRUST["h1.missing"] * missing_weight(group),
+                trust("h1.missing") * solution.scorer.missing(g),
                 text,
                 (),
                 group.atoms,
