@@ -50,7 +50,14 @@ def test_words_in_brackets_stand_for_the_codes_they_speak_of_and_no_more() -> No
         assert words in said
 
 
+def test_grave_is_what_kills_burns_or_explodes() -> None:
+    told = cautions_for(["OsO4", "n-BuLi", "TMSN3", "NMO", "Na2S2O3", "DMSO"])
+    assert [caution.grave for caution in told] == [True, True, True, False, False, False]
+
+
 def test_the_worst_comes_first() -> None:
+    assert gravest("H300 H310 H330") == "fatal if swallowed, on skin or inhaled"
+    assert gravest("H310") == "fatal on skin"
     assert gravest("H290 H314 H330 H400").startswith("fatal if inhaled")
     assert gravest("H315 H319 H271").startswith("may cause fire or explosion")
     assert "explode" in gravest("H315 H319 H335; dry salt may explode")

@@ -15,9 +15,9 @@ _CODE = re.compile(rf"\b{_CODES}\b")
 _EXPLAINED = re.compile(rf"(?P<codes>\b{_CODES}\b(?:[\s+/]+{_CODES}\b)*)\s*\((?P<words>[^()]*)\)")
 #: Ways into the body, by the statements that speak of them.
 _ROUTES = {
-    "fatal": {"H300": "if swallowed", "H310": "on skin", "H330": "if inhaled"},
-    "toxic": {"H301": "if swallowed", "H311": "on skin", "H331": "if inhaled"},
-    "harmful": {"H302": "if swallowed", "H312": "on skin", "H332": "if inhaled"},
+    "fatal": {"H300": "swallowed", "H310": "on skin", "H330": "inhaled"},
+    "toxic": {"H301": "swallowed", "H311": "on skin", "H331": "inhaled"},
+    "harmful": {"H302": "swallowed", "H312": "on skin", "H332": "inhaled"},
 }
 #: Notes of where a code was read, of no use at the hood.
 _PROVENANCE = re.compile(
@@ -29,17 +29,22 @@ _RECALLED = re.compile(r"\b(?:others )?recalled\s+|,? recalled\b")
 _GOES_ON = r"(?:for|or|and|to|by|with|plus|in|as|when|some|reported)\b"
 #: Dangers that no hazard statement speaks of.
 _UNCODED = re.compile(r"explo|deflagrat|ignit|runs? away|run away|\bHCN\b|may kill|detonat", re.IGNORECASE)
+_UNCLASSIFIED = re.compile(r"no main H-code|not classified")
 _GRAVEST_SHOWN = 3
+#: Statements up to this gravity (facts/hazard_statements.csv) are shown without asking.
+_GRAVE = 3
 
 
 @dataclass(frozen=True, slots=True)
 class ReagentCaution:
     """One row of facts/reagent_cautions.csv.
 
-    ``gravest``: its worst dangers in a line; ``words``: all of them, every code said in words.
+    ``gravest``: its worst dangers in a line; ``grave``: whether one of them can maim, kill or burn the place
+    down; ``words``: all of them, every code said in words.
     """
 
     reagent: str
+    grave: bool
     gravest: str
     words: str
     hazards: str
@@ -91,8 +96,13 @@ def _statements_of(hazards: str) -> list[tuple[int, str]]:
     found = [(_gravity(code), _statement(code)) for code in codes if not _is_route(code)]
     for degree, routes in _ROUTES.items():
         if met := [code for code in routes if code in codes]:
-            found.append((_gravity(met[0]), f"{degree} {', '.join(routes[code] for code in met)}"))
+            found.append((_gravity(met[0]), f"{degree} {_listed([routes[code] for code in met])}"))
     return found
+
+
+def _listed(routes: list[str]) -> str:
+    said = " or ".join(filter(None, (", ".join(routes[:-1]), routes[-1])))
+    return said if said.startswith("on ") else f"if {said}"
 
 
 def _is_route(code: str) -> bool:
@@ -154,4 +164,14 @@ def _cautions() -> dict[str, ReagentCaution]:
 def _read(row: dict[str, str]) -> ReagentCaution:
     hazards = row["hazards"]
     kept = (row["incompatibilities"], row["quench"], row["source"])
-    return ReagentCaution(row["reagent"], gravest(hazards), in_words(hazards), hazards, *kept)
+    return ReagentCaution(
+        row["reagent"], _is_grave(hazards), gravest(hazards), in_words(hazards), hazards, *kept
+    )
+
+
+def _is_grave(hazards: str) -> bool:
+    """By the gravest statement coded, or a danger no code speaks of; words without any code count as grave."""
+    if _UNCLASSIFIED.match(hazards):
+        return False
+    codes = _CODE.findall(hazards)
+    return not codes or min(map(_gravity, codes)) <= _GRAVE or bool(_UNCODED.search(hazards))

@@ -8,16 +8,22 @@ import { Words } from '../../components/chem.js';
  * @param {{ cautions: ReagentCaution[], without: string[] }} props */
 export function Cautions({ cautions, without }) {
   const [open, setOpen] = useState(false);
+  const shown = cautions.filter(({ grave }) => open || grave);
+  const rest = cautions.filter((entry) => !shown.includes(entry)).map(({ reagent }) => reagent);
   return html`<div class="caution run-cautions" role="note">
-    ${cautions.map((entry) => html`<p key=${entry.reagent}><b><${Words} text=${entry.reagent} />:</b> <${Words} text=${open ? entry.words : entry.gravest} />.
-      ${open && entry.incompatibilities && html` Keep from: <${Words} text=${entry.incompatibilities} />.`}
-      ${entry.quench && html` Quench: <${Words} text=${open ? entry.quench : firstOf(entry.quench)} />.`}
-      ${open && html`<span class="source">${entry.source}</span>`}</p>`)}
+    ${shown.map((entry) => html`<${One} key=${entry.reagent} caution=${entry} open=${open} />`)}
     ${open && without.length > 0 && html`<p>None kept here for ${without.join(', ')}: that is no sign of safety.</p>`}
-    <p>Local rules, the supplier's safety sheet and licensed practice come first.</p>
-    ${cautions.length > 0 && html`<button type="button" class="link-button run-more" aria-expanded=${String(open)} onClick=${() => setOpen(!open)}>${open ? 'Less' : 'All cautions'}</button>`}
+    <div class="run-rules"><p>${rest.length > 0 && html`Mind <${Words} text=${rest.join(', ')} /> too. `}Local rules, the supplier's safety sheet and licensed practice come first.</p>
+      ${cautions.length > 0 && html`<button type="button" class="link-button run-more" aria-expanded=${String(open)} aria-label=${open ? 'Show the gravest only' : 'All cautions'}
+        onClick=${() => setOpen(!open)}>${open ? 'Less' : 'All'}</button>`}</div>
   </div>`;
 }
+
+/** @param {{ caution: ReagentCaution, open: boolean }} props */
+const One = ({ caution: { reagent, gravest, words, incompatibilities, quench, source }, open }) => html`<p><b><${Words} text=${reagent} />:</b> <${Words} text=${open ? words : gravest} />.
+  ${open && incompatibilities && html` Keep from: <${Words} text=${incompatibilities} />.`}
+  ${quench && html` Quench: <${Words} text=${open ? quench : firstOf(quench)} />.`}
+  ${open && html`<span class="source">${source}</span>`}</p>`;
 
 /** @param {string} text */
 const firstOf = (text) => text.split(';')[0] ?? text;

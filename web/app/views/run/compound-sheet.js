@@ -38,8 +38,8 @@ export function CompoundSheet({ doc, part }) {
   return html`<${Sheet} title=${TITLES[part]} back=${address('case', doc.id, 'structures', 'run')}>
     <input class="text-field search" type="text" inputmode="search" aria-label="Name or SMILES" placeholder="name or SMILES" autocomplete="off" autocapitalize="off"
       spellcheck=${false} value=${text} onInput=${(/** @type {any} */ e) => setText(e.currentTarget.value)} />
-    <div class="two-up"><a class="button primary" href=${address('case', doc.id, 'structures', 'run', `grow-${part}`)}>Grow it</a>
-      ${runOf(doc.id)[part] ? html`<button type="button" class="button" onClick=${() => putCompound(doc, part, null)}>${part === 'start' ? 'Leave it open' : 'No partner'}</button>` : html`<span></span>`}</div>
+    <div class=${runOf(doc.id)[part] ? 'two-up' : ''}><a class="button primary" href=${address('case', doc.id, 'structures', 'run', `grow-${part}`)}>Grow it</a>
+      ${runOf(doc.id)[part] && html`<button type="button" class="button" onClick=${() => putCompound(doc, part, null)}>${part === 'start' ? 'Leave it open' : 'No partner'}</button>`}</div>
     <div aria-live="polite">
       ${(names.length > 0 || described) && html`<ul class="picks">${described && row({ name: '', smiles: described.smiles, formula: described.formula })}${names.map(row)}</ul>`}
       ${plain && listed && !names.length && !described && html`<p class="hint">No such name among the common ones, and no SMILES either.</p>`}

@@ -38,6 +38,6 @@ export function OutcomeRow({ doc, start, outcome, formula, ticked, onTick }) {
     <button type="button" class="run-tick" role="checkbox" aria-checked=${String(ticked)} aria-label="take over: ${name}" onClick=${onTick}>
       <span>${ticked && html`<${Icon} name="check" size=${22} />`}</span></button>
     ${open && html`<div class="run-more-of">${note && html`<p><${Words} text=${note} /></p>`}<p class="source">Source: ${outcome.source}</p>
-      ${smiles !== start && html`<${Changes} doc=${doc} start=${start} product=${smiles} />`}</div>`}
+      ${smiles !== start && html`<h3>What should have changed</h3><${Changes} doc=${doc} start=${start} product=${smiles} />`}</div>`}
   </li>`;
 }

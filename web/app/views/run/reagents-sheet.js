@@ -26,7 +26,7 @@ export function ReagentsSheet({ doc }) {
   };
   const back = ['case', doc.id, 'structures', 'run'];
   return html`<${Sheet} title="What was added?" back=${address(...back)} class="run-reagents"
-      foot=${html`${steps.flat().length > 0 && html`<${Chosen} id=${doc.id} steps=${steps} />`}
+      foot=${html`${steps.flat().length > 0 && html`<div class="chips chips-flow" role="group" aria-label="Added so far"><${Chosen} id=${doc.id} steps=${steps} /></div>`}
         <button type="button" class="button primary" onClick=${() => go(...back)}>${steps.flat().length ? 'Done' : 'Back to the step'}</button>`}>
     <input class="text-field search" type="text" inputmode="search" aria-label="Reagents" placeholder="name, abbreviation, or a list of them" autocomplete="off" autocapitalize="off"
       spellcheck=${false} value=${sought} onInput=${(/** @type {any} */ e) => setSought(e.currentTarget.value)} onKeyDown=${(/** @type {any} */ e) => e.key === 'Enter' && plain && add()} />

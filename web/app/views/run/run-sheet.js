@@ -8,6 +8,7 @@ import { address } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { plural } from '../../words/numbers.js';
 import { Added } from './added.js';
+import { Changes } from './changes.js';
 import { Cautions } from './cautions.js';
 import { CompoundRow } from './compound.js';
 import { OutcomeRow, proposed } from './outcomes.js';
@@ -45,7 +46,8 @@ export function RunSheet({ doc }) {
       <${Trouble} fault=${fault ?? refused} />
       ${found ? html`<${Section} title="What may be in the flask" aside=${outcomes.length > 1 ? plural(outcomes.length, 'compound') : ''}>
         ${outcomes.length === 1 && html`<p class="hint">${NOTHING}</p>`}
-        <${List} doc=${doc} run=${run} outcomes=${outcomes} ticked=${ticked} /><//>`
+        <${List} doc=${doc} run=${run} outcomes=${outcomes} ticked=${ticked} /><//>
+        <${TenSeconds} doc=${doc} run=${run} outcomes=${outcomes} />`
         : html`<p class="hint">${busy ? 'working it out' : run.start ? 'Tap what was added, and what may be in the flask comes up here.' : 'Choose what you started from, then what was added.'}</p>`}</div>
   <//>`;
 }
@@ -65,6 +67,13 @@ function Asked({ doc, run }) {
 /** Pieces of the reagents no table knows. @param {{ found: Outcomes }} props */
 const Unread = ({ found }) => found.unknown.length > 0 && html`<p class="trouble run-unread" role="alert">Not understood: ${found.unknown.join(', ')}.
   <span> The outcomes leave it out. Search for its name, or put it in as the partner.</span></p>`;
+
+/** What to look for first, for the likeliest product. @param {{ doc: CaseDoc, run: Run, outcomes: import('./types').Outcome[] }} props */
+function TenSeconds({ doc, run, outcomes }) {
+  const [first] = outcomes;
+  if (!first || first.role !== 'product' || !run.start) return null;
+  return html`<${Section} title="Ten-second check" aside="start to product"><${Changes} doc=${doc} start=${run.start.smiles} product=${first.smiles} /><//>`;
+}
 
 /** @param {{ doc: CaseDoc, run: Run, outcomes: import('./types').Outcome[], ticked: boolean[] }} props */
 function List({ doc, run, outcomes, ticked }) {

@@ -8,7 +8,7 @@ export interface Outcome {
   note: string; stereo: string; cautions: string[]; source: string; formula: string;
 }
 export interface ReagentCaution {
-  reagent: string; gravest: string; words: string; incompatibilities: string; quench: string; source: string;
+  reagent: string; grave: boolean; gravest: string; words: string; incompatibilities: string; quench: string; source: string;
 }
 export interface Outcomes {
   outcomes: Outcome[]; understood: string[]; unknown: string[]; cautions: ReagentCaution[]; no_caution: string[];
@@ -16,3 +16,8 @@ export interface Outcomes {
 export interface Reagent { name: string; names: string[]; shelf: string }
 /** Whole conditions, taken with one tap. `partner` says what organic partner they want, "" for none. */
 export interface Conditions { label: string; reagents: string; partner: string }
+/** One thing to look for between start and product. `where`: shift or wavenumbers with the unit. */
+export interface Change {
+  kind: 'IR' | '1H' | '13C' | 'mass'; way: 'comes' | 'goes' | 'moves' | 'stays'; where: string; text: string;
+  telling: number; source: string;
+}
