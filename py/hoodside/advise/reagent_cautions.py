@@ -170,7 +170,7 @@ def _read(row: dict[str, str]) -> ReagentCaution:
 
 
 def _is_grave(hazards: str) -> bool:
-    """By the gravest statement coded, or a danger no code speaks of; words without any code count as grave."""
+    """By the gravest statement coded, or a danger no code speaks of; words without a code count as grave."""
     if _UNCLASSIFIED.match(hazards):
         return False
     codes = _CODE.findall(hazards)
