@@ -12,8 +12,8 @@ const TALL = 66;
 /** The axis reaches at least this far, so that a few neighbouring signals are not torn apart. */
 const LEAST_PPM = 4;
 
-/** @param {CaseDoc} doc @param {Checked} found @returns {Stick[]} */
-function measured(doc, found) {
+/** The 1H signals as sticks. @param {CaseDoc} doc @param {Checked} found @returns {Stick[]} */
+export function measured(doc, found) {
   return Object.entries(found.refs).filter(([ref]) => ref.startsWith('h1:')).flatMap(([ref, id]) => {
     const row = doc.h1.find((entry) => entry.id === id);
     const range = row && toRange(row.shift);

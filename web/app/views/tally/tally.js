@@ -32,6 +32,7 @@ export function Tally({ doc }) {
     <${Ladder} doc=${doc} found=${found} at=${at} />
     <header class="section-head tally-head"><h2>${structureName(doc, found, at)}</h2><p>${signed(candidate.weight_db)}</p></header>
     <${Axis} doc=${doc} found=${found} at=${at} />
+    <a class="button" href=${address('case', doc.id, 'tally', 'trace')}>Simulated trace, at any field</a>
     <${Rows} doc=${doc} rows=${rows} at=${at} />
     <${Leftovers} doc=${doc} found=${found} at=${at} />
     ${wide.value ? html`<${Table} doc=${doc} found=${found} />`
