@@ -106,7 +106,7 @@ def merge_lines(hz: Vector, intensity: Vector, within: float, least: float) -> P
 
 def zeros(n: int) -> Vector:
     """``n`` zeros."""
-    return array("d", bytes(8 * n))
+    return array("d", [0.0]) * n
 
 
 @cache

@@ -43,7 +43,7 @@ class NumpySolver:
     def merge(
         self, count: int, hz: array[float], intensity: array[float], within: float, least: float
     ) -> int:
-        order = np.argsort(np.frombuffer(hz), kind="stable")
+        order = np.argsort(np.frombuffer(hz))
         at, size = np.frombuffer(hz)[order], np.frombuffer(intensity)[order]
         starts = np.flatnonzero(np.diff(at, prepend=-np.inf) > within)
         total = np.add.reduceat(size, starts)

@@ -10,11 +10,14 @@ from __future__ import annotations
 from array import array
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
-from functools import cache
+from functools import cache, lru_cache
 from itertools import product
 from math import comb, sqrt
 
 from hoodside.numerics import zeros
+
+#: Blocks whose structure is kept for the next system of the same kind.
+_KEPT = 256
 
 
 @cache
@@ -64,7 +67,7 @@ class Blocks:
     places: dict[int, int]
 
 
-@cache
+@lru_cache(maxsize=_KEPT)
 def blocks(twice: tuple[int, ...]) -> Blocks:
     """All states of composite spins of the given 2 F."""
     strides, width = [], 1
@@ -95,14 +98,44 @@ def largest_block(counts: Sequence[int]) -> int:
     return max(ways)
 
 
-def lowering_matrix(basis: Blocks, level: int, groups: Sequence[int]) -> array[float]:
-    """Sum of F- over some groups, from block ``level`` to the one below: rows below, columns here."""
+@lru_cache(maxsize=_KEPT)
+def lowering_matrix(twice: tuple[int, ...], level: int, groups: tuple[int, ...]) -> array[float]:
+    """Sum of F- over some groups, from block ``level`` to the one below: rows below, columns here.
+
+    The array is shared: do not write into it.
+    """
+    basis = blocks(twice)
     here, below = basis.codes[level], basis.codes[level - 1]
     matrix, width, places = zeros(len(here) * len(below)), len(here), basis.places
     for g in groups:
-        stride, size, coefficients = basis.strides[g], basis.twice[g] + 1, lowering(basis.twice[g])
+        stride, size, coefficients = basis.strides[g], twice[g] + 1, lowering(twice[g])
         for column, code in enumerate(here):
             k = code // stride % size
             if k:
                 matrix[places[code - stride] * width + column] += coefficients[k]
     return matrix
+
+
+#: Elements of a block that one flip-flop term fills: place above and below the diagonal, coefficient.
+Flip = tuple[int, int, float]
+
+
+@lru_cache(maxsize=_KEPT)
+def flip_flops(twice: tuple[int, ...], level: int) -> dict[tuple[int, int], tuple[Flip, ...]]:
+    """(Fa- Fb+ + Fa+ Fb-)/2 for every pair a < b within one block, as the elements it fills."""
+    basis = blocks(twice)
+    codes, places = basis.codes[level], basis.places
+    n, found = len(codes), {}
+    for a in range(len(twice)):
+        down, stride_a, size_a = lowering(twice[a]), basis.strides[a], twice[a] + 1
+        for b in range(a + 1, len(twice)):
+            up = (*lowering(twice[b])[1:], 0.0)
+            stride_b, size_b = basis.strides[b], twice[b] + 1
+            step = stride_b - stride_a
+            found[a, b] = tuple(
+                (at * n + to, to * n + at, flip / 2)
+                for at, code in enumerate(codes)
+                if (flip := down[code // stride_a % size_a] * up[code // stride_b % size_b])
+                for to in (places[code + step],)
+            )
+    return found

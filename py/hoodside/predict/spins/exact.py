@@ -13,15 +13,15 @@ from itertools import product as choices
 from math import comb, sqrt
 
 from hoodside.numerics import eigh, product, transitions, zeros
-from hoodside.predict.spins.basis import Blocks, blocks, combinations, lowering, lowering_matrix
+from hoodside.predict.spins.basis import Blocks, blocks, combinations, flip_flops, lowering_matrix
 from hoodside.predict.spins.model import Heap, LineList, SpinSystem
 
 #: Hz within which lines are one.
 COINCIDENT = 1e-7
 #: Share of the strongest line below which a line is left out.
 NEGLIGIBLE = 1e-7
-#: Amplitude below which a transition is not looked at (the square is its intensity, before weighting).
-_NO_AMPLITUDE = 1e-6
+#: Intensity below which a transition is not looked at.
+_NO_INTENSITY = 1e-9
 
 
 def exact_lines(system: SpinSystem) -> LineList:
@@ -99,7 +99,7 @@ def _add_composite(
     """Add the lines of composite spins of the given 2 F, intensities times ``scale``."""
     basis = blocks(twice)
     diagonal = _diagonal(basis, shifts, j)
-    least = _NO_AMPLITUDE / sqrt(scale)
+    least = sqrt(_NO_INTENSITY / scale)
     below: tuple[array[float], array[float]] | None = None
     for level, codes in enumerate(basis.codes):
         here = eigh(len(codes), _block(basis, level, diagonal, j))
@@ -115,7 +115,8 @@ def _transition(
 ) -> array[float]:
     """Amplitudes between eigenstates of two neighbouring blocks: rows below, columns here."""
     n, m = len(basis.codes[level - 1]), len(basis.codes[level])
-    return product(n, n, m, below, product(n, m, m, lowering_matrix(basis, level, groups), here), turned=True)
+    lowered = product(n, m, m, lowering_matrix(basis.twice, level, tuple(groups)), here)
+    return product(n, n, m, below, lowered, turned=True)
 
 
 def _diagonal(basis: Blocks, shifts: Sequence[float], j: list[list[float]]) -> list[float]:
@@ -132,23 +133,13 @@ def _diagonal(basis: Blocks, shifts: Sequence[float], j: list[list[float]]) -> l
 
 def _block(basis: Blocks, level: int, diagonal: list[float], j: list[list[float]]) -> array[float]:
     """The Hamiltonian of one block, row-major."""
-    codes, places = basis.codes[level], basis.places
+    codes = basis.codes[level]
     n = len(codes)
     matrix = zeros(n * n)
     for at, code in enumerate(codes):
         matrix[at * (n + 1)] = diagonal[code]
-    strides, twice = basis.strides, basis.twice
-    for a in range(len(twice)):
-        down, stride_a, size_a = lowering(twice[a]), strides[a], twice[a] + 1
-        for b in range(a + 1, len(twice)):
-            if not j[a][b]:
-                continue
-            half, up = j[a][b] / 2, (*lowering(twice[b])[1:], 0.0)
-            stride_b, size_b = strides[b], twice[b] + 1
-            step = stride_b - stride_a
-            for at, code in enumerate(codes):
-                flip = down[code // stride_a % size_a] * up[code // stride_b % size_b]
-                if flip:
-                    to = places[code + step]
-                    matrix[at * n + to] = matrix[to * n + at] = half * flip
+    for (a, b), flips in flip_flops(basis.twice, level).items():
+        hz = j[a][b]
+        for above, below, coefficient in flips if hz else ():
+            matrix[above] = matrix[below] = hz * coefficient
     return matrix

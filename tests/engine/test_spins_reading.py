@@ -1,0 +1,132 @@
+"""Couplings read back from lines, fitted spin systems, and partners."""
+
+from __future__ import annotations
+
+import random
+
+import pytest
+
+from bench.synthetic_multiplets import synthetic
+from hoodside.errors import InvalidInputError
+from hoodside.predict.spins import Nuclei, SpinSystem, exact_lines
+from hoodside.predict.spins.fit import fit_system
+from hoodside.predict.spins.least_squares import solve_least_squares, solve_symmetric
+from hoodside.predict.spins.multiplet_reading import read_multiplet
+from hoodside.predict.spins.partners import find_partners
+from hoodside.readings import ProtonSignal
+
+
+def test_noisy_overlapped_multiplets_are_read_right() -> None:
+    """Pattern and every J within 0.4 Hz for at least 95 % of 300 made-up multiplets."""
+    rng, right = random.Random(11), 0
+    for _ in range(300):
+        made = synthetic(rng)
+        readings = read_multiplet(made.hz, made.heights).readings
+        right += (
+            bool(readings)
+            and readings[0].pattern == made.pattern
+            and all(abs(a - b) <= 0.4 for a, b in zip(readings[0].j, made.j, strict=True))
+        )
+    assert right >= 285
+
+
+def test_order_of_lines_does_not_matter() -> None:
+    hz, heights = [16.0, 0.0, 10.0, 6.0], [1.0, 1.0, 1.1, 0.9]
+    assert read_multiplet(hz, heights).readings == read_multiplet(sorted(hz), [1.0, 0.9, 1.1, 1.0]).readings
+
+
+def test_one_line_is_a_singlet() -> None:
+    found = read_multiplet([500.0]).readings[0]
+    assert (found.pattern, found.j, found.centre_hz) == ("s", (), 500.0)
+
+
+def test_heights_decide_between_a_triplet_and_its_rivals() -> None:
+    assert read_multiplet([0, 7, 14], [1, 2, 1]).readings[0].pattern == "t"
+    assert read_multiplet([0, 7, 14]).readings[0].pattern == "t"
+
+
+def test_leaning_and_crooked_patterns_are_warned_of() -> None:
+    leaning = read_multiplet([0, 8], [1.0, 2.0]).warnings
+    assert any("higher shift" in w for w in leaning)
+    crooked = read_multiplet([0.0, 5.0, 13.5, 16.0], [1, 1, 1, 1]).warnings
+    assert any("symmetry" in w for w in crooked)
+
+
+def test_lines_without_a_first_order_reading_say_so() -> None:
+    found = read_multiplet([0, 3, 11, 12.5, 30], [1, 9, 2, 7, 1])
+    assert not found.readings
+    assert any("first order" in w for w in found.warnings)
+
+
+@pytest.mark.parametrize(
+    ("hz", "heights"),
+    [([], None), ([1.0] * 41, None), ([float("nan")], None), ([1, 2], [1]), ([1, 2], [1, 0])],
+)
+def test_impossible_lines_are_refused(hz: list[float], heights: list[float] | None) -> None:
+    with pytest.raises(InvalidInputError):
+        read_multiplet(hz, heights)
+
+
+@pytest.mark.parametrize("seed", range(4))
+def test_fit_finds_an_abc_system_from_a_rough_start(seed: int) -> None:
+    rng = random.Random(seed)
+    true = SpinSystem((Nuclei(120.0), Nuclei(134.0), Nuclei(160.0)), ((0, 1, 11.2), (0, 2, 5.1), (1, 2, 1.9)))
+    start = SpinSystem(
+        tuple(Nuclei(g.hz + rng.uniform(-6, 6)) for g in true.groups),
+        tuple((a, b, j + rng.uniform(-1.5, 1.5)) for a, b, j in true.couplings),
+    )
+    lines = exact_lines(true).without_weak(0.03)
+    hz = [h + rng.uniform(-0.1, 0.1) for h in lines.hz]
+    found = fit_system(start, hz, [i * rng.uniform(0.85, 1.15) for i in lines.intensity])
+    assert [g.hz for g in found.system.groups] == pytest.approx([g.hz for g in true.groups], abs=0.2)
+    for (_, _, fitted), (_, _, j) in zip(found.system.couplings, true.couplings, strict=True):
+        assert fitted == pytest.approx(j, abs=0.4)
+    assert found.rms_hz < 0.2
+    assert all(e < 0.5 for e in found.uncertain_hz)
+
+
+def test_fit_leaves_alone_what_is_not_free() -> None:
+    start = SpinSystem((Nuclei(100.0), Nuclei(120.0)), ((0, 1, 6.0),))
+    lines = exact_lines(SpinSystem((Nuclei(102.0), Nuclei(121.0)), ((0, 1, 6.0),)))
+    found = fit_system(start, list(lines.hz), list(lines.intensity), free_couplings=[])
+    assert found.system.couplings == start.couplings
+    assert [g.hz for g in found.system.groups] == pytest.approx([102.0, 121.0], abs=0.05)
+
+
+def test_fit_refuses_nothing_and_too_much() -> None:
+    system = SpinSystem((Nuclei(100.0),))
+    with pytest.raises(InvalidInputError):
+        fit_system(system, [], [])
+    with pytest.raises(InvalidInputError):
+        fit_system(system, [1.0], [1.0], free_shifts=[], free_couplings=[])
+
+
+def test_partners_share_their_coupling() -> None:
+    signals = [
+        ProtonSignal(4.1, 4.1, "q", (7.1,), 2),
+        ProtonSignal(1.25, 1.25, "t", (7.2,), 3),
+        ProtonSignal(6.5, 6.5, "d", (15.9,), 1),
+        ProtonSignal(6.1, 6.1, "dd", (15.8, 6.0), 1),
+    ]
+    shared, lone = find_partners(signals)
+    assert {(s.a, s.b) for s in shared if s.counts_fit} == {(0, 1), (2, 3)}
+    assert [(c.signal, c.hz) for c in lone] == [(3, 6.0)]
+
+
+def test_letters_must_agree_with_the_number_of_hydrogens() -> None:
+    signals = [ProtonSignal(4.1, 4.1, "q", (7.1,), 2), ProtonSignal(1.2, 1.2, "d", (7.1,), 1)]
+    shared, _ = find_partners(signals)
+    assert not shared[0].counts_fit
+
+
+def test_multiplets_and_odd_patterns_take_part_without_letters() -> None:
+    signals = [ProtonSignal(2.0, 2.1, "m", (), 2), ProtonSignal(3.0, 3.0, "what", (6.0,), 1)]
+    shared, lone = find_partners(signals)
+    assert not shared
+    assert len(lone) == 1
+
+
+def test_least_squares_of_a_line() -> None:
+    rows = [[1.0, x] for x in range(5)]
+    assert solve_least_squares(rows, [2 + 3 * x for x in range(5)]) == pytest.approx([2, 3], rel=1e-4)
+    assert solve_symmetric([[1.0, 2.0], [2.0, 1.0]], [1.0, 1.0]) is None
