@@ -13,7 +13,14 @@ from hoodside.errors import InvalidInputError
 from hoodside.facts import load_table
 from hoodside.predict.coupling import Coupling
 from hoodside.predict.model import ProtonGroup
-from hoodside.predict.multiplet import apply_multiplets, combined_pattern, lines, readable_patterns
+from hoodside.predict.multiplet import (
+    Splitting,
+    apply_multiplets,
+    combined_pattern,
+    lines,
+    readable_patterns,
+    splitting_tree,
+)
 from hoodside.readings.patterns import couplings_named, is_pattern, normalise_pattern
 
 
@@ -171,3 +178,10 @@ def test_impossible_field_is_refused() -> None:
     for mhz in (0.0, -400.0, math.nan):
         with pytest.raises(InvalidInputError, match="MHz"):
             apply_multiplets([group(1.0)], [], mhz)
+
+
+def test_tree_splits_by_the_largest_coupling_first() -> None:
+    levels = splitting_tree([Splitting(4.0, 2), Splitting(12.0, 1)])
+    assert [len(level) for level in levels] == [1, 2, 6]
+    assert [at for at, _ in levels[1]] == pytest.approx([-6, 6])
+    assert all(sum(share for _, share in level) == pytest.approx(1) for level in levels)

@@ -8,7 +8,7 @@ import pytest
 
 from bench.synthetic_multiplets import synthetic
 from hoodside.errors import InvalidInputError
-from hoodside.predict.spins import Nuclei, SpinSystem, exact_lines
+from hoodside.predict.spins import Nuclei, SpinSystem, exact_lines, fit_from_json, spins_from_json
 from hoodside.predict.spins.fit import fit_system
 from hoodside.predict.spins.least_squares import solve_least_squares, solve_symmetric
 from hoodside.predict.spins.multiplet_reading import read_multiplet
@@ -130,3 +130,42 @@ def test_least_squares_of_a_line() -> None:
     rows = [[1.0, x] for x in range(5)]
     assert solve_least_squares(rows, [2 + 3 * x for x in range(5)]) == pytest.approx([2, 3], rel=1e-4)
     assert solve_symmetric([[1.0, 2.0], [2.0, 1.0]], [1.0, 1.0]) is None
+
+
+def test_fit_by_json_gives_back_a_system_that_can_be_simulated() -> None:
+    given = {
+        "mhz": 60,
+        "nuclei": [{"ppm": 2.0}, {"ppm": 2.3}],
+        "j": [[0, 1, 9.0]],
+        "lines": [{"hz": line.hz, "height": line.intensity} for line in exact_lines(_AB)],
+    }
+    answer = fit_from_json(given)
+    assert answer["rms_hz"] < 0.05
+    assert answer["system"]["j"][0][2] == pytest.approx(11.0, abs=0.05)
+    assert [n["ppm"] * 60 for n in answer["system"]["nuclei"]] == pytest.approx([121.0, 137.0], abs=0.05)
+    assert spins_from_json(answer["system"])["method"] == "exact"
+
+
+_AB = SpinSystem((Nuclei(121.0), Nuclei(137.0)), ((0, 1, 11.0),))
+
+
+@pytest.mark.parametrize(
+    ("change", "field"),
+    [
+        ({"lines": None}, "lines"),
+        ({"lines": [{"height": 1}]}, "lines[0].ppm"),
+        ({"lines": [{"hz": 1, "height": -1}]}, "lines[0].height"),
+        ({"free_j": [4]}, "free_j[0]"),
+    ],
+)
+def test_bad_fit_names_the_field(change: dict[str, object], field: str) -> None:
+    given = {
+        "mhz": 60,
+        "nuclei": [{"ppm": 2}, {"ppm": 3}],
+        "j": [[0, 1, 7]],
+        "lines": [{"hz": 120}],
+        **change,
+    }
+    with pytest.raises(InvalidInputError) as caught:
+        fit_from_json(given)
+    assert caught.value.field == field

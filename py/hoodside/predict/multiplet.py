@@ -209,6 +209,18 @@ def lines(name: str, j: Sequence[float]) -> list[tuple[float, float]]:
     return _coincident(sorted(found))
 
 
+def splitting_tree(parts: Sequence[Splitting]) -> list[list[tuple[float, float]]]:
+    """The tree of a first-order multiplet, from the unsplit line down, largest J first.
+
+    Each level is (offset from the centre in Hz, share of the intensity), coinciding lines joined.
+    """
+    ordered = sorted(parts, key=lambda s: -s.hz)
+    return [
+        lines(name_of(ordered[:k]), [s.hz for s in ordered[:k]]) if k else [(0.0, 1.0)]
+        for k in range(len(ordered) + 1)
+    ]
+
+
 def _coincident(found: list[tuple[float, float]]) -> list[tuple[float, float]]:
     joined: list[tuple[float, float]] = []
     for at, share in found:

@@ -1,7 +1,7 @@
 """Spin systems: exact line lists, clusters for large systems, traces, and whole structures."""
 
 from hoodside.predict.spins.clusters import cluster_lines, simulate
-from hoodside.predict.spins.contract import spins_from_json
+from hoodside.predict.spins.contract import fit_from_json, spins_from_json
 from hoodside.predict.spins.envelope import Trace, envelope
 from hoodside.predict.spins.exact import exact_lines
 from hoodside.predict.spins.model import Line, LineList, Nuclei, SpinSystem
@@ -17,6 +17,7 @@ __all__ = [
     "cluster_lines",
     "envelope",
     "exact_lines",
+    "fit_from_json",
     "predict_spectrum",
     "simulate",
     "simulate_groups",

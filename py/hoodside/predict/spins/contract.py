@@ -16,6 +16,7 @@ from typing import Any
 from hoodside.errors import InvalidInputError
 from hoodside.predict.spins.clusters import simulate
 from hoodside.predict.spins.envelope import SHAPES, Trace, envelope
+from hoodside.predict.spins.fit import fit_system
 from hoodside.predict.spins.model import LineList, Nuclei, SpinSystem
 from hoodside.predict.spins.molecule import check_field
 
@@ -23,6 +24,8 @@ from hoodside.predict.spins.molecule import check_field
 MOST_GROUPS, MOST_COUNT = 60, 36
 #: Lines weaker than this share of the strongest are not listed.
 _LISTED = 1e-6
+#: The same for lines that are only drawn.
+_DRAWN = 1e-3
 #: Range of a shift, ppm, and of a coupling, Hz.
 _SHIFTS, _COUPLINGS = (-60.0, 60.0), (-1000.0, 1000.0)
 _WIDTHS = (0.01, 200.0)
@@ -37,12 +40,8 @@ def spins_from_json(given: Mapping[str, Any]) -> dict[str, Any]:
 
     Raises: InvalidInputError naming the field, its value and the mend.
     """
-    mhz = _number(given, "mhz", "")
-    check_field(mhz)
+    mhz, system = system_from_json(given)
     width = _number(given, "linewidth_hz", "", _WIDTHS) if "linewidth_hz" in given else _USUAL_WIDTH
-    nuclei = _list(given.get("nuclei"), "nuclei")
-    groups = tuple(_nuclei(entry, k, mhz) for k, entry in enumerate(nuclei))
-    system = SpinSystem(groups, _couplings(given.get("j"), len(groups)))
     lines = simulate(system)
     answer: dict[str, Any] = {"lines": lines_to_json(lines, mhz), "method": lines.method}
     if lines.method != "exact":
@@ -50,6 +49,57 @@ def spins_from_json(given: Mapping[str, Any]) -> dict[str, Any]:
     if given.get("trace"):
         answer["trace"] = _trace(given, lines, mhz, width)
     return answer
+
+
+def system_from_json(given: Mapping[str, Any]) -> tuple[float, SpinSystem]:
+    """Field (MHz) and spin system of the "mhz", "nuclei" and "j" of a JSON object.
+
+    Raises: InvalidInputError naming the field, its value and the mend.
+    """
+    mhz = _number(given, "mhz", "")
+    check_field(mhz)
+    nuclei = _list(given.get("nuclei"), "nuclei")
+    groups = tuple(_nuclei(entry, k, mhz) for k, entry in enumerate(nuclei))
+    return mhz, SpinSystem(groups, _couplings(given.get("j"), len(groups)))
+
+
+def system_to_json(system: SpinSystem, mhz: float) -> dict[str, Any]:
+    """A spin system as ``system_from_json`` reads it."""
+    return {
+        "mhz": mhz,
+        "nuclei": [
+            {"ppm": n.hz / mhz, "count": n.count, "label": n.label}
+            if n.observed
+            else {"element": "F", "count": n.count, "label": n.label}
+            for n in system.groups
+        ],
+        "j": [list(pair) for pair in system.couplings],
+    }
+
+
+def fit_from_json(given: Mapping[str, Any]) -> dict[str, Any]:
+    """Fit a spin system to observed lines.
+
+    In: as ``spins_from_json``, with "lines": [{"ppm" or "hz", "height"}, ...] and, where not all is to move,
+    "free_shifts" (indices of nuclei) and "free_j" (indices of couplings). Out: "system" with the fitted
+    values, "uncertain_hz" (shifts, then couplings), "rms_hz", and its "lines".
+    Raises: InvalidInputError naming the field, its value and the mend.
+    """
+    mhz, system = system_from_json(given)
+    seen = [_observed_line(e, k, mhz) for k, e in enumerate(_list(given.get("lines"), "lines"))]
+    fit = fit_system(
+        system,
+        [hz for hz, _ in seen],
+        [height for _, height in seen],
+        _indices(given, "free_shifts", len(system.groups)),
+        _indices(given, "free_j", len(system.couplings)),
+    )
+    return {
+        "system": system_to_json(fit.system, mhz),
+        "uncertain_hz": [round(e, 3) if isfinite(e) else None for e in fit.uncertain_hz],
+        "rms_hz": round(fit.rms_hz, 3),
+        "lines": lines_to_json(fit.lines, mhz, _DRAWN),
+    }
 
 
 def lines_to_json(lines: LineList, mhz: float, share: float = _LISTED) -> list[dict[str, float]]:
@@ -93,6 +143,26 @@ def _nuclei(entry: Any, index: int, mhz: float) -> Nuclei:
     observed = _OBSERVED[element]
     ppm = _number(entry, "ppm", place, _SHIFTS) if observed or "ppm" in entry else 0.0
     return Nuclei(ppm * mhz, count, observed, str(entry.get("label", "")))
+
+
+def _observed_line(entry: Any, index: int, mhz: float) -> tuple[float, float]:
+    place = f"lines[{index}]"
+    if not isinstance(entry, Mapping):
+        raise _wrong(place, entry, "is no object", 'Write {"ppm": 7.1, "height": 1}.')
+    height = _checked(entry.get("height", 1.0), f"{place}.height", (1e-9, 1e12))
+    if "hz" in entry:
+        return _checked(entry["hz"], f"{place}.hz", None), height
+    return _number(entry, "ppm", place, _SHIFTS) * mhz, height
+
+
+def _indices(given: Mapping[str, Any], name: str, size: int) -> list[int] | None:
+    if name not in given:
+        return None
+    entries = _list(given[name], name, allow_empty=True)
+    for k, value in enumerate(entries):
+        if isinstance(value, bool) or not isinstance(value, int) or not 0 <= value < size:
+            raise _wrong(f"{name}[{k}]", value, "is out of range", f"Count from 0 to {size - 1}.")
+    return list(entries)
 
 
 def _couplings(given: Any, groups: int) -> tuple[tuple[int, int, float], ...]:

@@ -8,13 +8,14 @@ from functools import cache
 from math import ceil, exp, floor, log, pi, sqrt
 
 from hoodside.errors import InvalidInputError
-from hoodside.numerics import zeros
 from hoodside.predict.spins.model import LineList
 
 #: Shape -> half the range over which a line is drawn, in line widths.
 SHAPES = {"lorentzian": 40.0, "gaussian": 3.0}
 #: Points per line width.
 _FINENESS = 8
+#: Share of the highest point below which the skirt of a line is not drawn.
+_NEGLIGIBLE = 1e-4
 #: Most points of one trace.
 _MOST_POINTS = 200_000
 
@@ -71,7 +72,7 @@ def envelope(
             hint="Give the ends in order, and a wider line for a wider range.",
         )
     profile = _profile(shape, _FINENESS)
-    heights = _spread(_counted(lines, lo_hz, step, points, len(profile)), profile, points)
+    heights = _spread(_counted(lines, lo_hz, step, points, len(profile) // 2), profile, points)
     return Trace(lo_hz, step, array("d", [h / step for h in heights]))
 
 
@@ -88,17 +89,34 @@ def _counted(lines: LineList, lo_hz: float, step: float, points: int, margin: in
     return bins
 
 
-def _spread(bins: dict[int, float], profile: array[float], points: int) -> array[float]:
-    heights, reach = zeros(points), len(profile) - 1
+def _spread(bins: dict[int, float], profile: list[float], points: int) -> list[float]:
+    """Draw every line; weak ones only as far out as they matter beside the strongest."""
+    heights = [0.0] * points
+    strongest = max(map(abs, bins.values()), default=0.0)
+    middle = len(profile) // 2
     for k, intensity in bins.items():
-        for at in range(max(k - reach, 0), min(k + reach + 1, points)):
-            heights[at] += intensity * profile[abs(at - k)]
+        reach = min(middle, _reach(abs(intensity) / strongest * profile[middle], profile))
+        lo, hi = max(k - reach, 0), min(k + reach + 1, points)
+        if reach and lo < hi:
+            window = profile[middle + lo - k : middle + hi - k]
+            heights[lo:hi] = [h + intensity * p for h, p in zip(heights[lo:hi], window, strict=True)]
     return heights
 
 
+def _reach(height: float, profile: list[float]) -> int:
+    """Steps from the middle of a line within which it stands above what is negligible."""
+    middle = len(profile) // 2
+    least = _NEGLIGIBLE * profile[middle] ** 2 / height if height else float("inf")
+    low, high = 0, middle
+    while low < high:  # the profile falls outward
+        step = (low + high + 1) // 2
+        low, high = (step, high) if profile[middle + step] >= least else (low, step - 1)
+    return low
+
+
 @cache
-def _profile(shape: str, fineness: int) -> array[float]:
-    """One half of a line of unit area per step, from its middle outward."""
+def _profile(shape: str, fineness: int) -> list[float]:
+    """A line of unit area per step, its middle in the middle."""
     reach = int(SHAPES[shape] * fineness)
     if shape == "gaussian":
         scale = 4 * log(2) / fineness**2
@@ -106,4 +124,4 @@ def _profile(shape: str, fineness: int) -> array[float]:
     else:
         half = fineness / 2
         values = [half / (pi * (k * k + half * half)) for k in range(reach + 1)]
-    return array("d", values)
+    return values[:0:-1] + values

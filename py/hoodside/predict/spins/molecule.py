@@ -8,8 +8,9 @@ from dataclasses import dataclass
 
 from hoodside.errors import InvalidInputError
 from hoodside.molecule import Structure
-from hoodside.predict.coupling import BARE, Network, Site, coupling_network
+from hoodside.predict.coupling import BARE, Network, Site, coupling_network, predict_couplings
 from hoodside.predict.model import ProtonGroup
+from hoodside.predict.multiplet import apply_multiplets
 from hoodside.predict.proton import predict_protons
 from hoodside.predict.spins.basis import largest_block
 from hoodside.predict.spins.clusters import EXACT_STATES, simulate
@@ -43,14 +44,16 @@ class SystemSpectrum:
 def predict_spectrum(
     structure: Structure, solvent: str = "CDCl3", mhz: float = 400.0
 ) -> tuple[tuple[ProtonGroup, ...], tuple[SystemSpectrum, ...]]:
-    """Groups of H and the simulated lines of every spin system of a structure.
+    """Groups of H with their patterns, and the simulated lines of every spin system of a structure.
 
     Args:
         solvent: a name from facts/residual_solvents.csv.
         mhz: 1H observe frequency, 20 to 2000 MHz.
     Raises: InvalidInputError for an impossible field.
     """
+    check_field(mhz)
     groups = predict_protons(structure, solvent)
+    groups = apply_multiplets(groups, predict_couplings(structure, groups, solvent), mhz)
     return groups, simulate_groups(structure, groups, solvent, mhz)
 
 
@@ -160,7 +163,8 @@ def _system(
     for sites in part:
         group = group_of.get(sites[0])
         shift = groups[group].ppm * mhz if group is not None else 0.0
-        nuclei.append(Nuclei(shift, len(sites), group is not None))
+        label = f"h1:{group}" if group is not None else str(sites[0][0])
+        nuclei.append(Nuclei(shift, len(sites), group is not None, label))
     pairs = [
         (a, b, hz)
         for a in range(len(part))
