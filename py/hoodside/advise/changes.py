@@ -194,7 +194,7 @@ def _h1_words(together: Sequence[ProtonGroup]) -> str:
 
 
 def _c13_words(together: Sequence[CarbonGroup]) -> str:
-    return ", ".join(dict.fromkeys(group.kind for group in together))
+    return ", ".join(dict.fromkeys("C without H" if g.kind == "C" else g.kind for g in together))
 
 
 def _range_text(values: Sequence[float], digits: int) -> str:

@@ -23,7 +23,10 @@ export function Changes({ doc, start, product }) {
   if (fault) return html`<${Trouble} fault=${fault} />`;
   if (!value) return html`<p class="whisper">comparing the two</p>`;
   return html`<ul class="run-changes">${(all ? changes : changes.slice(0, AT_A_GLANCE)).map((change) => html`<li key=${change.kind + change.way + change.where + change.text}>
-      <${Icon} name=${SIGNS[change.way]} size=${22} /><span><b><${Words} text=${change.kind} /> ${change.where}</b> ${change.way === 'moves' || change.way === 'stays' ? '' : change.way}
+      <${Icon} name=${SIGNS[change.way]} size=${22} /><span><b><${Words} text=${change.kind} /> ${withUnit(change.where)}</b> ${change.way === 'moves' || change.way === 'stays' ? '' : change.way}
         <span class="case-line"><${Words} text=${change.text} /></span>${all && change.source && html`<span class="source">${change.source}</span>`}</span></li>`)}</ul>
     ${changes.length > 0 && html`<button type="button" class="link-button run-more" aria-expanded=${String(all)} onClick=${() => setAll(!all)}>${all ? 'Less' : 'All, with sources'}</button>`}`;
 }
+
+/** @param {string} where */
+const withUnit = (where) => where.replace('cm-1', 'cm\u207b\u00b9').replace(/^-/, '\u2212');

@@ -58,9 +58,10 @@ const NOTHING = 'The tables know no step of this start with these reagents. That
 function Asked({ doc, run }) {
   const to = (/** @type {string} */ part) => address('case', doc.id, 'structures', 'run', part);
   const partner = html`<a class="run-partner" href=${to('partner')} aria-label="Add an organic partner"><${Icon} name="plus" size=${20} />partner</a>`;
-  return html`${run.start ? html`<${CompoundRow} compound=${run.start} what="start" href=${to('start')} action=${!run.partner && partner} />`
-    : html`<a class="button primary" href=${to('start')}>What did you start from?</a>`}
-    ${run.partner && html`<${CompoundRow} compound=${run.partner} what="partner" href=${to('partner')} />`}
+  const start = run.start ? html`<${CompoundRow} compound=${run.start} what="start" href=${to('start')} action=${!run.partner && partner} />`
+    : html`<a class="button primary" href=${to('start')}>What did you start from?</a>`;
+  return html`${run.partner ? html`<div class="run-pair">${start}<${Icon} name="plus" size=${22} />
+      <${CompoundRow} compound=${run.partner} what="partner" href=${to('partner')} /></div>` : start}
     <${Added} id=${doc.id} />`;
 }
 
