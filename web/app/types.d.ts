@@ -1,5 +1,7 @@
 /** One 1H signal as typed; numbers stay text so that what was typed is never lost. */
-export interface ProtonRow { id: string; shift: string; mult: string; j: string; h: string; note?: string }
+export interface ProtonRow { id: string; shift: string; mult: string; j: string; h: string; note?: string; lines?: LineList }
+/** The printed lines of one signal as typed; `tall` is a number, or low, mid, high. */
+export interface LineList { unit: 'ppm' | 'hz'; heights: 'none' | 'rough' | 'numbers'; rows: { at: string; tall: string }[] }
 /** One 13C line as typed. */
 export interface CarbonRow { id: string; ppm: string; kind: string; n: string }
 /** One IR band; `region` holds the strip region while the position is still empty. */

@@ -69,6 +69,7 @@ export function changeWithUndo(id, what, edit) {
 export function dropIfEmpty(id, kind, rowId) {
   const row = /** @type {any} */ (caseById(id)?.[kind].find((entry) => entry.id === rowId));
   if (!row || row.shift?.trim() || row.ppm?.trim() || row.mz?.trim() || row.cm1?.trim() || row.h?.trim() || row.j?.trim()) return;
+  if (row.lines?.rows.some((/** @type {any} */ line) => line.at.trim())) return;
   changeCase(id, (draft) => { /** @type {any} */ (draft)[kind] = /** @type {any[]} */ (draft[kind]).filter((entry) => entry.id !== rowId); });
 }
 

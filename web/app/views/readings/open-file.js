@@ -5,11 +5,12 @@ import { go } from '../../state/route.js';
 import { say } from '../../state/toast.js';
 import { importCase } from '../cases/menu.js';
 import { pastedStructure } from '../structures/paste-sheet.js';
+import { lookAt } from './jcamp-sheet.js';
 import { pasted } from './paste-sheet.js';
 import { takeOver } from './take-over.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
-/** @typedef {'case' | 'structure' | 'report'} FileKind */
+/** @typedef {'case' | 'structure' | 'jcamp' | 'report'} FileKind */
 
 const MAX_BYTES = 4_000_000;
 
@@ -18,6 +19,7 @@ const MAX_BYTES = 4_000_000;
 export function sniff(text) {
   if (/^\s*[{[]/.test(text)) return 'case';
   if (/\bV[23]000\b/.test(text.slice(0, 2000)) && /M {2}END/.test(text)) return 'structure';
+  if (/^\s*(\$\$.*\s+)*##(TITLE|JCAMP)/i.test(text)) return 'jcamp';
   return 'report';
 }
 
@@ -48,6 +50,7 @@ export function OpenFile({ doc }) {
     const kind = sniff(text);
     if (kind === 'case') await openJson(doc, file, text).catch((error) => say(`${file.name} was not taken in: ${error.message}.`));
     else if (kind === 'structure') { pastedStructure.value = text; go('case', doc.id, 'structures', 'paste'); }
+    else if (kind === 'jcamp') { lookAt(file.name, text); go('case', doc.id, 'readings', 'jcamp'); }
     else { pasted.value = text; go('case', doc.id, 'readings', 'paste'); }
   };
   return html`<label class="button file-button">Open a file<input type="file" onChange=${open} /></label>`;

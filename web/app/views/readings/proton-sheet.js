@@ -7,9 +7,9 @@ import { changeCase, changeWithUndo } from '../../state/cases.js';
 import { protonFault } from '../../state/input.js';
 import { address, go, swap } from '../../state/route.js';
 import { newId } from '../../state/document.js';
-import { toNumbers, toRange } from '../../words/numbers.js';
-import { dashed, highFirst } from '../../words/readings.js';
+import { highFirst } from '../../words/readings.js';
 import { CaseSign } from '../case/sign.js';
+import { PartnerNote } from './partners.js';
 import { Printout } from './photos.js';
 import { refusalOf, Sum } from './proton-section.js';
 
@@ -22,8 +22,6 @@ const SPOKEN = /** @type {Record<string, string>} */ ({ s: 'singlet', d: 'double
   m: 'multiplet', br: 'broad' });
 /** Patterns that have no J to read. */
 const NO_J = ['', 's', 'm', 'br', 'br s'];
-/** Two J agree when they differ by no more than this, Hz: the reading error of a printout. */
-const SAME_J_HZ = 0.3;
 
 /** One 1H signal: shift, pattern, J, H. @param {{ doc: CaseDoc, rowId: string }} props */
 export function ProtonSheet({ doc, rowId }) {
@@ -53,7 +51,7 @@ export function ProtonSheet({ doc, rowId }) {
         key=${rowId} done=${another} next=${full ? 'new' : 'next'} side="–" corner=${needsJ ? 'J' : '±'} />`}>
     <${Printout} doc=${doc} />
     <${Fields} key=${rowId} doc=${doc} row=${row} set=${set} needsJ=${needsJ} another=${another} />
-    <p class="fields-foot"><span>${partners(doc, row)}</span><b><${Sum} doc=${doc} /></b></p>
+    <p class="fields-foot"><span></span><b><${Sum} doc=${doc} /></b></p>
   <//>`;
 }
 
@@ -69,6 +67,7 @@ function Fields({ doc, row, set, needsJ, another }) {
     if (!NO_J.includes(mult)) setTimeout(() => /** @type {any} */ (document.querySelector('input[name=j]'))?.focus());
     else if (mult && !row.h.trim()) /** @type {any} */ (document.querySelector('input[name=h]'))?.focus();
   };
+  const options = pattern && !PATTERNS.includes(pattern) ? [...PATTERNS, pattern] : PATTERNS;
   return html`<div class="fields-2">
       <${PadField} label="Shift, or a range" name="shift" value=${row.shift} unit="ppm" first fault=${about(/shift/) || refusal}
         onInput=${(/** @type {string} */ shift) => set({ shift })} onEnter=${another} />
@@ -77,18 +76,9 @@ function Fields({ doc, row, set, needsJ, another }) {
         onInput=${(/** @type {string} */ h) => set({ h })} onEnter=${another} />
     </div>
     <${Chips} label="Pattern" class="chips-patterns" value=${pattern} onPick=${pick}
-      options=${PATTERNS.map((value) => ({ value, text: value, name: SPOKEN[value] }))} />
+      options=${options.map((value) => ({ value, text: value, name: SPOKEN[value] }))} />
     ${needsJ && html`<${PadField} label=${html`<i>J</i>`} name="j" value=${row.j} unit="Hz" fault=${about(/list of J/)}
-        onInput=${(/** @type {string} */ j) => set({ j })} onEnter=${another} />`}`;
-}
-
-/** Signals that share a coupling with this one. @param {CaseDoc} doc @param {ProtonRow} row */
-function partners(doc, row) {
-  const mine = toNumbers(row.j).filter((j) => j > 0);
-  for (const other of doc.h1) {
-    if (other.id === row.id || !toRange(other.shift)) continue;
-    const shared = toNumbers(other.j).find((j) => mine.some((own) => Math.abs(own - j) <= SAME_J_HZ));
-    if (shared) return `Shares ${shared} Hz with ${dashed(other.shift)} (${[other.mult, other.h && `${other.h} H`].filter(Boolean).join(', ')}).`;
-  }
-  return '';
+        onInput=${(/** @type {string} */ j) => set({ j })} onEnter=${another} />
+      <${PartnerNote} doc=${doc} row=${row} />`}
+    <a class="button" href=${address('case', doc.id, 'readings', 'lines', row.id)}>Pattern and <i>J</i> from its lines</a>`;
 }

@@ -7,7 +7,7 @@ import { fixed, plural } from '../../words/numbers.js';
 /** Share of a group's strongest line below which a line does not widen its reach. */
 const SEEN = 0.04;
 /** Shift difference over J from which first-order rules are trusted: common practice. */
-export const FIRST_ORDER = 10;
+const FIRST_ORDER = 10;
 
 /** Lines of a system, each given to the group nearest to it. @param {Trace} trace @param {number} at place of the group */
 function linesNear(trace, at) {
@@ -52,12 +52,16 @@ export function groupWords({ ppm, sd, mult, j, n, exchangeable }) {
   return `${fixed(ppm, 2)}${sd ? ` ± ${fixed(sd, 2)}` : ''} ppm, ${pattern ? `${pattern}, ` : ''}${n} H${exchangeable ? ', exchanges' : ''}`;
 }
 
+/** @param {TracedGroup} group */
+export const isFirstOrder = ({ nearest }) => !nearest || nearest.times >= FIRST_ORDER;
+
 /** Whether first-order rules hold for a group at this field, in words; '' where nothing couples.
  * @param {TracedGroup} group @param {number} mhz */
-export function orderWords({ nearest }, mhz) {
+export function orderWords(group, mhz) {
+  const { nearest } = group;
   if (!nearest) return '';
   const far = `${fixed(nearest.hz, 0)} Hz away at ${mhz} MHz, ${fixed(nearest.times, 1)} times the largest J`;
-  if (nearest.times >= FIRST_ORDER) return `First order: the nearest group of its spin system is ${far}.`;
+  if (isFirstOrder(group)) return `First order: the nearest group of its spin system is ${far}.`;
   return `Not first order: the nearest group of its spin system is ${far}. Lines lean towards it, and more of them appear than the rules allow; trust the trace.`;
 }
 

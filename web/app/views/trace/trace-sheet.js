@@ -16,7 +16,7 @@ import { CaseSign } from '../case/sign.js';
 import { predictQuestion } from '../structures/predicted.js';
 import { measured } from '../tally/axis.js';
 import { touchedAt } from '../tally/touched.js';
-import { groupAt, groupsOf, groupWords, orderWords, summary } from './groups.js';
+import { groupAt, groupsOf, groupWords, isFirstOrder, orderWords, summary } from './groups.js';
 import { Plot } from './plot.js';
 import { Tree } from './tree.js';
 import { zoomed } from './view.js';
@@ -85,22 +85,22 @@ function Traced({ doc, smiles, name, trace, fresh }) {
       <p aria-live="polite">${group ? html`<b>${fixed(group.ppm, 2)}</b> group ${groups.indexOf(group) + 1} of ${groups.length}` : 'tap lines, or step through the groups'}</p>
       <button type="button" class="step" aria-label=${group ? 'Group after' : 'First group'} disabled=${group === groups.at(-1)} onClick=${() => step(1)}><${Icon} name="right" /></button>
     </div>
+    ${group && html`<button type="button" class="button" onClick=${() => setView(closeTo(group, whole))}>Look at it closely</button>`}
     <div class="traced-words">
       <${Drawing} structure=${smiles} atoms=${group?.atoms ?? []} label="Drawing of ${name}${group ? ', atoms of the group lit' : ''}" width=${354} height=${200} class="drawing-traced" />
-      ${group && html`<${GroupWords} group=${group} mhz=${trace.mhz} close=${() => setView(closeTo(group, whole))} />`}
+      ${group && html`<${GroupWords} group=${group} mhz=${trace.mhz} />`}
     </div>
     <${Doubt} trace=${trace} />
   </div>`;
 }
 
-/** @param {{ group: TracedGroup, mhz: number, close: () => void }} props */
-function GroupWords({ group, mhz, close }) {
+/** Pattern and J, and the tree where first-order rules hold. @param {{ group: TracedGroup, mhz: number }} props */
+function GroupWords({ group, mhz }) {
   const order = orderWords(group, mhz);
   return html`<div class="group-words">
     <p class="lead"><${Words} text=${groupWords(group)} /></p>
     ${order && html`<p class="hint">${order}</p>`}
-    <${Tree} mult=${group.mult} j=${group.j} />
-    <button type="button" class="button" onClick=${close}>Look at it closely</button></div>`;
+    ${isFirstOrder(group) && html`<${Tree} mult=${group.mult} j=${group.j} />`}</div>`;
 }
 
 /** What the simulation leaves open. @param {{ trace: Trace }} props */
