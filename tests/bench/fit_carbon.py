@@ -125,7 +125,9 @@ def match(item: Compound, predicted: np.ndarray) -> np.ndarray:
 
 def train(compounds: Sequence[Compound], fixed: Sequence[tuple[dict[str, float], float]]) -> LearnedTable:
     """Alternate matching and fitting."""
-    table = LearnedTable({}, {}, NOISE)
+    rows, residuals = [f for f, _ in fixed], [r for _, r in fixed]
+    # The assigned rows alone first: matching by the bare schemes would lock in their worst errors.
+    table = LearnedTable(fit_weights(rows, residuals, PRIORS, NOISE), PRIORS, NOISE)
     for _ in range(ROUNDS):
         rows, residuals = [f for f, _ in fixed], [r for _, r in fixed]
         for item in compounds:

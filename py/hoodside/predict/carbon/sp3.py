@@ -7,6 +7,7 @@ Determination of Organic Compounds), after Grant and Paul, J. Am. Chem. Soc. 196
 from __future__ import annotations
 
 from functools import cache
+from itertools import combinations
 
 from hoodside.facts import Row, load_table
 from hoodside.molecule import Structure
@@ -26,6 +27,7 @@ def estimate_sp3(structure: Structure, atom: int) -> Estimate:
     terms = [Term("methane", float(base["delta_ppm"]), base["source"])]
     terms += _increments(structure, atom)
     terms += _branching(structure, atom)
+    terms += _geminal(structure, atom)
     return Estimate(_class_of(structure, atom), tuple(terms))
 
 
@@ -87,6 +89,16 @@ def _branching(structure: Structure, atom: int) -> list[Term]:
     return terms
 
 
+def _geminal(structure: Structure, atom: int) -> list[Term]:
+    """Two heteroatoms on one carbon pull less than the sum of both."""
+    near = sorted(s for n in structure.neighbours[atom] if (s := structure.atoms[n].symbol) != "C")
+    found = []
+    for pair in combinations(near, 2):
+        if (row := _geminal_rows().get(" ".join(pair))) is not None:
+            found.append(Term(f"geminal {' and '.join(pair)}", float(row["delta_ppm"]), row["source"]))
+    return found
+
+
 def _class_of(structure: Structure, atom: int) -> str:
     near = [structure.atoms[n] for n in structure.neighbours[atom]]
     hetero = sorted({n.symbol for n in near if n.symbol != "C"})
@@ -108,6 +120,11 @@ def _patterns() -> tuple[Pattern, ...]:
 @cache
 def _by_name() -> dict[tuple[str, str], Row]:
     return {(row["substituent"], row["position"]): row for row in _rows()}
+
+
+@cache
+def _geminal_rows() -> dict[str, Row]:
+    return {row["substituent"]: row for row in _rows() if row["position"] == "geminal"}
 
 
 @cache
