@@ -11,6 +11,7 @@ from rdkit.Chem import AllChem, rdMolTransforms
 from hoodside.molecule import read_structure
 from hoodside.predict.coupling import karplus, predict_couplings, site_couplings
 from hoodside.predict.coupling.conformers import ring_torsions
+from hoodside.predict.coupling.gates import features, needs, without_conditions
 from hoodside.predict.coupling.shape import Shapes
 from hoodside.predict.coupling.table import rules
 from hoodside.predict.model import ProtonGroup
@@ -206,3 +207,36 @@ def test_unusual_structures_are_answered(smiles: str) -> None:
     for c in site_couplings(read_structure(smiles)):
         assert math.isfinite(c.estimate.hz)
         assert c.estimate.sd > 0
+
+
+MIXED = [
+    "FC(F)(F)CO",
+    "COP(=O)(OC)OC",
+    "C[Si](C)(C)C=C",
+    "Cc1ccoc1",
+    "Cc1cscc1",
+    "C=C=CC",
+    "C#CC#C",
+    "O=CNC",
+    "Cn1cncc1",
+    "C1CO1",
+    "CC1CCC1O",
+    "C1=CCCC=C1",
+    "c1ccc2ncccc2c1",
+    "CC(=O)Nc1ccc2[nH]ccc2c1",
+    "OC1CCCCC1F",
+    "O=C1C=CCCC1",
+    "CC(C)=CC=O",
+]
+
+
+@pytest.mark.parametrize("smiles", MIXED)
+def test_no_row_that_matches_is_left_out_beforehand(smiles: str) -> None:
+    structure = read_structure(smiles)
+    there = features(structure)
+    for rule, found in zip(rules(), structure.match_all([r.smarts for r in rules()]), strict=True):
+        assert not found or needs(rule.smarts) <= there, rule.smarts
+
+
+def test_conditions_are_cut_out_of_a_pattern() -> None:
+    assert without_conditions("[CH3]-[CH2;$(C(-[CH3])-!@[CX4])]") == "[CH3]-[CH2;]"

@@ -8,6 +8,7 @@ from functools import cache
 
 from hoodside.facts import Row, load_table
 from hoodside.molecule import Structure
+from hoodside.predict.coupling.gates import features, needs
 from hoodside.predict.coupling.model import Estimate
 
 #: Smallest standard deviation read off a published range, Hz.
@@ -37,10 +38,6 @@ class Found:
         """The best rule for an H-H relation ("cis", "trans" or "" when not known or without meaning)."""
         return next((r for r in self.rules if r.geometry in ("", geometry)), None)
 
-    def needs_geometry(self) -> bool:
-        """Whether the best rule is one of a cis and trans pair."""
-        return bool(self.rules) and bool(self.rules[0].geometry)
-
 
 @cache
 def rules() -> tuple[Rule, ...]:
@@ -58,7 +55,8 @@ def _rule(row: Row) -> Rule:
 def find(structure: Structure) -> dict[tuple[int, int], Found]:
     """Rules per pair of atoms (ends of the path, ascending but for F and P, which stand last)."""
     matched: dict[tuple[int, int], list[tuple[int, Rule]]] = {}
-    table = rules()
+    there = features(structure)
+    table = [rule for rule in rules() if needs(rule.smarts) <= there]
     for number, (rule, matches) in enumerate(
         zip(table, structure.match_all([r.smarts for r in table]), strict=True)
     ):
