@@ -12,7 +12,7 @@ _IN_PATH = {
     "double": re.compile(r"=|\[CX3"),
     "alkene": re.compile(r"=\[CX[23]|\[CX3[^\]]*\]=\[CX"),
     "triple": re.compile(r"#(?!\d)"),
-    "aromatic": re.compile(r"(?<![A-Za-z])[cn](?![a-z])|(?<!,):"),
+    "aromatic": re.compile(r"(?<![A-Za-z,])[cn](?![a-z])|(?<!,):"),
     "F": re.compile(r"-F"),
     "N": re.compile(r"\[NX|#7"),
     "S": re.compile(r"\[SX"),
