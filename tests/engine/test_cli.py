@@ -172,3 +172,15 @@ def test_a_broken_pipe_is_no_error() -> None:
         process.stdout.close()
         assert process.stderr.read() == ""
         assert process.wait(120) == 0
+
+
+def test_predict_explains_every_shift(capsys: pytest.CaptureFixture[str]) -> None:
+    """Base and increments add up to the shift shown, each with its source."""
+    assert main(["predict", "CC(C)c1ccc(C=O)cc1", "--explain"]) == 0
+    told = capsys.readouterr().out.split("\n\n")
+    shifts = [part.splitlines() for part in told if part.startswith(("h1", "c13"))]
+    assert len(shifts) == 12
+    for first, *terms in shifts:
+        total = sum(float(term.split()[0]) for term in terms)
+        assert total == pytest.approx(float(first.split()[1]), abs=0.06)
+        assert all("[" in term for term in terms)

@@ -83,6 +83,9 @@ def _predict(command: argparse.ArgumentParser) -> None:
     command.add_argument("smiles", metavar="SMILES", help="the structure, or - for a CTfile on stdin")
     command.add_argument("--solvent", default="", help="NMR solvent (CDCl3)")
     command.add_argument("--mhz", default="", help="1H frequency in MHz (400)")
+    command.add_argument(
+        "--explain", action="store_true", help="say how each number came about: base, increments, sources"
+    )
 
 
 def _rivals(command: argparse.ArgumentParser) -> None:
