@@ -1,4 +1,4 @@
-"""What the tally shows of the engine's answer on the three invented cases."""
+"""What the tally shows of the engine's answer on the invented cases."""
 
 from __future__ import annotations
 
@@ -11,6 +11,7 @@ CASES = [
     ("Which ring position?", "Fits."),
     ("Did the oxidation go too far?", "Clashes."),
     ("Two that look alike", "Undecided."),
+    ("Why does it look wrong?", "Undecided."),
 ]
 
 

@@ -28,6 +28,8 @@ export interface CaseDoc {
   invented: boolean;
   demo: string;
   story: string;
+  /** A view worth a look, named in the story; `to` are the steps of its address behind the case. */
+  look?: { words: string; to: string[] };
   /** Hazards of what was run, shown with the readings. */
   cautions: string[];
   formula: string;

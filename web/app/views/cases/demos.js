@@ -10,6 +10,7 @@ export const DEMOS = [
   { file: 'ring-position.json', title: 'Which ring position?', kinds: 'formula, IR, \u00b9H' },
   { file: 'too-far.json', title: 'Did the oxidation go too far?', kinds: 'formula, IR, \u00b9H, wet tests' },
   { file: 'not-told-apart.json', title: 'Two that look alike', kinds: 'mass, IR, \u00b9H' },
+  { file: 'low-field.json', title: 'Why does it look wrong?', kinds: 'formula, IR, \u00b9H at 60 MHz' },
 ];
 
 /** Open a fresh copy of an example, or the copy already on this device. @param {string} file */

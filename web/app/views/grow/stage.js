@@ -43,6 +43,7 @@ export function Stage({ drawn, size, touched, choice, label, busy, onSize, onTou
   const last = useRef({ x: -99, y: -99 });
   const place = useSize(holder);
   useLayoutEffect(() => { if (place) onSize(place); }, [place]);
+  useLayoutEffect(() => { last.current = { x: -99, y: -99 }; }, [drawn?.source]);
   const all = drawn ? choice ?? places(drawn) : [];
   const touch = (/** @type {MouseEvent} */ event) => {
     if (!drawn || !size || !holder.current) return;

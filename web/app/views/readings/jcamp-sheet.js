@@ -9,7 +9,7 @@ import { emptyCase } from '../../state/document.js';
 import { useLongAnswer } from '../../state/long-answer.js';
 import { address, go } from '../../state/route.js';
 import { plural } from '../../words/numbers.js';
-import { protonLabel } from '../../words/readings.js';
+import { dashed, protonLabel } from '../../words/readings.js';
 import { Curve } from './curve.js';
 import { collides, countOf, takeOver } from './take-over.js';
 
@@ -22,15 +22,17 @@ export const opened = signal({ name: '', text: '' });
 const how = signal('add');
 
 /** Kinds of which single rows can be left out. */
-const KINDS = /** @type {const} */ (['h1', 'c13', 'ir', 'ms']);
+const KINDS = /** @type {const} */ (['h1', 'c13', 'ir', 'ir_clear', 'ms']);
 /** @type {Record<string, string>} */
-const NAMES = { h1: '1H signals', c13: '13C lines', ir: 'IR bands', ms: 'Mass peaks' };
+const NAMES = { h1: '1H signals', c13: '13C lines', ir: 'IR bands', ir_clear: 'Clear in the IR', ms: 'Mass peaks' };
 
-/** Words of one reading as the case would hold it. @param {string} kind @param {any} row */
-function wordsOf(kind, row) {
+/** Words of one reading as the case would hold it. @param {string} kind @param {any} row @param {boolean} raw integrals are step heights */
+function wordsOf(kind, row, raw) {
   const draft = emptyCase();
   takeOver(draft, { [kind]: [row] }, true);
+  if (draft.irClear[0]) return dashed(`${draft.irClear[0].hi}-${draft.irClear[0].lo}`);
   const [h1, c13, ir, ms] = [draft.h1[0], draft.c13[0], draft.ir[0], draft.ms[0]];
+  if (h1 && raw) return `${protonLabel({ ...h1, h: '' })}${h1.h ? `, step ${Math.round(Number(h1.h))}` : ''}`;
   if (h1) return protonLabel(h1);
   if (c13) return `${c13.ppm} ${c13.kind}`.trim();
   if (ir) return [ir.cm1, ir.shape, ir.strength].filter(Boolean).join(' ');
@@ -73,7 +75,7 @@ export function JcampSheet({ doc }) {
     ${read && html`${read.spectra.map((spectrum, i) => html`<${OneSpectrum} key=${i} spectrum=${spectrum} />`)}
       ${read.warnings.map((line) => html`<p class="hint" key=${line}>${line}</p>`)}
       <${Conditions} readings=${read.readings} />
-      ${KINDS.filter((kind) => read.readings[kind]?.length).map((kind) => html`<${Rows} key=${kind} kind=${kind} rows=${read.readings[kind]} />`)}`}
+      ${KINDS.filter((kind) => read.readings[kind]?.length).map((kind) => html`<${Rows} key=${kind} kind=${kind} rows=${read.readings[kind]} raw=${Boolean(read.readings.raw_integrals)} />`)}`}
   <//>`;
 }
 
@@ -88,8 +90,8 @@ function Conditions({ readings }) {
   return said.length ? html`<p class="lead"><${Words} text=${said.join(', ')} /></p>` : null;
 }
 
-/** Readings of one kind; a tap leaves one out or takes it in again. @param {{ kind: string, rows: any[] }} props */
-function Rows({ kind, rows }) {
+/** Readings of one kind; a tap leaves one out or takes it in again. @param {{ kind: string, rows: any[], raw: boolean }} props */
+function Rows({ kind, rows, raw }) {
   const out = leftOut.value;
   const flip = (/** @type {string} */ key) => {
     const next = new Set(out);
@@ -99,6 +101,6 @@ function Rows({ kind, rows }) {
   const taken = rows.filter((_, i) => !out.has(`${kind}:${i}`)).length;
   return html`<${Section} title=${html`<${Words} text=${NAMES[kind] ?? kind} />`} aside="${taken} of ${rows.length} taken">
     <div class="chips chips-flow">${rows.map((row, i) => html`<button type="button" class="chip" key=${i} aria-pressed=${String(!out.has(`${kind}:${i}`))}
-      onClick=${() => flip(`${kind}:${i}`)}>${wordsOf(kind, row)}</button>`)}</div>
+      onClick=${() => flip(`${kind}:${i}`)}>${wordsOf(kind, row, raw)}</button>`)}</div>
     <p class="whisper">Tap one to leave it out.</p><//>`;
 }

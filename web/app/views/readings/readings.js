@@ -14,6 +14,7 @@ import { CheckTrouble } from './check-trouble.js';
 export function Readings({ doc }) {
   return html`<div class="readings">
     ${doc.story && html`<p class="story">${doc.invented && html`<b>Invented example. </b>`}${doc.story}</p>`}
+    ${doc.look && html`<a class="button" href=${address('case', doc.id, ...doc.look.to)}>${doc.look.words}</a>`}
     ${doc.cautions.map((line) => html`<${Caution} key=${line}>${line}<//>`)}
     <div class="ways-in">
       <a class="button" href=${address('case', doc.id, 'readings', 'paste')}>Paste a report line</a>
