@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
 from hoodside.advise.next import Standing, advise
 from hoodside.errors import FormulaError, InvalidInputError, StructureError
@@ -12,10 +12,13 @@ from hoodside.predict.formula import parse_formula, unsaturation
 from hoodside.predict.model import ProtonGroup
 from hoodside.readings import Readings
 from hoodside.readings.from_json import readings_from_json
-from hoodside.weigh.expectations import expectations
+from hoodside.weigh.expectations import Expectations, expectations
 from hoodside.weigh.sentence import name_of, sentence
 from hoodside.weigh.structure import Tally, weigh_structure
 from hoodside.weigh.verdict import CLASHES, Verdict, judge, shares
+
+if TYPE_CHECKING:
+    from hoodside.rivals import Rival
 
 #: More candidates than this are not weighed at once.
 MOST_CANDIDATES = 200
@@ -26,10 +29,11 @@ class Ranked:
     """One candidate with its place in the input, verdict and share."""
 
     index: int | None  # place among the candidates given; None for a rival
-    origin: str  # "given" or "rival"
+    name: str  # "structure A", "rival 2"
     tally: Tally
     verdict: Verdict
     share: float
+    how: tuple[str, ...] = ()  # how a rival was reached, one entry per move
 
 
 def check_case(case: dict[str, Any]) -> dict[str, Any]:
@@ -40,7 +44,8 @@ def check_case(case: dict[str, Any]) -> dict[str, Any]:
     ``sentence``. Raises: InvalidInputError or StructureError naming the field.
     """
     readings = readings_from_json(case)
-    ranked = rank(readings, candidates_of(case))
+    candidates = candidates_of(case)
+    ranked = rank(readings, candidates, rivals_of(case, readings, candidates))
     formula = _formula(readings, ranked)
     warnings = [*readings.warnings, *_doubts(readings, ranked)]
     return {
@@ -55,7 +60,7 @@ def check_case(case: dict[str, Any]) -> dict[str, Any]:
 
 def _standing(ranked: Sequence[Ranked]) -> list[Standing]:
     return [
-        Standing(place, name_of(r.index), r.share, r.tally.expected)
+        Standing(place, r.name, r.share, r.tally.expected)
         for place, r in enumerate(ranked)
         if r.verdict.verdict != CLASHES
     ]
@@ -90,20 +95,57 @@ def _smiles(entry: object, field: str) -> str:
         raise StructureError(str(err), hint=err.hint, field=field, value=entry) from err
 
 
-def rank(readings: Readings, candidates: Sequence[str], origins: Sequence[str] = ()) -> list[Ranked]:
-    """All candidates weighed and judged, best first. Raises: StructureError naming the candidate."""
+def rank(readings: Readings, candidates: Sequence[str], rivals: Sequence[Rival] = ()) -> list[Ranked]:
+    """Candidates and rivals weighed and judged, best first. Raises: StructureError naming the candidate."""
     tallies = [_tally(source, readings, f"candidates[{i}]") for i, source in enumerate(candidates)]
+    mine = {t.expected.structure.inchikey for t in tallies}
+    found = [(r, _tally(r.smiles, readings, "rivals")) for r in rivals]
+    found = [(r, t) for r, t in found if t.expected.structure.inchikey not in mine]
+    found = sorted(found, key=lambda entry: -entry[1].weight_db)[: len(rivals) // POOL]
+    tallies += [t for _, t in found]
     verdicts, parts = judge(tallies), shares(tallies)
     ranked = []
     for i, tally in enumerate(tallies):
-        origin = origins[i] if origins else "given"
-        ranked.append(Ranked(i if origin == "given" else None, origin, tally, verdicts[i], parts[i]))
+        at = i - len(candidates)
+        name, how = (name_of(i), ()) if at < 0 else (f"rival {at + 1}", found[at][0].how)
+        ranked.append(Ranked(i if at < 0 else None, name, tally, verdicts[i], parts[i], how))
     return sorted(ranked, key=lambda r: -r.tally.weight_db)
 
 
+#: So many rivals are weighed for each one asked for; the best are kept.
+POOL = 2
+MOST_RIVALS = 200
+
+
+def rivals_of(case: dict[str, Any], readings: Readings, candidates: Sequence[str]) -> tuple[Rival, ...]:
+    """Look-alikes of the intended structure, ``POOL`` times as many as the check object asks for.
+
+    Raises: InvalidInputError for a number that is none or too large.
+    """
+    wanted = case.get("rivals") or 0
+    if not isinstance(wanted, int) or isinstance(wanted, bool) or not 0 <= wanted <= MOST_RIVALS:
+        raise InvalidInputError(
+            f"rivals is {wanted!r}.", hint=f"Ask for 0 to {MOST_RIVALS}.", field="rivals", value=wanted
+        )
+    if not wanted or not candidates:
+        return ()
+    from hoodside.rivals import find_rivals  # only who asks for rivals pays for loading the search
+
+    intended = case.get("intended")
+    at = intended if isinstance(intended, int) and 0 <= intended < len(candidates) else 0
+    structure = _expected(candidates[at], readings, f"candidates[{at}]").structure
+    known = bool(readings.formula or readings.hrms or readings.analysis)
+    found = find_rivals(structure, formula_known=known, readings=readings, limit=POOL * wanted)
+    return found.rivals
+
+
 def _tally(source: str, readings: Readings, field: str) -> Tally:
+    return weigh_structure(_expected(source, readings, field), readings)
+
+
+def _expected(source: str, readings: Readings, field: str) -> Expectations:
     try:
-        return weigh_structure(expectations(source, readings), readings)
+        return expectations(source, readings)
     except StructureError as err:
         raise StructureError(str(err), hint=err.hint, field=field, value=source) from err
 
@@ -133,7 +175,7 @@ def _doubts(readings: Readings, ranked: Sequence[Ranked]) -> list[str]:
     for r in sorted(ranked, key=lambda r: -1 if r.index is None else r.index):
         key = r.tally.expected.structure.inchikey
         if key in seen:
-            doubts.append(f"{name_of(r.index)} is the same compound as {name_of(seen[key].index)}.")
+            doubts.append(f"S{r.name[1:]} is the same compound as {seen[key].name}.")
         seen.setdefault(key, r)
     return doubts
 
@@ -148,24 +190,25 @@ def _candidate(at: int, ranked: Sequence[Ranked]) -> dict[str, Any]:
     tally = mine.tally
     return {
         "smiles": tally.expected.structure.source,
-        "origin": mine.origin,
+        "origin": "given" if mine.index is not None else "rival",
         "index": mine.index,
         "formula": tally.expected.formula.text,
         "ok_formula": tally.ok_formula,
         "verdict": mine.verdict.verdict,
         "reason": mine.verdict.reason,
-        "sentence": sentence(at, [(r.index, r.tally, r.verdict) for r in ranked]),
+        "sentence": sentence(at, [(r.name, r.tally, r.verdict) for r in ranked]),
+        "how": list(mine.how),
         "weight_db": round(tally.weight_db, 1) + 0.0,
         "share": round(mine.share, 4),
         "findings": [f.to_dict() for f in tally.findings],
         "assignment": [link.to_dict() for link in tally.links],
         "missing": [left.to_dict() for left in tally.missing],
         "unexplained": [left.to_dict() for left in tally.unexplained],
-        "expected": [_expected(group) for group in tally.expected.h1],
+        "expected": [_group(group) for group in tally.expected.h1],
     }
 
 
-def _expected(group: ProtonGroup) -> dict[str, Any]:
+def _group(group: ProtonGroup) -> dict[str, Any]:
     return {
         "ppm": round(group.ppm, 3),
         "sd": round(group.sd, 3),

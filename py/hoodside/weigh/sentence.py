@@ -12,13 +12,12 @@ _LETTERS = "ABCDEFGHIJKLMNOPQRSTUVWXYZ"
 #: Others named one by one in a sentence; more are counted.
 _NAMED = 3
 
-Entry = tuple[int | None, Tally, Verdict]
+#: What a structure is called, its tally and its verdict.
+Entry = tuple[str, Tally, Verdict]
 
 
-def name_of(index: int | None) -> str:
-    """ "Structure A" for the first candidate given; rivals have no letter."""
-    if index is None:
-        return "a rival"
+def name_of(index: int) -> str:
+    """ "structure A" for the first candidate given."""
     return f"structure {_LETTERS[index] if index < len(_LETTERS) else index + 1}"
 
 
@@ -28,7 +27,7 @@ def sentence(at: int, ranked: Sequence[Entry]) -> str:
     identity = tally.expected.structure.inchikey
     others = [e for i, e in enumerate(ranked) if i != at and e[1].expected.structure.inchikey != identity]
     same = [e for i, e in enumerate(ranked) if i != at and e[1].expected.structure.inchikey == identity]
-    twin = f" The same compound as {name_of(same[0][0])}." if same else ""
+    twin = f" The same compound as {same[0][0]}." if same else ""
     if verdict.verdict == CLASHES:
         return f"Clashes. {verdict.reason}{_instead(others)}{twin}"
     if verdict.verdict == FITS:
@@ -38,13 +37,13 @@ def sentence(at: int, ranked: Sequence[Entry]) -> str:
 
 def _instead(others: Sequence[Entry]) -> str:
     better = next((e for e in others if e[2].verdict == FITS), None)
-    return f" {_capital(name_of(better[0]))} fits instead." if better else ""
+    return f" {_capital(better[0])} fits instead." if better else ""
 
 
 def _behind(tally: Tally, others: Sequence[Entry]) -> str:
     if not others:
         return "It stands alone: what else it could be has not been put up."
-    gaps = [(name_of(i), tally.weight_db - t.weight_db) for i, t, _ in others[:_NAMED]]
+    gaps = [(name, tally.weight_db - t.weight_db) for name, t, _ in others[:_NAMED]]
     more = len(others) - len(gaps)
     figures = listed([f"{gap:.0f}" for _, gap in gaps])
     verb = "is" if len(gaps) == 1 else "are"
@@ -58,12 +57,12 @@ def _open(tally: Tally, verdict: Verdict, others: Sequence[Entry]) -> str:
     ]
     ahead = [e for e in others if e[1].weight_db - tally.weight_db >= TELLS_APART]
     if near:
-        names = [name_of(i) for i, _, _ in near[:_NAMED]]
+        names = [name for name, _, _ in near[:_NAMED]]
         more = [f"{len(near) - _NAMED} more"] if len(near) > _NAMED else []
         return f"Not told apart from {listed([*names, *more])} by these readings."
     if ahead:
         gap = ahead[0][1].weight_db - tally.weight_db
-        return f"{_capital(name_of(ahead[0][0]))} is {gap:.0f} ahead, yet nothing rules this one out."
+        return f"{_capital(ahead[0][0])} is {gap:.0f} ahead, yet nothing rules this one out."
     return verdict.reason
 
 

@@ -13,12 +13,12 @@ from hoodside.weigh.protons.score import Terms
 from hoodside.weigh.protons.signals import prepare
 from hoodside.weigh.protons.solve import Solution, solve
 from hoodside.weigh.trust import trust
-from hoodside.weigh.words import amount, atoms_of, group_name, plural_h, printed
+from hoodside.weigh.words import amount, atoms_of, group_name, listed, plural_h, printed
 
 _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
 _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
-#: A part of a signal's weight is told apart from its place when it speaks against by this much, decibans.
-_TOLD_APART = -3.0
+#: Sets of H named one by one in a sentence.
+_NAMED = 3
 
 
 def weigh_protons(groups: Sequence[ProtonGroup], patterns: Patterns, readings: Readings) -> Weighed:
@@ -52,10 +52,10 @@ def _of_signal(solution: Solution, readings: Readings, k: int) -> Iterator[Findi
     )
     yield Finding("h1.count", trust("h1.count") * terms.count, _count_text(solution, k, held), ref, atoms)
     if signal.mult:
-        text = _pattern_text(solution, members, signal.mult)
+        text = _pattern_text(solution, k, members)
         yield Finding("h1.pattern", trust("h1.pattern") * terms.pattern, text, ref, atoms, _COUNTED)
     if terms.coupling:
-        text = _coupling_text(solution, members, signal.j, terms)
+        text = _coupling_text(solution, k, members, terms)
         yield Finding(
             "h1.coupling", trust("h1.coupling") * terms.coupling, text, ref, atoms, "facts/couplings_hh.csv"
         )
@@ -83,29 +83,34 @@ def _place_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
 
 
 def _count_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
-    due, found = sum(g.n for g in held), solution.signals[k].n
-    if found is None:
-        return f"No number of H given; {plural_h(due)} placed here."
-    if abs(found - due) < 0.5:
-        return f"{plural_h(due)} expected and found."
-    return f"{amount(found)} H found, {due} H expected."
+    due, signal = sum(g.n for g in held), solution.signals[k]
+    where, names = f"δ {printed(signal)}", listed([group_name(g) for g in held][:_NAMED])
+    if signal.n is None:
+        return f"{where}: no number of H given; {plural_h(due)} placed here."
+    if abs(signal.n - due) < 0.5:
+        return f"{where}: {plural_h(due)} expected and found."
+    return f"{where}: {amount(signal.n)} H found where the structure has {due} H ({names})."
 
 
-def _pattern_text(solution: Solution, members: tuple[int, ...], seen: str) -> str:
+def _pattern_text(solution: Solution, k: int, members: tuple[int, ...]) -> str:
     awaited = solution.scorer.patterns.awaited(members)
-    held = [solution.groups[m] for m in members]
+    signal, held = solution.signals[k], [solution.groups[m] for m in members]
+    where = f"δ {printed(signal)}: printed {signal.pattern}"
     if awaited.kind == "several":
-        return f"Printed {seen}; {len(members)} sets of H overlap here."
+        return f"{where}; in this structure {len(members)} different sets of H would have to overlap here."
     if awaited.kind == "exchangeable":
-        return f"Printed {seen}; exchangeable H usually come as one line, often broad."
+        return f"{where}; exchangeable H usually come as one line, often broad."
     note = " from the neighbours of this CH₂" if is_pair(held) else ""
-    return f"Printed {seen}; expected {awaited.text}{note}."
+    return f"{where}; expected {awaited.text}{note}."
 
 
-def _coupling_text(solution: Solution, members: tuple[int, ...], seen: Sequence[float], terms: Terms) -> str:
+def _coupling_text(solution: Solution, k: int, members: tuple[int, ...], terms: Terms) -> str:
+    signal = solution.signals[k]
     verb = "agrees with" if terms.coupling > 0 else "does not suit"
     expected = solution.scorer.patterns.awaited(members).text
-    return f"J = {', '.join(f'{j:g}' for j in seen)} Hz {verb} the expected {expected}."
+    return (
+        f"δ {printed(signal)}: J = {', '.join(f'{j:g}' for j in signal.j)} Hz {verb} the expected {expected}."
+    )
 
 
 def _stray_finding(solution: Solution, readings: Readings, k: int) -> Finding:
