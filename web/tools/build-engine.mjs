@@ -39,17 +39,19 @@ async function tryArchives(out) {
   python.registerJsModule('hoodside_kernel', {});
   python.registerJsModule('hoodside_numerics', {});
   python.FS.writeFile('/lib/hoodside.zip', await readFile(join(out, 'hoodside.zip')));
-  python.mountNodeFS('/tools', here);
+  for (const [inside, outside] of [['/py', join(repo, 'py')], ['/tools', here]]) python.mountNodeFS(inside, outside);
   python.runPython(`
-import sys, zipfile
+import sys
 from importlib import import_module
+from pathlib import Path
 sys.path.insert(0, "/lib/hoodside.zip")
 import hoodside_start
 sys.path.append("/tools")
 sys.dont_write_bytecode = True
 from compile_bundle import module_names
-for name in module_names(n for n in zipfile.ZipFile("/lib/hoodside.zip").namelist() if n.startswith("hoodside/")):
-    import_module(name)
+for name in module_names(Path("/py/hoodside")):
+    if not import_module(name).__file__.startswith("/lib/hoodside.zip/"):
+        raise ImportError(f"{name} does not come from the archive")
 `);
 }
 

@@ -9,7 +9,6 @@ import dataclasses
 import io
 import marshal
 import zipfile
-from collections.abc import Iterable
 from importlib import import_module
 from importlib._bootstrap_external import _code_to_hash_pyc
 from pathlib import Path
@@ -39,6 +38,13 @@ ENCODINGS = {
     "raw_unicode_escape", "unicode_escape", "utf_16", "utf_16_be", "utf_16_le", "utf_8", "utf_8_sig",
 }  # fmt: skip
 
+#: What Python imports before ``sitecustomize`` can make it look into the packed modules.
+NOT_PACKED = {
+    "_collections_abc.py", "_sitebuiltins.py", "abc.py", "codecs.py", "encodings", "genericpath.py",
+    "hoodside_start.py", "io.py", "os.py", "packed_modules.py", "posixpath.py", "site.py", "sitecustomize.py",
+    "stat.py",
+}  # fmt: skip
+
 _UNCHECKED_HASH = bytes(8)  # never compared: there is no source to compare with
 _EPOCH = (1980, 1, 1, 0, 0, 0)  # the same input gives the same archive, byte for byte
 
@@ -57,27 +63,28 @@ def engine(source: str, target: str, debug: bool) -> None:
     paths = [path for path in sorted(root.rglob("*")) if path.suffix in {".py", ".csv"}]
     files = {str(path.relative_to(root.parent)): path.read_bytes() for path in paths}
     files["hoodside_start.py"] = Path(__file__).with_name("hoodside_start.py").read_bytes()
-    files["ready_code.marshal"] = _ready_code(name for name in files if name.startswith("hoodside/"))
+    files["ready_code.marshal"] = _ready_code(root)
     _write(target, files, debug)
 
 
-def module_names(files: Iterable[str]) -> list[str]:
-    """Names of the engine's modules that run in the browser."""
-    paths = (name.partition(".")[0] for name in files if name.endswith((".py", ".pyc")))
-    names = {path.replace("/", ".").removesuffix(".__init__") for path in paths}
+def module_names(root: Path) -> list[str]:
+    """Names of the engine's modules that run in the browser, in the sources at ``root``."""
+    paths = (path.relative_to(root.parent).with_suffix("") for path in root.rglob("*.py"))
+    names = {".".join(path.parts).removesuffix(".__init__") for path in paths}
     return sorted(name for name in names - {"hoodside.__main__"} if not name.endswith("_cpython"))
 
 
-def _ready_code(files: Iterable[str]) -> bytes:
-    """What ``@dataclass`` compiles when the engine is imported, compiled: text -> code."""
-    codes: dict[str, CodeType] = {}
+def _ready_code(root: Path) -> bytes:
+    """What ``@dataclass`` compiles when the engine is imported, compiled: text -> marshalled code."""
+    codes: dict[str, bytes] = {}
 
     def run_and_keep(text: str, global_names: dict[str, Any], local_names: dict[str, Any]) -> None:
-        codes[text] = compile(text, "<dataclass>", "exec", dont_inherit=True)
-        exec(codes[text], global_names, local_names)
+        code = compile(text, "<dataclass>", "exec", dont_inherit=True)
+        codes[text] = marshal.dumps(code)
+        exec(code, global_names, local_names)
 
     dataclasses.exec = run_and_keep  # type: ignore[attr-defined]
-    for name in module_names(files):
+    for name in module_names(root):
         import_module(name)
     return marshal.dumps(codes)
 
@@ -92,20 +99,33 @@ def _is_kept(name: str) -> bool:
 def _write(target: str, sources: dict[str, bytes], debug: bool) -> None:
     # Stored, not deflated: the host sends it gzipped once, and every start then reads it without inflating.
     with zipfile.ZipFile(target, "w", zipfile.ZIP_STORED) as archive:
+
+        def add(name: str, data: bytes) -> None:
+            archive.writestr(zipfile.ZipInfo(name, _EPOCH), data)
+
+        packed: dict[str, tuple[str, bool, bytes]] = {}
         for name, data in sources.items():
-            packed_name, packed = (name, data) if debug and name.endswith(".py") else _packed(name, data)
-            archive.writestr(zipfile.ZipInfo(packed_name, _EPOCH), packed)
+            if name.endswith(".csv"):
+                add(name.removesuffix(".csv") + ".table", _compact_table(data))
+            elif not name.endswith(".py") or debug:
+                add(name, data)
+            elif name.partition("/")[0] in NOT_PACKED:
+                add(
+                    f"{name}c",
+                    bytes(_code_to_hash_pyc(_compiled(name, data), _UNCHECKED_HASH, checked=False)),
+                )
+            else:
+                module = name.removesuffix(".py").replace("/", ".")
+                code = marshal.dumps(_compiled(name, data))
+                packed[module.removesuffix(".__init__")] = (f"{name}c", module.endswith(".__init__"), code)
+        if packed:
+            add("packed_modules.marshal", marshal.dumps(packed))
 
 
-def _packed(name: str, data: bytes) -> tuple[str, bytes]:
-    if name.endswith(".py"):
-        # Without a docstring, @dataclass works one out from the signature: slow, so the engine keeps its own.
-        level = 1 if name.startswith("hoodside/") else 2
-        code = compile(data, name, "exec", dont_inherit=True, optimize=level)
-        return name + "c", bytes(_code_to_hash_pyc(code, _UNCHECKED_HASH, checked=False))
-    if name.endswith(".csv"):
-        return name.removesuffix(".csv") + ".table", _compact_table(data)
-    return name, data
+def _compiled(name: str, data: bytes) -> CodeType:
+    # Without a docstring, @dataclass works one out from the signature: slow, so the engine keeps its own.
+    level = 1 if name.startswith("hoodside/") else 2
+    return compile(data, name, "exec", dont_inherit=True, optimize=level)
 
 
 def _compact_table(data: bytes) -> bytes:

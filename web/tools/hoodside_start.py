@@ -6,19 +6,21 @@ texts once (``READY``, written beside this module); here they are only looked up
 
 import dataclasses
 import marshal
-from importlib.util import find_spec
+
+from packed_modules import install
 
 READY = "ready_code.marshal"
 
-_spec = find_spec(__name__)
-_archive = _spec.loader.archive
-_ready = marshal.loads(_spec.loader.get_data(f"{_archive}/{READY}"))
+_loader = __spec__.loader
+_ready = marshal.loads(_loader.get_data(f"{_loader.archive}/{READY}"))
 
 
 def _run(text, global_names, local_names):
-    exec(_ready.get(text, text), global_names, local_names)
+    ready = _ready.get(text)
+    exec(text if ready is None else marshal.loads(ready), global_names, local_names)
 
 
 dataclasses.exec = _run
+install(_loader.archive)
 
 from hoodside.engine import handle  # noqa: E402, F401
