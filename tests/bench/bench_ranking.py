@@ -1,8 +1,7 @@
 """Published readings against the truth and its listed rivals: who comes first, verdicts, honesty of shares.
 
-``python -m bench ranking`` uses the shipped predictors, which have learned from these very spectra; so
-``python tests/bench/bench_ranking.py --held-out`` repeats the first table with predictors fitted without the
-compounds they are asked about (some minutes).
+The shipped predictors have learned from these very spectra; ``bench_left_out`` and ``python
+tests/bench/bench_ranking.py --held-out`` ask about compounds left out of the fits (some minutes).
 """
 
 from __future__ import annotations

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterable
 from dataclasses import replace
+from math import fsum
 
 from hoodside.predict.infrared import band_reliability
 from hoodside.readings import CarbonLine, IrBand, MassPeak, ProtonSignal, Readings
@@ -85,7 +86,7 @@ def gap(
 
 def total(weighed: Weighed) -> float:
     """Sum of the findings, decibans."""
-    return sum(f.weight_db for f in weighed.findings)
+    return fsum(f.weight_db for f in weighed.findings)
 
 
 def only(readings: Readings, **kinds: object) -> Readings:

@@ -10,6 +10,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 from itertools import combinations
+from math import fsum
 
 from hoodside.advise.bench_tests import test_measurements
 from hoodside.advise.composition import mass_measurements
@@ -99,7 +100,7 @@ def _capital(text: str) -> str:
 def _mean(gains: Sequence[tuple[Gain, Standing, Standing]]) -> float:
     """Expected weight over the pairs, each by what is at stake."""
     stakes = [_stake(a, b) for _, a, b in gains]
-    return sum(s * gain.expected_db for s, (gain, _, _) in zip(stakes, gains, strict=True)) / sum(stakes)
+    return fsum(s * gain.expected_db for s, (gain, _, _) in zip(stakes, gains, strict=True)) / fsum(stakes)
 
 
 def _stake(a: Standing, b: Standing) -> float:

@@ -5,6 +5,7 @@ from __future__ import annotations
 from bisect import bisect_right
 from dataclasses import dataclass
 from functools import cache
+from math import fsum
 
 from hoodside.facts import load_table
 
@@ -50,7 +51,7 @@ def size_class(n: float | None) -> str:
 def spread(table: str, group: str = "any") -> Spread:
     """One histogram of a background table."""
     rows = [row for row in load_table(table) if row["group"] == group]
-    total = sum(float(row["share"]) for row in rows)
+    total = fsum(float(row["share"]) for row in rows)
     edges, below = [float(rows[0]["lo"])], [0.0]
     for row in rows:
         edges.append(float(row["hi"]))

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
-from math import atan, log, log10, pi, sqrt
+from math import atan, fsum, log, log10, pi, sqrt
 
 _PER_NAT = 10 / log(10)
 _ROOT_3 = sqrt(3)
@@ -23,7 +23,7 @@ def joined(weights: Iterable[float]) -> float:
     """Weight of "any of these": 10 log10 of the sum of the ratios."""
     listed = list(weights)
     top = max(listed)
-    return top + decibans(sum(odds(w - top) for w in listed))
+    return top + decibans(fsum(odds(w - top) for w in listed))
 
 
 def from_nats(nats: float) -> float:

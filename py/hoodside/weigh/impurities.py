@@ -8,6 +8,7 @@ from __future__ import annotations
 from collections.abc import Iterator
 from dataclasses import dataclass
 from functools import cache
+from math import fsum
 
 from hoodside.facts import Row, load_table
 from hoodside.readings import CarbonLine, ProtonSignal
@@ -72,7 +73,7 @@ def carbon_stray(line: CarbonLine, solvent: str) -> Stray:
 
 def _stray(crowd: list[tuple[float, _Known]], anyhow: float) -> Stray:
     likely, best = max(crowd, key=lambda entry: entry[0], default=(0.0, None))
-    total = sum(chance for chance, _ in crowd) + _STRANGER * anyhow
+    total = fsum(chance for chance, _ in crowd) + _STRANGER * anyhow
     name = best.name if best is not None and likely > _NAMED * total else ""
     return Stray(min(decibans(total / anyhow), 0.0), name)
 

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
+from math import fsum
 
 from hoodside.predict.formula import Formula, exact_mass, isotope_pattern
 from hoodside.predict.model import MassExpectation
@@ -31,7 +32,7 @@ def weigh_masses(formula: Formula, expected: Sequence[MassExpectation], readings
     nominal = round(exact_mass(Formula(formula.parts)))
     findings, links = [], []
     fragments = {round(e.mz): i for i, e in reversed(list(enumerate(expected))) if round(e.mz) != nominal}
-    total = _STRAYS + sum(e.weight for e in expected)
+    total = _STRAYS + fsum(e.weight for e in expected)
     whole = _whole_ions(nominal, readings.ms)
     for k, peak in enumerate(readings.ms):
         mz = round(peak.mz)
@@ -72,7 +73,7 @@ def _peak(
         return Finding("ms.molecule", trust("ms.molecule") * _TOO_HEAVY, text, ref)
     if mz > nominal:
         return Finding("ms.ion", 0.0, f"m/z {mz} is an isotope peak of the molecular ion.", ref)
-    likely = sum(e.weight for e in expected if round(e.mz) == mz)
+    likely = fsum(e.weight for e in expected if round(e.mz) == mz)
     ratio = (_STRAYS / _MASSES + likely) / total * _MASSES
     weight = trust("ms.ion") * decibans(max(ratio, 0.05))
     if mz in fragments:

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 from functools import cached_property
+from math import fsum
 
 from hoodside.readings import Readings
 from hoodside.weigh.bench_tests import weigh_tests
@@ -32,7 +33,7 @@ class Tally:
     @cached_property
     def weight_db(self) -> float:
         """Sum of all findings, decibans."""
-        return sum(finding.weight_db for finding in self.findings)
+        return fsum(finding.weight_db for finding in self.findings)
 
     @property
     def links(self) -> tuple[Link, ...]:

@@ -9,6 +9,7 @@ from __future__ import annotations
 from collections import defaultdict
 from collections.abc import Sequence
 from dataclasses import dataclass
+from math import fsum
 
 from hoodside.weigh.decibans import odds
 from hoodside.weigh.finding import Finding
@@ -58,7 +59,7 @@ def shares(tallies: Sequence[Tally]) -> list[float]:
         return []
     top = max(t.weight_db for t in tallies)
     ratios = [odds(t.weight_db - top) for t in tallies]
-    return [ratio / sum(ratios) for ratio in ratios]
+    return [ratio / fsum(ratios) for ratio in ratios]
 
 
 def _standing(tally: Tally, rest: Sequence[Tally]) -> Verdict:
@@ -104,5 +105,5 @@ def _by_reading(findings: Sequence[Finding]) -> list[Finding]:
 
 def _joined(members: list[Finding]) -> Finding:
     worst = min(members, key=lambda f: f.weight_db)
-    total = sum(f.weight_db for f in members)
+    total = fsum(f.weight_db for f in members)
     return Finding(worst.kind, total, worst.text, worst.readings, worst.atoms, worst.source)

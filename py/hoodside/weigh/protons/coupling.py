@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from functools import lru_cache
+from math import fsum
 
 from hoodside.predict.multiplet import Splitting
 from hoodside.weigh.background import spread
@@ -20,7 +21,7 @@ _HALF = 0.25
 def coupling_weight(expected: Sequence[Splitting], printed: Sequence[float]) -> float:
     """Weight in decibans of printed couplings (Hz) for as many expected splittings, both largest first."""
     seen = sorted(printed, reverse=True)
-    return sum(_one(j, s.hz, max(s.sd, _LEAST)) for j, s in zip(seen, expected, strict=False))
+    return fsum(_one(j, s.hz, max(s.sd, _LEAST)) for j, s in zip(seen, expected, strict=False))
 
 
 @lru_cache(maxsize=4096)

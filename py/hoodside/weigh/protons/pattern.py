@@ -12,6 +12,7 @@ from collections import Counter
 from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cache
+from math import fsum
 
 from hoodside.facts import load_table
 from hoodside.predict.coupling import Coupling
@@ -163,7 +164,7 @@ def anyhow_share(key: Key) -> float:
 def _shares(kind: str) -> dict[str, float]:
     row = _counts().get(kind, {})
     filled = {r: row.get(r, 0.0) + _BEFOREHAND[r] for r in _RELATIONS}
-    total = sum(filled.values())
+    total = fsum(filled.values())
     return {r: n / total for r, n in filled.items()}
 
 

@@ -12,7 +12,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 from functools import cache
-from math import exp, hypot
+from math import exp, fsum, hypot
 
 from hoodside.facts import load_table
 from hoodside.predict.model import ProtonGroup
@@ -128,7 +128,7 @@ def share_listed(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: 
     if raw or not due:
         return 1.0
     usual = due / len(groups)
-    found = sum(usual if s.n is None else s.n for s in signals if not s.stray.name)
+    found = fsum(usual if s.n is None else s.n for s in signals if not s.stray.name)
     return min(found / due / _SEEMS_COMPLETE, 1.0)
 
 

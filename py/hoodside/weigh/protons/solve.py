@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from math import fsum
 
 from hoodside.predict.model import ProtonGroup
 from hoodside.weigh.protons.assign import NOWHERE, Puzzle, assign
@@ -63,7 +64,7 @@ def _solve(
 def _first_factor(groups: Sequence[ProtonGroup], signals: Sequence[Signal]) -> float:
     """H per unit of integral, all signals together (the solvent's own left out)."""
     due = sum(g.n for g in groups if not g.exchangeable)
-    found = sum(s.n or 0.0 for s in signals if not s.stray.name) or sum(s.n or 0.0 for s in signals)
+    found = fsum(s.n or 0.0 for s in signals if not s.stray.name) or fsum(s.n or 0.0 for s in signals)
     return due / found if due and found else 1.0
 
 
