@@ -12,8 +12,14 @@ from hoodside.errors import InvalidInputError
 from hoodside.facts import load_table
 from hoodside.molecule import read_structure
 from hoodside.molecule.kernel import kernel
+from hoodside.predict.formula import formula_of
+from hoodside.readings.from_json import readings_from_json
 from hoodside.rivals import find_rivals, iterate_rivals
+from hoodside.rivals.early import early_test
+from hoodside.rivals.enumeration import enumerate_isomers
 from hoodside.rivals.graph import graph_of
+from hoodside.rivals.growth import SENSIBLE
+from hoodside.rivals.held_back import doubts, penalty
 from hoodside.rivals.names import flat, name_of
 from hoodside.rivals.rules import isomer_rules
 from hoodside.rivals.writer import write_smiles
@@ -52,7 +58,9 @@ def test_every_rival_is_an_isomer_found_once_and_says_how(case: dict[str, str]) 
     assert intended.inchikey not in keys
     for rival in found:
         assert read_structure(rival.smiles).element_counts == intended.element_counts, rival
-        assert len(rival.how) == rival.distance > 0
+        assert rival.distance == len(rival.how) or rival.how == (
+            f"found among all isomers of {case['formula']}",
+        )
         assert all(rival.how)
     assert [r.plausibility for r in found] == sorted((r.plausibility for r in found), reverse=True)
 
@@ -137,3 +145,77 @@ def test_the_door_answers_with_formulas_and_refuses_in_words() -> None:
     assert [len(answer["rivals"]), answer["rivals"][0]["formula"]] == [5, "C8H8O2"]
     with pytest.raises(InvalidInputError, match="structure"):
         call("rivals", {"limit": 5})
+
+
+@pytest.mark.parametrize("smiles", ["CCCC=O", "CCCCO", "CCCCCC", "C=CC(=O)OC", "CCCN", "CC[N+](=O)[O-]"])
+def test_a_small_formula_is_enumerated_and_said_to_be_complete(smiles: str) -> None:
+    found = find_rivals(read_structure(smiles))
+    assert found.complete
+    assert "Complete" in found.note
+    formula = formula_of(read_structure(smiles))
+    every = {flat(s) for s in enumerate_isomers(formula, sensible=True).smiles}
+    put_up = {flat(r.smiles) for r in found.rivals} | {flat(smiles)}
+    sound = {s for s in every if penalty(s, doubts(smiles)) < SENSIBLE}
+    assert sound - put_up <= tautomers_of(put_up)
+
+
+def tautomers_of(names_: set[str]) -> set[str]:
+    """Forms with the same standard InChIKey, which are put up once."""
+    keys = {read_structure(n).inchikey for n in names_}
+    formulas = {str(formula_of(read_structure(n))) for n in names_}
+    others = {s for formula in formulas for s in enumerate_isomers(formula).smiles}
+    return {s for s in others if read_structure(s).inchikey in keys}
+
+
+def test_a_large_formula_is_not_said_to_be_complete() -> None:
+    assert not find_rivals(read_structure("COc1ccc(C=O)cc1"), limit=20).complete
+
+
+@pytest.mark.parametrize(
+    ("smiles", "analogue"),
+    [
+        ("COc1ccc(C=O)cc1", "CSc1ccc(C=O)cc1"),  # an isolated methyl on O, S, N or carbon
+        ("COc1ccc(C=O)cc1", "CNc1ccc(C=O)cc1"),
+        ("COc1ccc(C=O)cc1", "Cc1ccc(C=O)cc1"),
+        ("Cc1ccc(C=O)cc1", "COc1ccc(C=O)cc1"),
+        ("Brc1ccc(C=O)cc1", "O=Cc1ccc(Cl)cc1"),  # halogens, which 1H does not tell
+        ("CCOC(=O)C", "CCNC(C)=O"),
+        ("c1ccoc1C=O", "O=Cc1cccs1"),
+        ("CS(=O)(=O)c1ccccc1", "CSc1ccccc1"),
+        ("N#Cc1ccc(C=O)cc1", "O=Cc1ccc([N+](=O)[O-])cc1"),
+        ("CC(=O)Cc1ccccc1", "CC(=O)Oc1ccccc1"),
+    ],
+)
+def test_without_a_formula_isosteres_are_put_up_too(smiles: str, analogue: str) -> None:
+    found = find_rivals(read_structure(smiles), formula_known=False, limit=100)
+    by_name = {rival.smiles: rival for rival in found.rivals}
+    assert name_of(analogue) in by_name
+    assert by_name[name_of(analogue)].how
+    assert not found.complete
+
+
+def test_readings_that_leave_no_doubt_are_used_early() -> None:
+    intended = read_structure("CC(=O)c1ccc(OC)cc1")
+    readings = readings_from_json(
+        {
+            "formula": "C9H10O2",
+            "h1": [
+                {"ppm": 7.9, "mult": "d", "j": [8.8], "n": 2},
+                {"ppm": 6.9, "mult": "d", "j": [8.8], "n": 2},
+                {"ppm": 3.8, "mult": "s", "n": 3},
+                {"ppm": 2.5, "mult": "s", "n": 3},
+            ],
+            "ir_clear": [[3200, 3600]],
+        }
+    )
+    plain = {r.smiles for r in find_rivals(intended, limit=150).rivals}
+    left = {r.smiles for r in find_rivals(intended, readings=readings, limit=150).rivals}
+    aldehyde, alcohol = "CCOc1ccc(C=O)cc1", "O=CCc1ccc(CO)cc1"
+    assert name_of(aldehyde) in plain - left
+    assert not any(read_structure(s).matches("[CX4][OH]") for s in left), alcohol
+    assert name_of("CCC(=O)c1ccc(O)cc1") in left
+
+
+@pytest.mark.parametrize("case", CASES, ids=lambda case: str(case["id"]))
+def test_early_use_of_readings_never_loses_the_truth(case: dict[str, object]) -> None:
+    assert early_test(readings_from_json(case))(str(case["smiles"]))

@@ -5,13 +5,17 @@ from __future__ import annotations
 from collections.abc import Iterator
 from itertools import combinations
 
+from hoodside.molecule.kernel import kernel
 from hoodside.rivals.graph import Graph, Mark
+from hoodside.rivals.writer import write_smiles
 
 _TURNED: dict[Mark, Mark] = {"cw": "ccw", "ccw": "cw", "": ""}
 _OTHER = {"cis": "trans", "trans": "cis"}
 #: Stereounits turned over together; beyond that a compound has more diastereomers than are worth showing.
 _MOST_TURNED = 3
 _CIS_RING = 7
+_LIGANDS = 4
+_SIDES: tuple[Mark, Mark] = ("cw", "ccw")
 #: Bonds out from a double bond over which its ligands are compared.
 _SKETCHED = 3
 
@@ -32,14 +36,46 @@ def diastereomers(graph: Graph) -> Iterator[tuple[int, Graph]]:
             yield count, other
 
 
-def double_bond_forms(graph: Graph, parent: Graph) -> list[tuple[int, Graph]]:
+def stereoisomers(graph: Graph) -> tuple[str, ...]:
+    """Every stereoisomer of a constitution as canonical SMILES, mirror images apart.
+
+    What is marked already stays. Every carbon that might be a centre is tried both ways; the kernel drops the
+    marks of those that are none.
+    """
+    forms = [graph]
+    for a, b in _open_bonds(graph):
+        forms = [_marked(form, a, b, mark) for form in forms for mark in _OTHER]
+    for centre in _possible_centres(graph):
+        forms = [_with_mark(form, centre, mark) for form in forms for mark in _SIDES]
+    return tuple(sorted({kernel().smiles(write_smiles(form)) for form in forms}))
+
+
+def _possible_centres(graph: Graph) -> list[int]:
+    return [
+        i
+        for i, near in enumerate(graph.bonds)
+        if graph.symbols[i] == "C"
+        and not graph.marks[i]
+        and len(near) + graph.hydrogens[i] == _LIGANDS
+        and graph.hydrogens[i] <= 1
+    ]
+
+
+def _with_mark(graph: Graph, centre: int, mark: Mark) -> Graph:
+    other = graph.copy()
+    other.marks[centre] = mark
+    return other
+
+
+def double_bond_forms(graph: Graph, parent: Graph | None = None) -> list[tuple[int, Graph]]:
     """The graph with each C=C bond that is new, or has lost its mark, as E and as Z.
 
     Each form comes with its number of Z bonds. Bonds left open in the parent stay open.
     """
     forms = [(0, graph)]
+    left_open = _open_bonds(parent) if parent else []
     for a, b in _open_bonds(graph):
-        if parent.bonds[a].get(b) == 2 and (a, b) in _open_bonds(parent):
+        if (a, b) in left_open:
             continue
         forms = [(z + (mark == "cis"), _marked(form, a, b, mark)) for z, form in forms for mark in _OTHER]
     return forms

@@ -133,6 +133,26 @@ class Graph:
         self.charges[atom] = self.isotopes[atom] = 0
         self._forget(atom)
 
+    def without(self, gone: int) -> Graph:
+        """A graph without one atom, whose bonds must have been cut; atoms after it move up by one."""
+
+        def moved(atom: int) -> int:
+            return atom - (atom > gone)
+
+        other = self.copy()
+        for column in (
+            other.symbols,
+            other.hydrogens,
+            other.charges,
+            other.isotopes,
+            other.marks,
+            other.bonds,
+        ):
+            del column[gone]
+        other.bonds = [{moved(i): order for i, order in near.items()} for near in other.bonds]
+        other.planar = [(moved(a), moved(x), moved(b), moved(y), m) for a, x, b, y, m in other.planar]
+        return other
+
     def piece(self, start: int, without: int = -1) -> set[int]:
         """Atoms connected to ``start``, not passing through ``without``."""
         found, queue = {start}, [start]

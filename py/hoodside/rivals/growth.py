@@ -33,6 +33,8 @@ _MOST_MOVES = 3
 #: Structures less likely than this are no stepping stones.
 _STONE = 2.5
 _SLICE = 25
+#: Penalty from which an enumerated structure is no longer called sensible.
+SENSIBLE = 4.0
 
 
 @dataclass(slots=True)
@@ -61,11 +63,24 @@ class _Form:
     tautomer: bool = False
 
 
+#: Proposes the single moves from a structure.
+Moves = Callable[[Site], list[Step]]
+
+
 class Growth:
     """One search. ``keep`` says whether a structure may be a rival, by its SMILES."""
 
-    def __init__(self, intended: Structure, limit: int, budget: int, keep: Callable[[str], bool]) -> None:
-        self._limit, self._budget, self._keep = limit, budget, keep
+    def __init__(
+        self,
+        intended: Structure,
+        limit: int,
+        budget: int,
+        keep: Callable[[str], bool],
+        moves: Moves = steps_from,
+    ) -> None:
+        self._limit, self._keep, self._moves = limit, keep, moves
+        #: How many structures may be looked at; ``run`` goes on from where it stopped when this is raised.
+        self.budget = budget
         self._site = Site(intended)
         self._allowed = doubts(intended.source)
         self._seen = {name_of(intended.smiles), flat(intended.smiles), tautomer_key(intended.smiles)}
@@ -78,9 +93,10 @@ class Growth:
 
     def run(self) -> Iterator[list[Rival]]:
         """Rivals in slices, roughly best first."""
-        self._start()
-        told = 0
-        while self._heap and self.looked_at < self._budget and not self._settled():
+        if not self._count:
+            self._start()
+        told = len(self.found)
+        while self._heap and self.looked_at < self.budget and not self._settled():
             self._take(*heapq.heappop(self._heap))
             if len(self.found) >= told + _SLICE:
                 yield [rival for _, rival in self.found[told:]]
@@ -107,7 +123,7 @@ class Growth:
         heapq.heappush(self._heap, (cost, self._count, what))
 
     def _open(self, site: Site, cost: float, how: tuple[str, ...]) -> None:
-        for step in steps_from(site):
+        for step in self._moves(site):
             self._push(cost + step.cost, _Leap(step, how))
 
     def _take(self, cost: float, _number: int, what: _Stone | _Leap | _Form) -> None:
@@ -124,7 +140,7 @@ class Growth:
             return
         how = (*leap.how, describe(leap.step))
         for cis, form in double_bond_forms(graph, leap.step.site.graph):
-            made = _Form(write_smiles(form), how, bool(cis), leap.step.rule.where == "tautomer")
+            made = _Form(write_smiles(form), how, bool(cis), leap.step.tautomer)
             if cis:
                 self._push(cost + CIS * cis, made)
             else:
@@ -143,15 +159,30 @@ class Growth:
             return
         self._seen |= {name, key}
         doubt = penalty(name, self._allowed)
-        if doubt >= NEVER or not self._keep(name):
+        if doubt >= NEVER:
             return
-        total = cost + doubt
-        self.found.append((total, Rival(name, form.how, len(form.how), plausibility(total))))
+        if self._keep(name):
+            self._record(cost + doubt, Rival(name, form.how, len(form.how), plausibility(cost + doubt)))
+        if not form.final and len(form.how) < _MOST_MOVES and doubt < _STONE:
+            self._push(cost + AGAIN + _LEAST, _Stone(name, form.how))
+
+    def _record(self, total: float, rival: Rival) -> None:
+        self.found.append((total, rival))
         heapq.heappush(self._dearest, -total)
         if len(self._dearest) > self._limit:
             heapq.heappop(self._dearest)
-        if not form.final and len(form.how) < _MOST_MOVES and doubt < _STONE:
-            self._push(cost + AGAIN + _LEAST, _Stone(name, form.how))
+
+    def add(self, smiles: str, cost: float, how: str) -> float | None:
+        """Put up a structure from elsewhere unless it is known; what speaks against it, None when known."""
+        name = name_of(smiles)
+        key = tautomer_key(name)
+        if name in self._seen or (key and key in self._seen):
+            return None
+        doubt = penalty(name, self._allowed)
+        self._seen |= {name, key}
+        if doubt < SENSIBLE and self._keep(name):
+            self._record(cost + doubt, Rival(name, (how,), 0, plausibility(cost + doubt)))
+        return doubt
 
 
 def plausibility(cost: float) -> float:

@@ -5,13 +5,31 @@ from __future__ import annotations
 import time
 from collections.abc import Callable, Iterator
 
-from hoodside.molecule.structure import Structure
+from hoodside.errors import FormulaError, StructureError
+from hoodside.molecule.structure import Structure, read_structure
+from hoodside.predict.formula import formula_of, unsaturation
 from hoodside.readings.model import Readings
-from hoodside.rivals.growth import Growth
+from hoodside.rivals.configurations import double_bond_forms
+from hoodside.rivals.early import early_test
+from hoodside.rivals.enumeration import enumerate_isomers
+from hoodside.rivals.graph import graph_of
+from hoodside.rivals.growth import SENSIBLE, Growth
 from hoodside.rivals.model import Rival, RivalsFound
+from hoodside.rivals.steps import steps_from
+from hoodside.rivals.swaps import moves_and_swaps
+from hoodside.rivals.writer import write_smiles
 
 #: Structures looked at before the search gives up filling its list.
-STEPS = 4000
+STEPS = 3_000
+#: The same where all isomers are enumerated anyway: moves then serve to rank them.
+_STEPS_WHEN_SMALL = 500
+#: Formulas that are enumerated: heavy atoms, degrees of unsaturation, and isomers at the most.
+_SMALL_HEAVY = 8
+_SMALL_UNSATURATION = 4
+_SMALL_COUNT = 1_000
+#: Cost of an isomer that no short series of moves reaches.
+_ENUMERATED = 4.0
+_SLICE = 25
 
 
 def find_rivals(
@@ -34,18 +52,102 @@ def find_rivals(
         steps: how many structures to look at in all.
         on_progress: called with every slice found; a true answer stops the search.
     """
+    search = _Search(structure, formula_known, readings, limit, steps)
     began = time.monotonic()
-    growth = Growth(structure, limit, steps, lambda smiles: True)
-    stopped = False
-    for batch in growth.run():
+    for batch in search.run():
         asked = bool(on_progress and on_progress(batch))
-        late = budget_s is not None and time.monotonic() - began > budget_s
-        if asked or late:
-            stopped = True
-            break
-    return RivalsFound(tuple(growth.best()), False, "Stopped early." if stopped else "")
+        if asked or (budget_s is not None and time.monotonic() - began > budget_s):
+            return RivalsFound(tuple(search.growth.best()), False, "Stopped early; there may be more.")
+    return RivalsFound(tuple(search.growth.best()), search.complete, search.note)
 
 
-def iterate_rivals(structure: Structure, *, limit: int = 200, steps: int = STEPS) -> Iterator[list[Rival]]:
+def iterate_rivals(
+    structure: Structure,
+    *,
+    formula_known: bool = True,
+    readings: Readings | None = None,
+    limit: int = 200,
+    steps: int = STEPS,
+) -> Iterator[list[Rival]]:
     """Slices of rivals as they are found, for a caller that shows progress and may stop at any slice."""
-    yield from Growth(structure, limit, steps, lambda smiles: True).run()
+    yield from _Search(structure, formula_known, readings, limit, steps).run()
+
+
+class _Search:
+    """Growth by moves, then, where the formula is small, whatever isomers are left."""
+
+    def __init__(
+        self, structure: Structure, formula_known: bool, readings: Readings | None, limit: int, steps: int
+    ) -> None:
+        self._structure, self._limit = structure, limit
+        self._small = formula_known and _is_small(structure)
+        self._steps = steps
+        budget = min(steps, _STEPS_WHEN_SMALL) if self._small else steps
+        keep = early_test(readings) if readings else lambda smiles: True
+        moves = steps_from if formula_known else moves_and_swaps
+        self.growth = Growth(structure, limit, budget, keep, moves)
+        self.complete = False
+        self.note = ""
+
+    def run(self) -> Iterator[list[Rival]]:
+        """Rivals in slices."""
+        yield from self.growth.run()
+        if self._small:
+            isomers = self._isomers()
+            if isomers is not None:
+                yield from self._add_all(isomers)
+            else:
+                self.growth.budget = self._steps
+                yield from self.growth.run()
+
+    def _isomers(self) -> tuple[str, ...] | None:
+        """All isomers, None when there are too many."""
+        try:
+            found = enumerate_isomers(formula_of(self._structure), sensible=True, most=_SMALL_COUNT)
+        except FormulaError:
+            return None
+        return found.smiles if found.complete and len(found.smiles) <= _SMALL_COUNT else None
+
+    def _add_all(self, isomers: tuple[str, ...]) -> Iterator[list[Rival]]:
+        formula = formula_of(self._structure).text
+        told = len(self.growth.found)
+        for smiles in isomers:
+            self._add(smiles, f"found among all isomers of {formula}")
+            if len(self.growth.found) >= told + _SLICE:
+                yield [rival for _, rival in self.growth.found[told:]]
+                told = len(self.growth.found)
+        yield [rival for _, rival in self.growth.found[told:]]
+        self._conclude(formula)
+
+    def _add(self, smiles: str, how: str) -> None:
+        flat = graph_of(read_structure(smiles))
+        for cis, form in double_bond_forms(flat):
+            try:
+                doubt = self.growth.add(write_smiles(form), _ENUMERATED + cis / 2, how)
+            except StructureError:
+                continue
+            if doubt is not None and doubt >= SENSIBLE:
+                return
+
+    def _conclude(self, formula: str) -> None:
+        sensible = len(self.growth.found)
+        self.complete = sensible <= self._limit
+        if self.complete:
+            self.note = (
+                f"Complete: every sensible isomer of {formula} of the usual valences is here, E and Z apart; "
+                "other relative configurations are left open unless marked."
+            )
+        else:
+            self.note = (
+                f"{formula} has {sensible} sensible isomers; the {self._limit} most plausible are kept."
+            )
+
+
+def _is_small(structure: Structure) -> bool:
+    heavy = len(structure.atoms)
+    return (
+        heavy <= _SMALL_HEAVY
+        and not structure.charge
+        and (unsaturation(formula_of(structure)) or 0) <= _SMALL_UNSATURATION
+        and all(step >= 0 for step in structure.distances_from(0))
+    )

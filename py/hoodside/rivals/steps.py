@@ -17,7 +17,7 @@ from __future__ import annotations
 
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass
-from functools import cache
+from functools import cache, partial
 
 from hoodside.molecule.kernel import Matches
 from hoodside.rivals.graph import Graph
@@ -32,23 +32,18 @@ _HYDROGEN = -1
 
 @dataclass(slots=True)
 class Step:
-    """One move that may be made from ``site``; ``atoms`` as its op lists them."""
+    """One move that may be made from ``site``.
+
+    ``make`` gives the isomer, not yet checked for sense or novelty; None when the move cannot be made after
+    all. ``{group}`` in ``words`` stands for what is at the second of ``atoms`` when cut from the first.
+    """
 
     cost: float
-    rule: Rule
+    words: str
     site: Site
     atoms: tuple[int, ...]
-
-    def make(self) -> Graph | None:
-        """The isomer, not yet checked for sense or novelty; None when the move cannot be made."""
-        return _OPS[self.rule.op][1](self.site, self.rule, self.atoms)
-
-    @property
-    def group(self) -> tuple[int, int] | None:
-        """Start atom of the group that is moved, and the neighbour it is cut from."""
-        if self.rule.op in ("shift", "exchange"):
-            return self.atoms[1], self.atoms[0]
-        return (self.atoms[1], self.atoms[0]) if self.rule.op == "matrix" else None
+    make: Callable[[], Graph | None]
+    tautomer: bool = False
 
 
 def steps_from(site: Site) -> list[Step]:
@@ -63,9 +58,14 @@ def steps_from(site: Site) -> list[Step]:
                 kind = site.kind_of(atoms)
                 if kind not in known:
                     known.add(kind)
-                    found.append(Step(cost, rule, site, atoms))
+                    found.append(_step(site, rule, cost, atoms))
     found.sort(key=lambda step: step.cost)
     return found
+
+
+def _step(site: Site, rule: Rule, cost: float, atoms: tuple[int, ...]) -> Step:
+    make = partial(_OPS[rule.op][1], site, rule, atoms)
+    return Step(cost, rule.words, site, atoms, make, rule.where == "tautomer")
 
 
 @cache

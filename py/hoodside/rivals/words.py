@@ -12,9 +12,10 @@ _ORDERS = {1: "", 2: "=", 3: "#"}
 
 def describe(step: Step) -> str:
     """The move, with what was moved put in."""
-    if step.group is None or "{group}" not in step.rule.words:
-        return step.rule.words
-    return step.rule.words.replace("{group}", group_name(step.site.graph, *step.group))
+    if "{group}" not in step.words:
+        return step.words
+    old, group = step.atoms[:2]
+    return step.words.replace("{group}", group_name(step.site.graph, group, old))
 
 
 def group_name(graph: Graph, group: int, old: int) -> str:
