@@ -18,6 +18,17 @@ export interface Candidate { id: string; source: string; name: string; smiles: s
 /** What the case list shows without waking the chemistry. */
 export interface Summary { verdict: Verdict; text: string; lead: string }
 
+export type AmountKind = 'ratio' | 'conversion' | 'yield' | 'purity' | 'solvent';
+/** A signal that stands for a portion: a 1H row, its integral where it differs from the row's, and the H of the portion in it. */
+export interface PortionSignal { row: string; integral?: string; protons: string }
+/** A species or weighed portion of a question about amounts; masses in mg, purity in per cent, molar mass in g/mol. */
+export interface Portion {
+  id: string; name: string; structure: string; formula: string; molar: string; signals: PortionSignal[];
+  mass: string; u: string; purity: string;
+}
+/** Questions about amounts; `percent` is the standard uncertainty of integrals, `portions` by the part they play. */
+export interface Amounts { kind: AmountKind; percent: string; stoichiometry: string; portions: Record<string, Portion[]> }
+
 export interface CaseDoc {
   id: string;
   kind: 'hoodside-case';
@@ -48,6 +59,7 @@ export interface CaseDoc {
   structures: Candidate[];
   intended: string;
   photos: PhotoRef[];
+  amounts?: Amounts;
   last: Summary | null;
 }
 

@@ -7,6 +7,7 @@ import { caseId, path } from '../state/route.js';
 import { CaseFrame } from './case/frame.js';
 import { CaseList } from './cases/list.js';
 import { Notices } from './cases/notices.js';
+import { Amounts } from './amounts/amounts.js';
 import { Record } from './record/record.js';
 
 function Screen() {
@@ -14,6 +15,7 @@ function Screen() {
   const doc = current.value;
   if (!caseId.value) return html`<${CaseList} />`;
   if (!doc) return html`<${Missing} />`;
+  if (path.value[2] === 'amounts') return html`<${Amounts} doc=${doc} />`;
   return path.value[2] === 'record' ? html`<${Record} doc=${doc} />` : html`<${CaseFrame} doc=${doc} key=${doc.id} />`;
 }
 

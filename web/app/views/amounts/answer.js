@@ -1,0 +1,47 @@
+import { html } from 'htm/preact';
+import { Section } from '../../components/parts.js';
+import { fixed } from '../../words/numbers.js';
+
+/** @typedef {import('./types').Figure} Figure */
+/** @typedef {import('./types').AmountAnswer} AmountAnswer */
+
+/** Inputs that bring less of the variance than this are not worth a line. */
+const LEAST_SHARE = 0.02;
+const MOST_DIGITS = 6;
+
+/** Decimals that show an uncertainty to two figures. @param {number} u */
+function digitsFor(u) {
+  if (!(u > 0)) return 2;
+  return Math.min(MOST_DIGITS, Math.max(0, 1 - Math.floor(Math.log10(u))));
+}
+
+/** "92.4 ± 1.3" @param {Figure} figure */
+export const figureWords = ({ value, u }) => `${fixed(value, digitsFor(u))} ± ${fixed(u, digitsFor(u))}`;
+
+/** One figure large, with its 95 % and what it rests on. @param {{ name: string, figure: Figure, unit: string }} props */
+function Main({ name, figure, unit }) {
+  const shares = Object.entries(figure.shares).filter(([, share]) => share >= LEAST_SHARE).sort((a, b) => b[1] - a[1]);
+  return html`<div class="figure-main"><span>${name}</span><b>${figureWords(figure)} ${unit}</b>
+    <p class="whisper">± is one standard uncertainty; within ${fixed(figure.expanded, digitsFor(figure.u))} in about 95 of 100.${shares.length > 0 && ` It comes from
+      ${shares.map(([what, share]) => `${what} ${Math.round(100 * share)} %`).join(', ')}.`}</p></div>`;
+}
+
+/** More than there can be, beyond its own uncertainty. @param {Figure | undefined} figure */
+const tooMuch = (figure) => figure && figure.value - figure.expanded > 100;
+
+/** A figure for each species. @param {{ title: string, figures: Record<string, Figure> }} props */
+const Each = ({ title, figures }) => html`<${Section} title=${title}><dl class="facts-table">${Object.entries(figures).map(([name, figure]) => html`<div key=${name}>
+  <dt>${name}</dt><dd>${figureWords(figure)} %</dd></div>`)}</dl><//>`;
+
+/** The figures asked for, with uncertainty and assumptions. @param {{ answer: AmountAnswer }} props */
+export const Answer = ({ answer }) => html`<div class="amount-answer" aria-live="polite">
+  ${answer.ratio && html`<${Main} name="ratio, first to second" figure=${answer.ratio} unit=": 1" />`}
+  ${answer.conversion_percent && html`<${Main} name="conversion" figure=${answer.conversion_percent} unit="%" />`}
+  ${answer.yield_percent && html`<${Main} name="yield" figure=${answer.yield_percent} unit="%" />`}
+  ${answer.purity_percent && html`<${Main} name="purity by mass" figure=${answer.purity_percent} unit="%" />`}
+  ${(tooMuch(answer.yield_percent) || tooMuch(answer.purity_percent)) && html`<p class="trouble" role="alert">More than 100 %.
+    <span>A signal holds more than it was taken for, a number of H or a mass is wrong, or something else was weighed with it.</span></p>`}
+  ${answer.mole_percent && html`<${Each} title="Mole per cent" figures=${answer.mole_percent} />`}
+  ${answer.mass_percent && html`<${Each} title="Mass per cent" figures=${answer.mass_percent} />`}
+  <${Section} title="This holds if"><ul class="assumptions">${answer.assumptions.map((line) => html`<li key=${line}>${line}</li>`)}</ul><//>
+</div>`;
