@@ -86,16 +86,17 @@ export function makeBridge(RDKit) {
     }
   };
 
-  /** Only the newer perception reads double-bond marks from a JSON graph (and drops those that no longer hold).
-   * @param {string} source */
-  const fromGraph = (source) => {
+  /** Only the newer perception reads double-bond marks from a JSON graph (and drops those that no longer hold),
+   * and only under it are they told. @template T @param {() => T} act @returns {T} */
+  const withNewPerception = (act) => {
     RDKit.use_legacy_stereo_perception(false);
     try {
-      return RDKit.get_mol(source, GRAPH_OPTIONS);
+      return act();
     } finally {
       RDKit.use_legacy_stereo_perception(true);
     }
   };
+  const fromGraph = (/** @type {string} */ source) => withNewPerception(() => RDKit.get_mol(source, GRAPH_OPTIONS));
   const isGraph = (/** @type {string} */ source) => source.trimStart().startsWith('{');
   const parse = (/** @type {string} */ source) => (isGraph(source) ? fromGraph(source) : RDKit.get_mol(source));
   const molecule = (/** @type {string} */ source) => molecules.obtain(source, () => listening(() => parse(source)));
@@ -113,10 +114,11 @@ export function makeBridge(RDKit) {
    * @param {Mol} mol @param {string} source @returns {Mol} */
   const named = (mol, source) => (isGraph(source) ? molecule(mol.get_smiles())?.handle : mol);
   const inchi = (/** @type {Mol} */ mol, /** @type {string} */ source) => named(mol, source).get_inchi();
+  const tags = (/** @type {Mol} */ mol) => onCopy(mol, (copy) => copy.get_stereo_tags());
   /** @type {Record<string, (mol: Mol, source: string) => string>} */
   const answers = {
     graph: (mol) => mol.get_json(),
-    stereo: (mol) => onCopy(mol, (copy) => copy.get_stereo_tags()),
+    stereo: (mol, source) => (isGraph(source) ? withNewPerception(() => tags(mol)) : tags(mol)),
     smiles: (mol, source) => named(mol, source).get_smiles(),
     inchi,
     inchikey: (mol, source) => RDKit.get_inchikey_for_inchi(inchi(mol, source)),
