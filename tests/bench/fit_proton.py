@@ -25,15 +25,20 @@ from scipy.stats import t as student  # noqa: E402
 from bench.proton_cases import Compound, Row, assigned_rows, load_compounds  # noqa: E402
 from bench.proton_matching import match  # noqa: E402
 from bench.proton_ridge import fit, trust_of  # noqa: E402
-from hoodside.predict.learned import LearnedTable  # noqa: E402
+from hoodside.predict.learned import LearnedTable, in_place_of  # noqa: E402
 from hoodside.predict.proton.correction import DEGREES_OF_FREEDOM, USUAL_HALF_SPLIT  # noqa: E402
+from hoodside.predict.proton.predict import pairs_of, refinements  # noqa: E402
 
 FACTS = HERE.parents[2] / "py" / "hoodside" / "facts"
 SOURCE = "fit to tests/cases and the atom-mapped tables"
 #: ppm: weights below this move no prediction that anyone could see.
-LEAST = 0.005
+LEAST = 0.008
+#: ... unless the feature was seen so often that its absence would look like ignorance.
+OFTEN = 5
 #: Cases that the overall error scale counts for in a class.
 SCALE_PRIOR = 20
+#: Share to hold: a point above 90 %, for what a finite sample has not shown yet.
+HELD = 0.91
 EXAMINED = ("published", "reactions")
 SEED = 20261201
 FOLDS, ROUNDS = 5, 3
@@ -43,7 +48,7 @@ PRIORS = {
     "e0": 0.0002, "e1": 0.0033, "e2": 0.0070, "e3": 0.0043, "e4": 0.0014, "s1": 0.0012, "s2": 0.0006,
     "s3": 0.00003, "s4": 0.0003, "s5": 0.0003, "t": 0.0010, "a": 0.0012, "b": 0.0025,
     "p": 0.0013, "q": 0.0004, "o": 0.0004, "c": 0.0011, "u": 0.0027, "w": 0.0010, "x": 0.0001,
-    "y": 0.0003, "z": 0.0012, "k": 0.0010, "v": 0.0015,
+    "g": 0.0040, "y": 0.0003, "z": 0.0012, "k": 0.0010, "v": 0.0015,
 }  # fmt: skip
 SPLIT_PRIORS = {
     "e0": 0.001, "e1": 0.004, "e2": 0.004, "e3": 0.004, "a": 0.003, "b": 0.001, "k": 0.002, "s2": 0.0005,
@@ -68,14 +73,9 @@ def empty() -> Model:
 
 def predict(model: Model, item: Compound) -> np.ndarray:
     """Shift of each group, ppm."""
-    found = item.scheme.copy()
-    for i, site in enumerate(item.sites):
-        if site.exchange is None:
-            found[i] += model.mean.correct(site.features).delta
-            if site.twin is not None:
-                half = max(USUAL_HALF_SPLIT + model.split.correct(site.features).delta, 0.0)
-                found[i] += -half if site.twin else half
-    return found
+    with in_place_of({"proton_learned": model.mean, "proton_splits": model.split}):
+        moved = [0.0 if r is None else r.delta for r in refinements(item.sites)]
+    return item.scheme + np.array(moved)
 
 
 def train(compounds: Sequence[Compound], fixed: Sequence[Row]) -> Model:
@@ -101,7 +101,7 @@ def train(compounds: Sequence[Compound], fixed: Sequence[Row]) -> Model:
                 rows.append(site.features)
                 target.append(value - site.estimate.ppm)
                 noise.append(NOISE + width**2 / 12)
-            for i, j in item.pairs():
+            for i, j in pairs_of(item.sites):
                 if i in seen and j in seen:
                     split_rows.append(item.sites[i].features)
                     split_target.append(abs(seen[i] - seen[j]) / 2 - USUAL_HALF_SPLIT)
@@ -185,7 +185,7 @@ def write_weights(table: LearnedTable, path: Path) -> None:
         out.writerows([f"prior:{k}", v, 0, SOURCE, "fit"] for k, v in sorted(table.priors.items()))
         out.writerow(["noise", table.noise, 0, SOURCE, "fit"])
         for name, (weight, cases) in sorted(table.weights.items()):
-            if abs(weight) >= LEAST or cases > 2:
+            if abs(weight) >= LEAST or cases > OFTEN:
                 out.writerow([name, f"{weight:.4f}", cases, SOURCE, "fit"])
 
 
@@ -219,7 +219,7 @@ def write_scales(errors: Sequence[Error], path: Path) -> None:
 
 def scale_of(ratios: Sequence[float]) -> float:
     """Scale of the Student t whose central 90 % holds 90 % of the ratios."""
-    return float(np.quantile(ratios, 0.9) / student.ppf(0.95, DEGREES_OF_FREEDOM))
+    return float(np.quantile(ratios, HELD) / student.ppf(0.95, DEGREES_OF_FREEDOM))
 
 
 def main() -> None:

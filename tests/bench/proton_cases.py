@@ -4,7 +4,6 @@ from __future__ import annotations
 
 import json
 from dataclasses import dataclass
-from itertools import pairwise
 from pathlib import Path
 
 import numpy as np
@@ -39,15 +38,6 @@ class Compound:
     @property
     def scheme(self) -> np.ndarray:
         return np.array([s.estimate.ppm for s in self.sites])
-
-    def pairs(self) -> list[tuple[int, int]]:
-        """Groups that differ only by where they stand: the two H of a CH2, the methyls of a slow rotor."""
-        twins = [i for i, s in enumerate(self.sites) if s.twin is not None]
-        return [(i, j) for i, j in pairwise(twins) if self._paired(i, j)]
-
-    def _paired(self, i: int, j: int) -> bool:
-        one, two = self.sites[i], self.sites[j]
-        return (one.twin, two.twin) == (0, 1) and one.hydrogens.n == two.hydrogens.n
 
     def expected(self, ppm: np.ndarray) -> list[Expected]:
         """The groups as the matching sees them, with the shifts now predicted."""

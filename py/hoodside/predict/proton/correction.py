@@ -30,16 +30,28 @@ class Refinement:
     terms: tuple[Term, ...]
     sd: float  # ppm: scale of a Student t with DEGREES_OF_FREEDOM
 
+    @property
+    def delta(self) -> float:
+        """Sum of the terms, ppm."""
+        return sum(term.value for term in self.terms)
 
-def refine(features: Mapping[str, float], environment: str, twin: int | None) -> Refinement:
-    """The learned correction for one H; ``twin`` is 0 or 1 for one of a pair, else None."""
+
+def refine(features: Mapping[str, float], environment: str) -> Refinement:
+    """The learned correction for one H."""
     found = learned_table("proton_learned").correct(features)
-    terms = [Term(_evidence(found.cases, found.radius), found.delta, _SOURCE)]
-    if twin is not None:
-        half = half_split(features)
-        terms.append(Term("one of a pair", -half if twin else half, _SPLIT_SOURCE))
     scale = _scales().get(environment, _scales()["any"])
-    return Refinement(tuple(terms), scale * float(found.variance**0.5))
+    term = Term(_evidence(found.cases, found.radius), found.delta, _SOURCE)
+    return Refinement((term,), scale * float(found.variance**0.5))
+
+
+def set_apart(first: float, second: float, features: Mapping[str, float]) -> tuple[Term, Term]:
+    """Moves of two H that differ only by where they stand, so that they are as far apart as is usual.
+
+    Args: their shifts so far (ppm), and the features of the first.
+    """
+    half, now = half_split(features), (first - second) / 2
+    move = max(half - abs(now), 0.0) * (-1 if now < 0 else 1)
+    return Term("one of a pair", move, _SPLIT_SOURCE), Term("other of a pair", -move, _SPLIT_SOURCE)
 
 
 def half_split(features: Mapping[str, float]) -> float:

@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
+from itertools import pairwise
 from math import fsum
 
 from hoodside.molecule import Structure
@@ -11,7 +13,7 @@ from hoodside.predict.model import ProtonGroup, Term
 from hoodside.predict.proton.alkene import estimate_alkene
 from hoodside.predict.proton.aromatic import estimate_aromatic
 from hoodside.predict.proton.classes import class_estimates
-from hoodside.predict.proton.correction import refine
+from hoodside.predict.proton.correction import Refinement, refine, set_apart
 from hoodside.predict.proton.estimate import Estimate
 from hoodside.predict.proton.exchangeable import ExchangeRange, exchange_ranges
 from hoodside.predict.proton.features import hydrogen_features
@@ -42,7 +44,29 @@ def predict_protons(structure: Structure, solvent: str = "CDCl3") -> tuple[Proto
         solvent: a name from facts/residual_solvents.csv; unknown solvents count as CDCl3.
     Source: schemes and tables named in the terms of each group.
     """
-    return tuple(_group(site) for site in sites(structure, solvent))
+    found = sites(structure, solvent)
+    return tuple(_group(site, refined) for site, refined in zip(found, refinements(found), strict=True))
+
+
+def refinements(found: Sequence[Site]) -> list[Refinement | None]:
+    """Correction and deviation of every site that does not exchange."""
+    refined = [
+        refine(site.features, site.estimate.environment) if site.exchange is None else None for site in found
+    ]
+    for i, j in pairs_of(found):
+        one, two = refined[i], refined[j]
+        if one is not None and two is not None:
+            shifts = (found[i].estimate.ppm + one.delta, found[j].estimate.ppm + two.delta)
+            moves = set_apart(*shifts, found[i].features)
+            refined[i] = replace(one, terms=(*one.terms, moves[0]))
+            refined[j] = replace(two, terms=(*two.terms, moves[1]))
+    return refined
+
+
+def pairs_of(found: Sequence[Site]) -> list[tuple[int, int]]:
+    """Indices of sites that differ only by where they stand: the H of a CH2, the methyls of a slow rotor."""
+    twins = [i for i, site in enumerate(found) if site.twin is not None]
+    return [(i, j) for i, j in pairwise(twins) if (found[i].twin, found[j].twin) == (0, 1)]
 
 
 def sites(structure: Structure, solvent: str) -> list[Site]:
@@ -80,17 +104,18 @@ def _by_bonding(view: View, atom: int, slot: int) -> list[Estimate]:
     if view.structure.atoms[atom].aromatic:
         return estimate_aromatic(view, atom)
     if view.is_saturated(atom):
-        return estimate_sp3(view, atom)
+        return estimate_sp3(view, atom, slot)
     far = view.alkene_partner(atom)
     return estimate_alkene(view, atom, far, slot) if far is not None else []
 
 
-def _group(site: Site) -> ProtonGroup:
-    return _exchangeable(site.hydrogens, site.exchange) if site.exchange is not None else _fixed(site)
+def _group(site: Site, refined: Refinement | None) -> ProtonGroup:
+    if site.exchange is not None:
+        return _exchangeable(site.hydrogens, site.exchange)
+    return _fixed(site, refined or refine(site.features, site.estimate.environment))
 
 
-def _fixed(site: Site) -> ProtonGroup:
-    refined = refine(site.features, site.estimate.environment, site.twin)
+def _fixed(site: Site, refined: Refinement) -> ProtonGroup:
     terms = (*site.estimate.terms, *refined.terms)
     return ProtonGroup(
         atoms=site.hydrogens.atoms,

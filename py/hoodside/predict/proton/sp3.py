@@ -14,6 +14,7 @@ from itertools import combinations
 
 from hoodside.facts import Row, load_table
 from hoodside.predict.model import Term
+from hoodside.predict.proton.chairs import axial_terms
 from hoodside.predict.proton.environment import sp3_environment
 from hoodside.predict.proton.estimate import Estimate
 from hoodside.predict.proton.schemes import scheme_sd
@@ -26,13 +27,13 @@ _KINDS = {1: "CH", 2: "CH2", 3: "CH3", 4: "CH3"}
 _GAMMA_SOURCE = "Beauchamp & Marquez, J. Chem. Educ. 1997, 74, 1483"
 
 
-def estimate_sp3(view: View, atom: int) -> list[Estimate]:
+def estimate_sp3(view: View, atom: int, slot: int) -> list[Estimate]:
     """Estimates of every set that knows all groups at the carbon; the first set always answers."""
-    found = [_by_set(view, atom, scheme) for scheme in _SETS]
+    found = [_by_set(view, atom, slot, scheme) for scheme in _SETS]
     return [e for e in found if e is not None]
 
 
-def _by_set(view: View, atom: int, scheme: str) -> Estimate | None:
+def _by_set(view: View, atom: int, slot: int, scheme: str) -> Estimate | None:
     name, column = _SETS[scheme]
     kind = _KINDS[view.structure.atoms[atom].hydrogens]
     place = view.places.get(atom)
@@ -48,6 +49,7 @@ def _by_set(view: View, atom: int, scheme: str) -> Estimate | None:
     terms += _beta_damping(view, atom, kind, terms)
     terms += [Term(f"gamma {g.key}", g.gamma, _GAMMA_SOURCE) for g in gamma if g.gamma]
     terms += _damping(name, kind, view, atom, alpha)
+    terms += axial_terms(view, atom, slot)
     label = scheme if place is None else f"{scheme}, ring"
     return Estimate(label, sp3_environment(view, atom), tuple(terms), scheme_sd(label))
 

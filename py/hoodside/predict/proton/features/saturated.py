@@ -4,10 +4,14 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 
+from hoodside.predict.proton.chairs import axial_share
 from hoodside.predict.proton.faces import ring_face
 from hoodside.predict.proton.features.near import beyond, on_alkene, on_ring
 from hoodside.predict.proton.features.shells import atom_kind
 from hoodside.predict.proton.view import View
+
+#: Share of chairs from which an H counts as axial or equatorial.
+_CLEAR = 0.75
 
 
 def saturated(view: View, atom: int) -> Iterator[str]:
@@ -62,6 +66,7 @@ def faces(view: View, atom: int, slot: int) -> Iterator[str]:
         own = ring_face(structure, ring, atom, -1 - slot)
         if own is None:
             continue
+        yield from _axial(view, ring, atom, slot)
         here = ring.index(atom)
         for place, member in enumerate(ring):
             steps = min(abs(place - here), len(ring) - abs(place - here))
@@ -72,3 +77,15 @@ def faces(view: View, atom: int, slot: int) -> Iterator[str]:
                     group = view.substituent(member, near)
                     yield f"w{count}r{len(ring)}{steps}{side} {group.kind}"
                     yield f"w{count}r{len(ring)}{steps}{side}"
+
+
+def _axial(view: View, ring: tuple[int, ...], atom: int, slot: int) -> Iterator[str]:
+    """Whether the H is mostly axial, by itself and with what its carbon carries."""
+    share = axial_share(view, ring, atom, slot)
+    if share is None or 1 - _CLEAR < share < _CLEAR:
+        return
+    count = view.structure.atoms[atom].hydrogens
+    side = "axial" if share > _CLEAR else "equatorial"
+    kinds = sorted(view.substituent(atom, n).kind for n in view.structure.neighbours[atom] if n not in ring)
+    yield f"g{count} {side}"
+    yield f"g{count} {side} {'+'.join(kinds)}"
