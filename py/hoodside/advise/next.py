@@ -28,6 +28,12 @@ _LEAST_DB = 3.0
 _MOST_ADVICE = 8
 #: More weight than this makes no difference to a decision, decibans.
 _ENOUGH_DB = 30.0
+#: What an accurate mass tells from analogues of another formula, decibans (5 ppm against 0.1 u).
+_COMPOSITION_DB = 20.0
+_UNKNOWN = (
+    "Nothing measured so far fixes the formula: analogues with O, NH, S or CH₂ exchanged, or another halogen, "
+    "stay open."
+)
 #: Minutes at which effort halves the worth of a measurement.
 _HALF_WORTH = 90.0
 
@@ -51,7 +57,7 @@ def advise(readings: Readings, standing: Sequence[Standing]) -> list[Advice]:
     kept = _distinct(standing)[:_MOST_STANDING]
     pairs = list(combinations(kept, 2))
     if not pairs:
-        return []
+        return _composition(readings, []) if kept else []
     mirrored = [p for p in pairs if mirror_images(p[0].expected.structure, p[1].expected.structure)]
     pairs = [p for p in pairs if p not in mirrored]
     structures = [s.expected.structure for s in kept]
@@ -63,7 +69,7 @@ def advise(readings: Readings, standing: Sequence[Standing]) -> list[Advice]:
     ]
     found = [advice for offer in offers if pairs and (advice := _advice(offer, pairs)) is not None]
     found.sort(key=lambda a: -_worth(a))
-    return [*_chiral(mirrored), *found][:_MOST_ADVICE]
+    return [*_chiral(mirrored), *_composition(readings, found), *found][:_MOST_ADVICE]
 
 
 def _distinct(standing: Sequence[Standing]) -> list[Standing]:
@@ -110,6 +116,14 @@ def _stake(a: Standing, b: Standing) -> float:
 
 def _worth(advice: Advice) -> float:
     return min(advice.expected_db, _ENOUGH_DB) / (1 + advice.effort.minutes / _HALF_WORTH)
+
+
+def _composition(readings: Readings, found: Sequence[Advice]) -> list[Advice]:
+    """An accurate mass, when nothing measured fixes the composition and nobody has asked for a mass yet."""
+    measured = readings.formula or readings.hrms or readings.analysis or readings.ms
+    if measured or not (readings.h1 or readings.c13) or any(a.key in ("hrms", "ms") for a in found):
+        return []
+    return [Advice("hrms", efforts()["hrms"].measure, _UNKNOWN, (), _COMPOSITION_DB, efforts()["hrms"])]
 
 
 def _chiral(pairs: Sequence[tuple[Standing, Standing]]) -> list[Advice]:
