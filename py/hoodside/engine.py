@@ -26,6 +26,7 @@ METHODS: dict[str, str] = {
     "check": "checking:check",
     "predict": "prediction:predict",
     "spins": "multiplets:spins",
+    "fit": "multiplets:fit",
     "trace": "multiplets:trace",
     "multiplet": "multiplets:multiplet",
     "partners": "multiplets:partners",

@@ -34,6 +34,11 @@ def spins(**system: Any) -> dict[str, Any]:
     return spins_from_json(system)
 
 
+def fit(**observed: Any) -> dict[str, Any]:
+    """Shifts and J of a spin system fitted to observed lines; see ``predict.spins.contract``."""
+    return fit_from_json(observed)
+
+
 def trace(
     smiles: str,
     solvent: str = USUAL_SOLVENT,

@@ -52,4 +52,4 @@ def _structure(source: str) -> Structure:
 
 def _protons(structure: Structure, solvent: str, mhz: float) -> tuple[ProtonGroup, ...]:
     groups = predict_protons(structure, solvent)
-    return apply_multiplets(groups, predict_couplings(structure, groups), mhz)
+    return apply_multiplets(groups, predict_couplings(structure, groups, solvent), mhz)
