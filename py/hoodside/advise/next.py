@@ -28,7 +28,7 @@ _LEAST_DB = 3.0
 _MOST_ADVICE = 8
 #: More weight than this makes no difference to a decision, decibans.
 _ENOUGH_DB = 30.0
-#: What an accurate mass tells from analogues of another formula, decibans (5 ppm against 0.1 u).
+#: What an accurate mass tells from analogues of another formula, decibans.
 _COMPOSITION_DB = 20.0
 _UNKNOWN = (
     "Nothing measured so far fixes the formula: analogues with O, NH, S or CH₂ exchanged, or another halogen, "
