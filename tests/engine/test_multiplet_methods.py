@@ -62,3 +62,13 @@ def test_a_field_out_of_reach_is_refused() -> None:
     with pytest.raises(InvalidInputError) as caught:
         call("trace", {"smiles": "CCO", "mhz": 5})
     assert caught.value.field == "mhz"
+
+
+def test_an_ab_quartet_is_fitted_back() -> None:
+    """Lines of a known AB system give its shifts and J again (closed form, Pople et al. 1959)."""
+    system = {"mhz": 60, "nuclei": [{"ppm": 7.1}, {"ppm": 7.0}], "j": [[0, 1, 10]]}
+    lines = [{"hz": line["hz"], "height": line["intensity"]} for line in call("spins", dict(system))["lines"]]
+    start = {"mhz": 60, "nuclei": [{"ppm": 7.12}, {"ppm": 6.99}], "j": [[0, 1, 8.5]], "lines": lines}
+    found = call("fit", start)
+    assert found["rms_hz"] < 0.05
+    assert found["system"]["j"][0][2] == pytest.approx(10, abs=0.1)

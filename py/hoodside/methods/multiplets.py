@@ -8,7 +8,7 @@ from hoodside.methods.arguments import integer
 from hoodside.methods.prediction import solvent_of
 from hoodside.methods.structures import structure_of
 from hoodside.predict.spins import envelope
-from hoodside.predict.spins.contract import lines_to_json, spins_from_json
+from hoodside.predict.spins.contract import fit_from_json, lines_to_json, spins_from_json
 from hoodside.predict.spins.model import LineList
 from hoodside.predict.spins.molecule import FIELDS, predict_spectrum
 from hoodside.predict.spins.multiplet_reading import MultipletReading, read_multiplet
