@@ -18,6 +18,9 @@ export interface Candidate { id: string; source: string; name: string; smiles: s
 /** What the case list shows without waking the chemistry. */
 export interface Summary { verdict: Verdict; text: string; lead: string }
 
+/** A look-alike the engine put up: how it was reached, a move each. */
+export interface Rival { smiles: string; how: string[]; distance: number; plausibility: number; formula: string }
+
 export type AmountKind = 'ratio' | 'conversion' | 'yield' | 'purity' | 'solvent';
 /** A signal that stands for a portion: a 1H row, its integral where it differs from the row's, and the H of the portion in it. */
 export interface PortionSignal { row: string; integral?: string; protons: string }
@@ -60,6 +63,8 @@ export interface CaseDoc {
   intended: string;
   photos: PhotoRef[];
   amounts?: Amounts;
+  /** SMILES of look-alikes waved away. */
+  dismissed?: string[];
   last: Summary | null;
 }
 

@@ -1,6 +1,6 @@
 import { html } from 'htm/preact';
 import { useEffect, useState } from 'preact/hooks';
-import { useSeconds } from '../views/cases/whisper.js';
+import { useSeconds } from './use-seconds.js';
 
 /** Work shorter than this is not worth a word, ms. */
 const WHISPER_MS = 300;

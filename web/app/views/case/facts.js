@@ -1,12 +1,13 @@
 import { html } from 'htm/preact';
 import { Formula } from '../../components/chem.js';
+import { useSeconds } from '../../components/use-seconds.js';
 import { engineState } from '../../state/engine.js';
 import { checkingSince, stopCheck } from '../../state/check.js';
 import { offline } from '../../state/offline.js';
 import { address } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { fixed, plural } from '../../words/numbers.js';
-import { useSeconds, Waking } from '../cases/whisper.js';
+import { Waking } from '../cases/whisper.js';
 
 /** @typedef {import('../../types').FormulaFacts} FormulaFacts */
 

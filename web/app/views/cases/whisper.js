@@ -1,17 +1,7 @@
 import { html } from 'htm/preact';
-import { useEffect, useState } from 'preact/hooks';
+import { useSeconds } from '../../components/use-seconds.js';
 import { engineState, wakingSince } from '../../state/engine.js';
 import { offline, offlineProgress } from '../../state/offline.js';
-
-/** Seconds since a moment, counted while the view is shown. @param {number} since */
-export function useSeconds(since) {
-  const [now, setNow] = useState(Date.now());
-  useEffect(() => {
-    const timer = setInterval(() => setNow(Date.now()), 1000);
-    return () => clearInterval(timer);
-  }, [since]);
-  return Math.max(0, Math.round((now - since) / 1000));
-}
 
 export function Waking() {
   const seconds = useSeconds(wakingSince.value);

@@ -19,6 +19,7 @@ export function Structures({ doc }) {
         at=${at} />`)}
     </ul>
     <${CheckTrouble} />
+    ${doc.structures.length > 0 && html`<a class="button" href=${address('case', doc.id, 'structures', 'rivals')}>What else would fit?</a>`}
     <${Section} title="Add a structure">
       <div class="two-up">
         <a class="button primary" href=${address('case', doc.id, 'structures', 'grow')}>Grow one</a>

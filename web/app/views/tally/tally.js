@@ -35,6 +35,7 @@ export function Tally({ doc }) {
     <a class="button" href=${address('case', doc.id, 'tally', 'trace')}>Simulated trace, at any field</a>
     <${Rows} doc=${doc} rows=${rows} at=${at} />
     <${Leftovers} doc=${doc} found=${found} at=${at} />
+    <a class="button" href=${address('case', doc.id, 'structures', 'rivals')}>What else would fit?</a>
     ${wide.value ? html`<${Table} doc=${doc} found=${found} />`
       : html`<a class="button"
         href=${address('case', doc.id, 'tally', 'table')}>Readings against structures, as a table</a>`}

@@ -1,0 +1,97 @@
+import { html } from 'htm/preact';
+import { useEffect, useState } from 'preact/hooks';
+import { Formula, Words } from '../../components/chem.js';
+import { Drawing } from '../../components/drawing.js';
+import { Chips, Section, Trouble } from '../../components/parts.js';
+import { Sheet } from '../../components/sheet.js';
+import { Sign } from '../../components/sign.js';
+import { Working } from '../../components/working.js';
+import { changeWithUndo } from '../../state/cases.js';
+import { newId } from '../../state/document.js';
+import { ask } from '../../state/engine.js';
+import { hunt, huntKey, hunts, stopHunt } from '../../state/rivals.js';
+import { address } from '../../state/route.js';
+import { plural, signed } from '../../words/numbers.js';
+import { nameOf } from '../../words/structures.js';
+import { CaseSign } from '../case/sign.js';
+
+/** @typedef {import('../../types').CaseDoc} CaseDoc */
+/** @typedef {import('../../types').Rival} Rival */
+/** @typedef {import('../../state/rivals.js').Hunt} Hunt */
+/** @typedef {import('../../state/rivals.js').Standing} Standing */
+
+/** Decibans within which a look-alike counts as near: ten times as likely or unlikely. */
+const NEAR_DB = 10;
+const HOW = [{ value: 'allowed', text: 'the readings allow' }, { value: 'all', text: 'all look-alikes' }];
+
+/** Look-alikes of the structure of the verdict: searched, weighed, kept or dismissed. @param {{ doc: CaseDoc }} props */
+export function RivalsSheet({ doc }) {
+  const subject = doc.structures.find(({ id }) => id === doc.intended) ?? doc.structures[0];
+  const smiles = subject?.smiles ?? '';
+  const [which, setWhich] = useState('allowed');
+  const key = smiles ? huntKey(doc, smiles, which === 'allowed') : '';
+  const found = hunts.value[doc.id];
+  const current = found?.key === key ? found : null;
+  useEffect(() => { if (key && hunts.peek()[doc.id]?.key !== key) hunt(doc, smiles, which === 'allowed'); }, [key]);
+  const name = subject ? nameOf(doc, subject.id) : '';
+  return html`<${Sheet} title="What else would fit?" back=${address('case', doc.id, 'structures')} sign=${html`<${CaseSign} doc=${doc} />`} class="rivals-sheet">
+    ${!subject && html`<p class="hint">Put up a structure first; its look-alikes are sought from there.</p>`}
+    ${subject && html`<${Chips} label="Which to show" class="chips-2" optional=${false} value=${which} options=${HOW} onPick=${setWhich} />`}
+    ${current && html`<${Working} since=${current.since} words=${progress(current)} stop=${stopHunt} />
+      <${Trouble} fault=${current.fault} />
+      ${current.stopped && html`<button type="button" class="button" onClick=${() => hunt(doc, smiles, which === 'allowed')}>Stopped. Search again</button>`}
+      <${Found} doc=${doc} name=${name} now=${current} />`}
+  <//>`;
+}
+
+/** How far the search has come. @param {Hunt} now */
+function progress(now) {
+  if (!now.found.length) return 'looking for look-alikes';
+  return `${now.found.filter(({ smiles }) => now.weighed[smiles]).length} of ${now.found.length} weighed`;
+}
+
+/** @param {{ doc: CaseDoc, name: string, now: Hunt }} props */
+function Found({ doc, name, now }) {
+  const gone = new Set([...doc.structures.map(({ smiles }) => smiles), ...(doc.dismissed ?? [])]);
+  const weight = (/** @type {Rival} */ rival) => now.weighed[rival.smiles]?.weight ?? -Infinity;
+  const shown = now.found.filter(({ smiles }) => !gone.has(smiles)).sort((a, b) => weight(b) - weight(a) || b.plausibility - a.plausibility);
+  const { own } = now;
+  const near = own ? shown.filter((rival) => weight(rival) >= own.weight - NEAR_DB).length : 0;
+  const dismissed = doc.dismissed?.length ?? 0;
+  const recall = () => changeWithUndo(doc.id, 'Dismissed ones brought back', (draft) => { draft.dismissed = []; });
+  if (!now.found.length) return now.since || now.fault || now.stopped ? null : html`<p class="lead">The readings leave no look-alike of ${name} standing that a few moves reach.</p>`;
+  return html`<p class="lead" aria-live="polite">${own ? `${nearWords(near)} within ${NEAR_DB} decibans of ${name} (${signed(own.weight)}), or ahead.` : `${plural(shown.length, 'look-alike')} of ${name}.`}</p>
+    ${now.note && html`<p class="hint">${now.note}</p>`}
+    <${Section} title="Look-alikes" aside=${shown.length}>
+      <ul class="rival-list">${shown.map((rival) => html`<${RivalRow} key=${rival.smiles} doc=${doc} rival=${rival} standing=${now.weighed[rival.smiles] ?? null} own=${own} />`)}</ul><//>
+    ${dismissed > 0 && html`<button type="button" class="button" onClick=${recall}>Bring back ${plural(dismissed, 'dismissed one')}</button>`}`;
+}
+
+/** @param {number} near */
+const nearWords = (near) => (near > 1 ? `${near} look-alikes stand` : near ? 'One look-alike stands' : 'No look-alike stands');
+
+/** "7 behind" against the structure itself. @param {Standing} standing @param {Standing} own */
+function distance(standing, own) {
+  const by = Math.round(standing.weight - own.weight);
+  return by === 0 ? 'level with it' : `${Math.abs(by)} ${by > 0 ? 'ahead' : 'behind'}`;
+}
+
+/** One look-alike, dashed: how it was reached, how it stands, keep or dismiss.
+ * @param {{ doc: CaseDoc, rival: Rival, standing: Standing | null, own: Standing | null }} props */
+function RivalRow({ doc, rival, standing, own }) {
+  const how = rival.how.join('; ');
+  const keep = async () => {
+    const entry = await ask('describe', { structure: rival.smiles });
+    changeWithUndo(doc.id, 'Kept as a structure', (draft) => {
+      draft.structures.push({ id: newId(), source: rival.smiles, name: '', smiles: entry.smiles, formula: entry.formula, svg: entry.svg });
+    });
+  };
+  const dismiss = () => changeWithUndo(doc.id, 'Dismissed', (draft) => { draft.dismissed = [...(draft.dismissed ?? []), rival.smiles]; });
+  const other = doc.formula.trim() && rival.formula !== doc.formula.trim();
+  return html`<li class="rival">
+    <${Drawing} structure=${rival.smiles} label="Look-alike: ${how}" width=${150} height=${100} class="drawing-rival" />
+    <div class="rival-words"><b>${standing ? html`<${Sign} verdict=${standing.verdict} size=${20} /> ${signed(standing.weight)}${own && `, ${distance(standing, own)}`}` : 'not weighed yet'}</b>
+      <span><${Words} text=${how} /></span>${other && html`<span><${Formula} text=${rival.formula} /></span>`}</div>
+    <div class="two-up"><button type="button" class="button" onClick=${keep}>Keep</button><button type="button" class="button quiet" onClick=${dismiss}>Dismiss</button></div>
+  </li>`;
+}
