@@ -31,8 +31,8 @@ _ENOUGH_DB = 30.0
 #: What an accurate mass tells from analogues of another formula, decibans.
 _COMPOSITION_DB = 20.0
 _UNKNOWN = (
-    "Nothing measured so far fixes the formula: analogues with O, NH, S or CH₂ exchanged, or another halogen, "
-    "stay open."
+    "Nothing measured so far fixes the formula: analogues with O, NH, S or CH₂ exchanged, or another "
+    "halogen, stay open."
 )
 #: Minutes at which effort halves the worth of a measurement.
 _HALF_WORTH = 90.0

@@ -47,6 +47,11 @@ class Awaited:
     text: str  # "dd, J = 8.2, 1.4 Hz"
     readings: dict[Key, tuple[Splitting, ...]]
 
+    def as_read(self, printed: str) -> str:
+        """The expected pattern in words, as finely read as the printed one where that is possible."""
+        seen = self.readings.get(key_of(printed)) if printed else None
+        return _text(seen) if seen else self.text
+
 
 class Patterns:
     """The patterns of one structure, by the groups that share a signal."""

@@ -97,17 +97,17 @@ def _pattern_text(solution: Solution, k: int, members: tuple[int, ...]) -> str:
     signal, held = solution.signals[k], [solution.groups[m] for m in members]
     where = f"δ {printed(signal)}: printed {signal.pattern}"
     if awaited.kind == "several":
-        return f"{where}; in this structure {len(members)} different sets of H would have to overlap here."
+        return f"{where}; {len(members)} different sets of H of this structure overlap here."
     if awaited.kind == "exchangeable":
         return f"{where}; exchangeable H usually come as one line, often broad."
     note = " from the neighbours of this CH₂" if is_pair(held) else ""
-    return f"{where}; expected {awaited.text}{note}."
+    return f"{where}; expected {awaited.as_read(signal.pattern)}{note}."
 
 
 def _coupling_text(solution: Solution, k: int, members: tuple[int, ...], terms: Terms) -> str:
     signal = solution.signals[k]
     verb = "agrees with" if terms.coupling > 0 else "does not suit"
-    expected = solution.scorer.patterns.awaited(members).text
+    expected = solution.scorer.patterns.awaited(members).as_read(signal.pattern)
     return (
         f"δ {printed(signal)}: J = {', '.join(f'{j:g}' for j in signal.j)} Hz {verb} the expected {expected}."
     )
