@@ -3,8 +3,12 @@
 from __future__ import annotations
 
 from pathlib import Path
+from threading import Thread
 
+from cheroot.wsgi import Server
 from playwright.sync_api import Page
+from werkzeug.exceptions import NotFound
+from werkzeug.middleware.dispatcher import DispatcherMiddleware
 
 from browser.stand import (
     START_ENGINE,
@@ -17,6 +21,7 @@ from browser.stand import (
     start_host,
     wait_until,
 )
+from hoodside_host import create_app
 
 #: Benzene from the IUPAC atomic masses of 12C and 1H: 6 x (12 + 1.00782503).
 BENZENE_MASS = 78.04695
@@ -60,6 +65,22 @@ def test_ready_is_not_said_while_a_file_is_missing(own_host: Host, open_device: 
     assert [state for state, *_ in told] == ["checking", "fetching", "ready"]
     _, present, total = told[1]
     assert present == total - 1
+
+
+def test_app_works_below_a_path_of_a_shared_host(dist: Path, open_device: OpenDevice) -> None:
+    server = Server(("127.0.0.1", 0), DispatcherMiddleware(NotFound(), {"/lab/hoodside": create_app(dist)}))
+    server.prepare()
+    serving = Thread(target=server.serve, daemon=True)
+    serving.start()
+    address = f"http://127.0.0.1:{server.bind_addr[1]}/lab/hoodside/"
+    page = open_device().new_page()
+    page.goto(address)
+    assert page.evaluate(WAIT_UNTIL_KEPT)[-1][0] == "ready"
+    server.stop()
+    serving.join()
+
+    page.goto(address)
+    assert_engine_answers(page)
 
 
 def test_new_version_waits_until_it_is_asked_for(tmp_path: Path, open_device: OpenDevice) -> None:
