@@ -19,6 +19,7 @@ import time
 import tomllib
 import venv
 from collections.abc import Callable, Iterable, Iterator, Sequence
+from contextlib import contextmanager
 from pathlib import Path
 
 ROOT = Path(__file__).resolve().parent
@@ -109,10 +110,10 @@ def build_engine(debug: bool) -> str | None:
     runtime = STAMPS / "runtime"
     if _is_stamped(STAMPS / "runtime-key", key):
         return "unchanged"
-    coming = _new_folder("runtime")
-    _run([_node(), WEB / "tools/build-engine.mjs", coming, *(["--debug"] if debug else [])])
-    _gzip_beside(coming)
-    _swap_in(coming, runtime)
+    with _new_folder("runtime") as coming:
+        _run([_node(), WEB / "tools/build-engine.mjs", coming, *(["--debug"] if debug else [])])
+        _gzip_beside(coming)
+        _swap_in(coming, runtime)
     _stamp(STAMPS / "runtime-key", key)
     return None
 
@@ -123,12 +124,12 @@ def build_app(debug: bool) -> str | None:
     key = _hash_text([_runtime_key(debug), _hash_files([Path(__file__), *_app_sources()])])
     if DIST.exists() and _is_stamped(STAMPS / "dist", key):
         return "unchanged"
-    coming = _new_folder("dist")
-    _lay_out(coming)
-    _run([_node(), WEB / "tools/vendor.mjs", coming / "vendor", coming / "index.html"])
-    _gzip_beside(coming)
-    write_service_worker(coming)
-    _swap_in(coming, DIST)
+    with _new_folder("dist") as coming:
+        _lay_out(coming)
+        _run([_node(), WEB / "tools/vendor.mjs", coming / "vendor", coming / "index.html"])
+        _gzip_beside(coming)
+        write_service_worker(coming)
+        _swap_in(coming, DIST)
     _stamp(STAMPS / "dist", key)
     return _size_note()
 
@@ -295,11 +296,15 @@ def _gzip_beside(folder: Path) -> None:
             packed.write_bytes(gzip.compress(path.read_bytes(), 9, mtime=0))
 
 
-def _new_folder(name: str) -> Path:
-    """A folder that a failed or a second build cannot mistake for its own."""
+@contextmanager
+def _new_folder(name: str) -> Iterator[Path]:
+    """A folder that a second build cannot mistake for its own; gone again unless swapped in."""
     folder = STAMPS / f"{name}-{os.getpid()}"
     shutil.rmtree(folder, ignore_errors=True)
-    return folder
+    try:
+        yield folder
+    finally:
+        shutil.rmtree(folder, ignore_errors=True)
 
 
 def _swap_in(coming: Path, target: Path) -> None:
