@@ -1,4 +1,4 @@
-"""A gloved hand that grows structures: touches atoms and bonds of the drawing and taps chips, counting taps."""
+"""A gloved hand that grows structures: touches atoms and bonds, taps chips, counts its taps."""
 
 from __future__ import annotations
 
@@ -8,7 +8,7 @@ from typing import Any
 
 from playwright.sync_api import Error, Locator, Page, expect
 
-#: Where the atoms stand on the screen, read off the drawing as an eye does: by its letters, else by line ends.
+#: Where the atoms stand on the screen, read off the drawing as an eye does: by letters, else by line ends.
 ATOMS = """() => {
   const drawing = document.querySelector('.grow-drawing svg');
   const marks = document.querySelector('.grow-marks').getScreenCTM();
@@ -20,7 +20,8 @@ ATOMS = """() => {
     const classes = path.getAttribute('class') ?? '';
     const ends = classes.match(/^bond-\\d+ atom-(\\d+) atom-(\\d+)/);
     const letter = classes.match(/^atom-(\\d+)$/);
-    const points = [...path.getAttribute('d').matchAll(/([-\\d.]+)[ ,]+([-\\d.]+)/g)].map((m) => [+m[1], +m[2]]);
+    const pairs = [...path.getAttribute('d').matchAll(/([-\\d.]+)[ ,]+([-\\d.]+)/g)];
+    const points = pairs.map((m) => [+m[1], +m[2]]);
     if (letter) {
       if ((place[letter[1]] ?? []).some(({ sure }) => sure === 3)) continue;
       const box = path.getBBox();
@@ -50,8 +51,8 @@ class Grower:
     def follow(self, plan: str) -> None:
         """Do the steps of a plan, one word each.
 
-        "tile:benzene" begins; "@3" touches atom 3 and "bond:1-2" the bond of atoms 1 and 2 (numbered as they were
-        put in); "join:4" joins the touched atom to atom 4; any other word is the chip to tap.
+        "tile:benzene" begins; "@3" touches atom 3 and "bond:1-2" the bond of atoms 1 and 2 (numbered as they
+        were put in); "join:4" joins the touched atom to atom 4; any other word is the chip to tap.
         """
         for word in plan.split(" | "):
             try:
