@@ -14,6 +14,7 @@ from dataclasses import dataclass, field
 from pathlib import Path
 
 from bench.tables import Figure, print_figures
+from hoodside.molecule.kernel import kernel
 from hoodside.molecule.structure import Structure, read_structure
 from hoodside.rivals import Rival, find_rivals, iterate_rivals
 from hoodside.rivals.names import flat, name_of
@@ -42,12 +43,12 @@ def run(every: int = 1, show_missed: bool = False) -> None:
 
 
 def _measure(intended: Structure, listed: list[str], tally: _Tally) -> None:
-    began = time.perf_counter()
+    began = time.process_time()
     next(iterate_rivals(intended, limit=LIMIT), None)
-    tally.firsts.append(time.perf_counter() - began)
-    began = time.perf_counter()
+    tally.firsts.append(time.process_time() - began)
+    began = time.process_time()
     found = find_rivals(intended, limit=LIMIT).rivals
-    tally.seconds.append(time.perf_counter() - began)
+    tally.seconds.append(time.process_time() - began)
     tally.sizes.append(len(found))
     for smiles in listed:
         rank = rank_of(smiles, found)
@@ -67,9 +68,14 @@ def _print(tally: _Tally) -> None:
                 Figure(f"... among the best {n}", 100 * sum(r < n for r in hits) / total, "%")
                 for n in _DEPTHS
             ),
-            Figure("time per compound, mean", sum(tally.seconds) / len(tally.seconds), "s", most=1),
-            Figure("time per compound, slowest", max(tally.seconds), "s"),
-            Figure("first slice, mean", 1000 * sum(tally.firsts) / len(tally.firsts), "ms", most=60),
+            Figure("CPU time per compound, mean", sum(tally.seconds) / len(tally.seconds), "s", most=1),
+            Figure("CPU time per compound, slowest", max(tally.seconds), "s"),
+            Figure(
+                "CPU time to the first slice, mean",
+                1000 * sum(tally.firsts) / len(tally.firsts),
+                "ms",
+                most=60,
+            ),
             Figure("rivals put up, mean", sum(tally.sizes) / len(tally.sizes)),
         ]
     )
@@ -82,7 +88,10 @@ def rank_of(listed: str, found: tuple[Rival, ...]) -> int | None:
     for rank, rival in enumerate(found):
         if name == rival.smiles or (is_open and name == flat(rival.smiles)):
             return rank
-    return None
+    if "[nH]" not in name:
+        return None
+    key = kernel().inchikey(name)  # azoles: the place of the NH is no difference
+    return next((rank for rank, rival in enumerate(found) if kernel().inchikey(rival.smiles) == key), None)
 
 
 if __name__ == "__main__":

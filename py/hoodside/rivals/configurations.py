@@ -14,6 +14,7 @@ _OTHER = {"cis": "trans", "trans": "cis"}
 #: Stereounits turned over together; beyond that a compound has more diastereomers than are worth showing.
 _MOST_TURNED = 3
 _CIS_RING = 7
+_DOUBLE = 2
 _LIGANDS = 4
 _SIDES: tuple[Mark, Mark] = ("cw", "ccw")
 #: Bonds out from a double bond over which its ligands are compared.
@@ -73,24 +74,24 @@ def double_bond_forms(graph: Graph, parent: Graph | None = None) -> list[tuple[i
     Each form comes with its number of Z bonds. Bonds left open in the parent stay open.
     """
     forms = [(0, graph)]
-    left_open = _open_bonds(parent) if parent else []
-    for a, b in _open_bonds(graph):
-        if (a, b) in left_open:
-            continue
+    for a, b in _open_bonds(graph, parent):
         forms = [(z + (mark == "cis"), _marked(form, a, b, mark)) for z, form in forms for mark in _OTHER]
     return forms
 
 
-def _open_bonds(graph: Graph) -> list[tuple[int, int]]:
-    marked = {(min(u[0], u[2]), max(u[0], u[2])) for u in graph.planar}
+def _open_bonds(graph: Graph, parent: Graph | None = None) -> list[tuple[int, int]]:
+    """C=C bonds that may be E or Z and bear no mark; with a parent, only those it has not left open."""
+    marked = {(u[0], u[2]) for u in graph.planar} | {(u[2], u[0]) for u in graph.planar}
+    once = {(u[0], u[2]) for u in parent.planar} if parent else set()
     return [
         (a, b)
         for a, near in enumerate(graph.bonds)
         for b, order in near.items()
         if a < b
-        and order == 2
+        and order == _DOUBLE
+        and (parent is None or parent.bonds[a].get(b) != _DOUBLE or (a, b) in once or (b, a) in once)
         and (a, b) not in marked
-        and graph.symbols[a] == graph.symbols[b] == "C"
+        and (graph.symbols[a] == graph.symbols[b] == "C" or (a, b) in once or (b, a) in once)
         and _two_sided(graph, a, b)
         and _two_sided(graph, b, a)
         and not _in_small_ring(graph, a, b)

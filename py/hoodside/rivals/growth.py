@@ -158,7 +158,7 @@ class Growth:
         if key and key in self._seen and not form.tautomer:
             return
         self._seen |= {name, key}
-        doubt = penalty(name, self._allowed)
+        doubt = penalty(form.smiles, self._allowed)  # the kernel still holds it open by this text
         if doubt >= NEVER:
             return
         if self._keep(name):

@@ -13,6 +13,8 @@ Op = Literal["shift", "exchange", "carry", "transfer", "matrix", "relabel"]
 #: (first atom, second atom, change of bond order), atoms counted in the order of the pattern
 Change = tuple[int, int, int]
 _FAR = 99
+#: Change of a single bond that is cut, told apart from a double bond lowered by one.
+CUT = -9
 
 
 @dataclass(frozen=True, slots=True)
@@ -78,12 +80,12 @@ def _rule(row: dict[str, str]) -> Rule:
 
 
 def _changes(text: str) -> tuple[Change, ...]:
-    """ "0-1:-1 2-3:+1" -> ((0, 1, -1), (2, 3, 1))."""
+    """ "0-1:-1 2-3:1" -> ((0, 1, -1), (2, 3, 1)); "0-1:x" cuts a single bond."""
     found = []
     for part in text.split():
         ends, by = part.split(":")
         a, b = ends.split("-")
-        found.append((int(a), int(b), int(by)))
+        found.append((int(a), int(b), CUT if by == "x" else int(by)))
     return tuple(found)
 
 
@@ -100,5 +102,5 @@ def _adjust(text: str) -> tuple[Change, ...]:
 def _span(text: str, otherwise: tuple[int, int]) -> tuple[int, int]:
     if not text:
         return otherwise
-    lo, _, hi = text.partition("-")
-    return int(lo), int(hi or lo)
+    lo, dash, hi = text.partition("-")
+    return int(lo), int(hi) if hi else _FAR if dash else int(lo)

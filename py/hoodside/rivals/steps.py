@@ -8,7 +8,8 @@ carry     ``take`` a chain whose first and last atom hold its neighbours (or H):
 transfer  ``take`` a bond lowered by one order, ``give`` two atoms whose bond is raised, or a ring closed (the
           first two atoms of the pattern).
 matrix    ``take`` a pattern, ``give`` the changes of its bond orders.
-relabel   ``take`` and ``give``: two atoms that change places in all but their bonds.
+relabel   ``take`` and ``give``: two atoms that change places in all but their bonds; a second atom of
+          ``give`` is a group that goes along.
 
 Proposing a step is cheap; its graph is made only when the search comes to it.
 """
@@ -21,7 +22,7 @@ from functools import cache, partial
 
 from hoodside.molecule.kernel import Matches
 from hoodside.rivals.graph import Graph
-from hoodside.rivals.rules import Op, Rule, isomer_rules
+from hoodside.rivals.rules import CUT, Op, Rule, isomer_rules
 from hoodside.rivals.site import APART, Site
 
 #: A cost and the atoms a step acts on.
@@ -189,7 +190,9 @@ def _matrix(site: Site, rule: Rule, atoms: tuple[int, ...]) -> Graph | None:
     if not all(_suits(site, graph, atoms[a], atoms[b], by) for a, b, by in rule.changes):
         return None
     pieces = len(graph.piece(atoms[0]))
-    lowered = all(graph.change_bond(atoms[a], atoms[b], by) for a, b, by in rule.changes if by < 0)
+    lowered = all(
+        graph.change_bond(atoms[a], atoms[b], -1 if by == CUT else by) for a, b, by in rule.changes if by < 0
+    )
     for atom, charge, hydrogens in rule.adjust:
         graph.charges[atoms[atom]] += charge
         graph.hydrogens[atoms[atom]] += hydrogens
@@ -202,26 +205,31 @@ def _matrix(site: Site, rule: Rule, atoms: tuple[int, ...]) -> Graph | None:
 
 
 def _suits(site: Site, graph: Graph, a: int, b: int, by: int) -> bool:
-    """See to it that an aromatic bond to be lowered is drawn double, and one to be raised single."""
-    if frozenset((a, b)) not in site.aromatic_bonds or by not in (1, -1):
+    """See to it that an aromatic bond to be lowered is drawn double, one to be cut or raised single."""
+    wanted = {1: 1, CUT: 1, -1: 2}.get(by)
+    if wanted is None or frozenset((a, b)) not in site.aromatic_bonds or graph.bonds[a][b] == wanted:
         return True
-    wanted = 1 if by > 0 else 2
-    return graph.bonds[a][b] == wanted or any(
-        graph.turn_kekule(ring) for ring in site.structure.rings if a in ring and b in ring
-    )
+    return any(graph.turn_kekule(ring) for ring in site.structure.rings if a in ring and b in ring)
 
 
 def _relabels(site: Site, rule: Rule, take: Matches, give: Matches) -> Iterator[Proposal]:
     for (a,) in take:
-        for (b,) in give:
-            cost = _cost_at(site, rule, a, b)
-            if cost is not None:
-                yield cost, (a, b)
+        for place in give:
+            cost = _cost_at(site, rule, a, place[0])
+            if cost is not None and (len(place) == 1 or site.piece(place[1], place[0])):
+                yield cost, (a, *place)
 
 
 def _relabel(site: Site, rule: Rule, atoms: tuple[int, ...]) -> Graph | None:
+    a, b, *group = atoms
     graph = site.graph.copy()
-    return graph if graph.exchange_elements(*atoms) else None
+    if not group:
+        return graph if graph.exchange_elements(a, b) else None
+    graph.hydrogens[a] += 1  # a valence lent to the group until the elements have changed places
+    if not (graph.hand_over(group[0], b, a) and graph.exchange_elements(a, b)):
+        return None
+    graph.hydrogens[b] -= 1
+    return graph if graph.hydrogens[b] >= 0 else None
 
 
 def _cost_at(site: Site, rule: Rule, old: int, new: int) -> float | None:
