@@ -23,23 +23,29 @@ def _lines(answer: dict[str, Any]) -> Iterator[str]:
     facts = [answer["id"], answer["formula"], "" if degree is None else f"{degree:g} unsaturations"]
     yield "  ".join(part for part in facts if part)
     yield from (f"! {warning}" for warning in answer["warnings"])
-    yield from columns(_ranking(answer["candidates"]), right=(0, 2, 3))
-    for place, candidate in enumerate(answer["candidates"], start=1):
-        yield from _reasons(place, candidate)
+    candidates = _named(answer["candidates"])
+    yield from columns(_ranking(candidates), right=(2, 3))
+    for candidate in candidates:
+        yield from _reasons(candidate)
     yield from _next(answer["next"])
     yield ""
 
 
 def _ranking(candidates: list[dict[str, Any]]) -> Iterator[list[object]]:
     yield ["", "verdict", "weight", "share", "structure"]
-    for place, c in enumerate(candidates, start=1):
-        rival = " (rival)" if c["origin"] == "rival" else ""
-        yield [place, c["verdict"], f"{c['weight_db']:.1f}", f"{100 * c['share']:.0f} %", c["smiles"] + rival]
+    for c in candidates:
+        share = f"{100 * c['share']:.0f} %"
+        yield [c["name"], c["verdict"], f"{c['weight_db']:.1f}", share, c["smiles"]]
 
 
-def _reasons(place: int, candidate: dict[str, Any]) -> Iterator[str]:
+def _named(candidates: list[dict[str, Any]]) -> list[dict[str, Any]]:
+    """Candidates with the names that the sentences call them by: "A" for the first given, "rival 1"."""
+    return [{**c, "name": c["name"].removeprefix("structure ")} for c in candidates]
+
+
+def _reasons(candidate: dict[str, Any]) -> Iterator[str]:
     yield ""
-    yield f"{place}  {candidate['smiles']}: {candidate.get('sentence') or candidate['verdict']}"
+    yield f"{candidate['name']}  {candidate['smiles']}: {candidate.get('sentence') or candidate['verdict']}"
     telling = sorted(candidate["findings"], key=lambda f: -abs(f["weight_db"]))[:_MOST_FINDINGS]
     telling.sort(key=lambda f: f["weight_db"])
     rows = [[f"{f['weight_db']:+.1f}", f["kind"], f["text"]] for f in telling]

@@ -19,6 +19,7 @@ from hoodside.weigh.decibans import decibans, odds, t_between
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.impurities import Stray, carbon_stray
 from hoodside.weigh.trust import trust
+from hoodside.weigh.words import capital, carbon_name
 
 #: A printed line stands for places this far to either side, ppm (rounding and reference).
 _HALF = 0.15
@@ -59,7 +60,7 @@ def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, fluorines: 
         tuple(findings),
         tuple(Link(f"c13:{k}", f"c13:{g}", groups[g].atoms) for g, k in enumerate(given) if k >= 0),
         tuple(
-            Leftover(f"c13:{g}", _missing_text(groups[g]), _name(groups[g]), groups[g].atoms)
+            Leftover(f"c13:{g}", _missing_text(groups[g]), carbon_name(groups[g]), groups[g].atoms)
             for g, k in enumerate(given)
             if k < 0
         ),
@@ -219,12 +220,12 @@ def _missing_findings(groups: Sequence[CarbonGroup], given: list[int], listed: f
 def _line_text(line: _Line, held: list[CarbonGroup]) -> str:
     ppm = line.given.ppm
     if len(held) > 1:
-        named = ", ".join(f"{_name(g)} at {g.ppm:.1f} ± {g.sd:.1f}" for g in held)
-        return f"δ {ppm:.1f}: taken for {len(held)} carbons at once: {named}."
+        named = ", ".join(f"{carbon_name(g)} at {g.ppm:.1f} ± {g.sd:.1f}" for g in held)
+        return f"δ {ppm:.1f}: {len(held)} carbons would coincide here: {named}."
     group = held[0]
     off = ppm - group.ppm
     how = f"{abs(off):.1f} ppm {'higher' if off > 0 else 'lower'}" if abs(off) > group.sd else "as expected"
-    return f"δ {ppm:.1f}: {_name(group)} expected at {group.ppm:.1f} ± {group.sd:.1f}; {how}."
+    return f"δ {ppm:.1f}: {carbon_name(group)} expected at {group.ppm:.1f} ± {group.sd:.1f}; {how}."
 
 
 def _kind_text(line: _Line, group: CarbonGroup) -> str:
@@ -233,14 +234,10 @@ def _kind_text(line: _Line, group: CarbonGroup) -> str:
 
 def _stray_text(line: _Line) -> str:
     if line.stray.name:
-        return f"δ {line.given.ppm:.1f}: probably {line.stray.name}."
+        return f"δ {line.given.ppm:.1f}: {line.stray.likely}."
     return f"δ {line.given.ppm:.1f}: no carbon of the structure explains it."
 
 
 def _missing_text(group: CarbonGroup) -> str:
     tail = "; carbons without H are often too faint" if group.kind == "C" else ""
-    return f"{_name(group)} expected near δ {group.ppm:.1f}, not listed{tail}."
-
-
-def _name(group: CarbonGroup) -> str:
-    return f"{group.kind} ({group.environment})" if group.environment else group.kind
+    return f"{capital(carbon_name(group))} expected near δ {group.ppm:.1f}, not listed{tail}."

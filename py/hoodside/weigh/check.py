@@ -192,6 +192,7 @@ def _candidate(at: int, ranked: Sequence[Ranked]) -> dict[str, Any]:
         "smiles": tally.expected.structure.source,
         "origin": "given" if mine.index is not None else "rival",
         "index": mine.index,
+        "name": mine.name,
         "formula": tally.expected.formula.text,
         "ok_formula": tally.ok_formula,
         "verdict": mine.verdict.verdict,

@@ -5,8 +5,8 @@ Rates are common practice: how often such a signal is listed with a sample that 
 
 from __future__ import annotations
 
-from collections.abc import Iterator
-from dataclasses import dataclass
+from collections.abc import Callable, Iterator
+from dataclasses import dataclass, replace
 from functools import cache
 from math import fsum
 
@@ -30,10 +30,19 @@ _NAMED = 0.25
 
 @dataclass(frozen=True, slots=True)
 class Stray:
-    """A signal seen as no part of the structure: its weight, and its probable name ("" when none fits)."""
+    """A signal seen as no part of the structure: its weight, and its probable name ("" when none fits).
+
+    ``usual``: what bears the name is the solvent, water, or a solvent of work-up and chromatography.
+    """
 
     weight_db: float
     name: str
+    usual: bool = False
+
+    @property
+    def likely(self) -> str:
+        """ "probably water", "perhaps pyrrolidine"."""
+        return f"{'probably' if self.usual else 'perhaps'} {self.name}"
 
 
 @dataclass(frozen=True, slots=True)
@@ -44,6 +53,7 @@ class _Known:
     wander: float
     pattern: str
     whole: int  # H of the molecule's signal
+    usual: bool = True
 
 
 def proton_stray(signal: ProtonSignal, lo: float, hi: float, solvent: str) -> Stray:
@@ -56,9 +66,9 @@ def proton_stray(signal: ProtonSignal, lo: float, hi: float, solvent: str) -> St
         (known.rate * t_between(lo, hi, known.ppm, known.wander) * _as_pattern(signal.mult, known), known)
         for known in _known_protons(solvent)
     ]
-    stray = _stray(crowd, anyhow)
+    stray = _stray(crowd, anyhow, lambda known: _same_pattern(signal.mult, known))
     # A solvent signal that was integrated all the same holds no particular number of H.
-    return Stray(stray.weight_db - _PER_H * (signal.n or 0), stray.name)
+    return replace(stray, weight_db=stray.weight_db - _PER_H * (signal.n or 0))
 
 
 def carbon_stray(line: CarbonLine, solvent: str) -> Stray:
@@ -68,21 +78,24 @@ def carbon_stray(line: CarbonLine, solvent: str) -> Stray:
     crowd = [
         (known.rate * t_between(lo, hi, known.ppm, known.wander), known) for known in _known_carbons(solvent)
     ]
-    return _stray(crowd, anyhow)
+    return _stray(crowd, anyhow, lambda known: True)
 
 
-def _stray(crowd: list[tuple[float, _Known]], anyhow: float) -> Stray:
+def _stray(crowd: list[tuple[float, _Known]], anyhow: float, may_be: Callable[[_Known], bool]) -> Stray:
+    """The weight counts every impurity; a name is given only to one that ``may_be`` it by its pattern."""
     likely, best = max(crowd, key=lambda entry: entry[0], default=(0.0, None))
     total = fsum(chance for chance, _ in crowd) + _STRANGER * anyhow
-    name = best.name if best is not None and likely > _NAMED * total else ""
-    return Stray(min(decibans(total / anyhow), 0.0), name)
+    name = best.name if best is not None and likely > _NAMED * total and may_be(best) else ""
+    return Stray(min(decibans(total / anyhow), 0.0), name, bool(name) and best is not None and best.usual)
 
 
 def _as_pattern(seen: str, known: _Known) -> float:
+    return 1.0 if _same_pattern(seen, known) else float(10 ** (_WRONG_PATTERN / 10))
+
+
+def _same_pattern(seen: str, known: _Known) -> bool:
     bare = seen.removeprefix("br ").removeprefix("app ")
-    if not bare or bare == known.pattern or "m" in (bare, known.pattern):
-        return 1.0
-    return float(10 ** (_WRONG_PATTERN / 10))
+    return not bare or bare == known.pattern or "m" in (bare, known.pattern)
 
 
 @cache
@@ -112,7 +125,8 @@ def _impurity_lines(solvent: str, nucleus: str, wander: float) -> Iterator[_Know
     for row in rows:
         rate = _LISTED / len(rows) * _usual(row)
         pattern = row["multiplicity"].removeprefix("br ")
-        yield _Known(row["compound"], float(row[column]), rate, wander, pattern, int(row["n_H"] or 0))
+        whole, common = int(row["n_H"] or 0), row["compound"] in _COMMON
+        yield _Known(row["compound"], float(row[column]), rate, wander, pattern, whole, common)
 
 
 def _usual(row: Row) -> float:

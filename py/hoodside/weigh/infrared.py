@@ -12,6 +12,8 @@ from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.trust import trust
 
 #: Bands under this wavenumber are the compound's own fingerprint, seldom read one by one, cm-1.
+#: Bands nearer than this to their range are as expected, cm-1.
+_BESIDE = 3.0
 _FINGERPRINT = 1500.0
 #: Missing bands that say less than this are passed over, decibans.
 _WORTH_SAYING = -0.5
@@ -92,12 +94,16 @@ def _clear(evidence: Sequence[BandEvidence], readings: Readings) -> Iterator[Fin
 
 
 def _seen_text(cm1: float, band: IrExpectation) -> str:
-    return f"{cm1:.0f} cm⁻¹: {band.mode} of {band.group}, expected {band.lo:.0f} to {band.hi:.0f} cm⁻¹."
+    off = max(band.lo - cm1, cm1 - band.hi)
+    aside = f", {off:.0f} {'lower' if cm1 < band.lo else 'higher'}" if off >= _BESIDE else ""
+    return (
+        f"{cm1:.0f} cm⁻¹: {band.mode} of {band.group}, expected {band.lo:.0f} to {band.hi:.0f} cm⁻¹{aside}."
+    )
 
 
 def _stray_text(cm1: float) -> str:
     region = region_of(cm1)
-    usual = f" ({region.name} lives there)" if region and cm1 >= _FINGERPRINT else ""
+    usual = f" (place of {region.name})" if region and cm1 >= _FINGERPRINT else ""
     return f"{cm1:.0f} cm⁻¹: no group of the structure is known for it{usual}."
 
 

@@ -6,7 +6,7 @@ from collections.abc import Sequence
 
 from hoodside.weigh.structure import Tally
 from hoodside.weigh.verdict import CLASHES, FITS, TELLS_APART, Verdict
-from hoodside.weigh.words import listed
+from hoodside.weigh.words import capital, listed
 
 _LETTERS = "ABCDEFGHIJKLMNOPQRSTUVWXYZ"
 #: Others named one by one in a sentence; more are counted.
@@ -37,7 +37,7 @@ def sentence(at: int, ranked: Sequence[Entry]) -> str:
 
 def _instead(others: Sequence[Entry]) -> str:
     better = next((e for e in others if e[2].verdict == FITS), None)
-    return f" {_capital(better[0])} fits instead." if better else ""
+    return f" {capital(better[0])} fits instead." if better else ""
 
 
 def _behind(tally: Tally, others: Sequence[Entry]) -> str:
@@ -48,7 +48,7 @@ def _behind(tally: Tally, others: Sequence[Entry]) -> str:
     figures = listed([f"{gap:.0f}" for _, gap in gaps])
     verb = "is" if len(gaps) == 1 else "are"
     tail = f", {more} more further" if more else ""
-    return f"{_capital(listed([name for name, _ in gaps]))} {verb} {figures} behind{tail}."
+    return f"{capital(listed([name for name, _ in gaps]))} {verb} {figures} behind{tail}."
 
 
 def _open(tally: Tally, verdict: Verdict, others: Sequence[Entry]) -> str:
@@ -62,9 +62,5 @@ def _open(tally: Tally, verdict: Verdict, others: Sequence[Entry]) -> str:
         return f"Not told apart from {listed([*names, *more])} by these readings."
     if ahead:
         gap = ahead[0][1].weight_db - tally.weight_db
-        return f"{_capital(ahead[0][0])} is {gap:.0f} ahead, yet nothing rules this one out."
+        return f"{capital(ahead[0][0])} is {gap:.0f} ahead, yet nothing rules this one out."
     return verdict.reason
-
-
-def _capital(text: str) -> str:
-    return text[:1].upper() + text[1:]

@@ -25,6 +25,7 @@ BEHIND = 20.0
 RULES_OUT = -18.0
 #: A structure whose readings, all together, suit some other compound better by this much clashes.
 TOTAL_AGAINST = -6.0
+_NOTHING_ALONE = "No reading rules it out by itself, but all together they suit another structure far better."
 #: Less weight than this is no fit yet: too little has been measured.
 ENOUGH = 10.0
 
@@ -87,8 +88,11 @@ def _relative_clash(tally: Tally, best: Tally) -> Finding | None:
     if best.weight_db - tally.weight_db < BEHIND:
         return None
     theirs = {_key(f): f.weight_db for f in _by_reading(best.findings)}
-    mine = _by_reading(tally.findings)
-    return min(mine, key=lambda f: f.weight_db - max(theirs.get(_key(f), 0.0), 0.0), default=None)
+    against = {_key(f) for f in tally.findings if f.weight_db < 0}
+    # Only a reading that has something against the structure can be the reason given.
+    mine = [f for f in _by_reading(tally.findings) if _key(f) in against]
+    nothing = Finding("all", tally.weight_db - best.weight_db, _NOTHING_ALONE, (), ())
+    return min(mine, key=lambda f: f.weight_db - max(theirs.get(_key(f), 0.0), 0.0), default=nothing)
 
 
 def _key(finding: Finding) -> tuple[str, ...]:

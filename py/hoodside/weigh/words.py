@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+import re
 from collections.abc import Iterable, Sequence
 from typing import Protocol
 
-from hoodside.predict.model import ProtonGroup
+from hoodside.predict.model import CarbonGroup, ProtonGroup
 
+_SYMBOL = re.compile(r"[A-Z][a-z]?")
 _SUBSCRIPTS = str.maketrans("0123456789", "₀₁₂₃₄₅₆₇₈₉")
 
 
@@ -54,6 +56,32 @@ def group_name(group: ProtonGroup) -> str:
     return group.environment or "H"
 
 
+_RING_SIZES = {
+    "chain": "",
+    "ring": "ring ",
+    "ring3": "three-ring ",
+    "ring4": "four-ring ",
+    "ring5": "five-ring ",
+}
+_AROMATIC = {"benzene": "aromatic", "other": "heteroaromatic"}
+
+
+def carbon_name(group: CarbonGroup) -> str:
+    """What a carbon is, such as "CH2 on O", "aromatic CH", "ester C"."""
+    words = group.environment.split()
+    if not words:
+        return group.kind
+    if words[0] == "sp3" and len(words) == 3:
+        beside = listed(_SYMBOL.findall(words[2]))
+        return f"{_RING_SIZES.get(words[1], '')}{group.kind} on {beside}"
+    if words[0] == "aromatic":
+        ring = " ".join(words[1:])
+        return f"{_AROMATIC.get(ring, ring)} {group.kind}"
+    if words == ["alkene,", "hetero"]:
+        return f"alkene {group.kind} on a heteroatom"
+    return f"{group.environment} {group.kind}"
+
+
 def formula_text(formula: str) -> str:
     """A formula with subscripts."""
     return formula.translate(_SUBSCRIPTS)
@@ -64,3 +92,8 @@ def listed(items: Sequence[str]) -> str:
     if len(items) < 2:
         return "".join(items)
     return f"{', '.join(items[:-1])} and {items[-1]}"
+
+
+def capital(text: str) -> str:
+    """A text that begins a sentence."""
+    return text[:1].upper() + text[1:]

@@ -13,12 +13,14 @@ from hoodside.weigh.protons.score import Terms
 from hoodside.weigh.protons.signals import prepare
 from hoodside.weigh.protons.solve import Solution, solve
 from hoodside.weigh.trust import trust
-from hoodside.weigh.words import amount, atoms_of, group_name, listed, plural_h, printed
+from hoodside.weigh.words import amount, atoms_of, capital, group_name, listed, plural_h, printed
 
 _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
 _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
 #: Sets of H named one by one in a sentence.
 _NAMED = 3
+#: From this many H on a signal is no trace of a solvent.
+_MUCH = 0.75
 
 
 def weigh_protons(groups: Sequence[ProtonGroup], patterns: Patterns, readings: Readings) -> Weighed:
@@ -70,16 +72,24 @@ def _place_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
     if len(held) == 1 or is_pair(held):
         group = held[0]
         if group.exchangeable and group.lo is not None and group.hi is not None:
-            inside = group.lo <= signal.ppm <= group.hi
-            where = "within" if inside else "outside"
-            return f"δ {printed(signal)}: {where} {group.lo:g} to {group.hi:g} ppm for {group_name(group)}."
+            where = _against_range(signal.ppm, group.lo, group.hi)
+            return (
+                f"δ {printed(signal)}: {where} the {group.lo:g} to {group.hi:g} ppm usual for "
+                f"{group_name(group)}."
+            )
         off = signal.ppm - group.ppm
         how = f"{abs(off):.2f} ppm {'higher' if off > 0 else 'lower'}" if abs(off) >= 0.1 else "as expected"
         return (
             f"δ {printed(signal)}: {group_name(group)} expected at {group.ppm:.2f} ± {group.sd:.2f}; {how}."
         )
-    named = ", ".join(f"{plural_h(g.n)} at {g.ppm:.2f} ± {g.sd:.2f}" for g in held)
-    return f"δ {printed(signal)}: taken as {len(held)} overlapping sets: {named}."
+    named = ", ".join(f"{plural_h(g.n)} expected at {g.ppm:.2f} ± {g.sd:.2f}" for g in held)
+    return f"δ {printed(signal)}: {len(held)} sets of H would overlap here: {named}."
+
+
+def _against_range(ppm: float, lo: float, hi: float) -> str:
+    if lo <= ppm <= hi:
+        return "within"
+    return f"{lo - ppm:.2f} ppm below" if ppm < lo else f"{ppm - hi:.2f} ppm above"
 
 
 def _count_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
@@ -127,10 +137,11 @@ def _stray_finding(solution: Solution, readings: Readings, k: int) -> Finding:
 
 def _stray_text(solution: Solution, k: int) -> str:
     signal = solution.signals[k]
-    if signal.stray.name:
-        return f"δ {printed(signal)}: probably {signal.stray.name}."
-    size = f", {amount(signal.n)} H" if signal.n else ""
-    return f"δ {printed(signal)}{size}: nothing in the structure explains it."
+    stray, size = signal.stray, f", {amount(signal.n)} H" if signal.n else ""
+    if stray.name and (signal.n or 0.0) < _MUCH:
+        return f"δ {printed(signal)}: {stray.likely}."
+    tail = f"; {stray.name} would come here, but hardly so much of it" if stray.usual else ""
+    return f"δ {printed(signal)}{size}: nothing in the structure explains it{tail}."
 
 
 def _missing_findings(solution: Solution) -> Iterator[Finding]:
@@ -149,7 +160,8 @@ def _missing_findings(solution: Solution) -> Iterator[Finding]:
 
 def _missing_text(group: ProtonGroup) -> str:
     if group.exchangeable:
-        return f"{group_name(group)} not seen: it may hide under another signal, be broad, or have exchanged."
+        name = capital(group_name(group))
+        return f"{name} not seen: it may hide under another signal, be broad, or have exchanged."
     return f"{plural_h(group.n)}, {group_name(group)}, expected near δ {group.ppm:.2f}, not seen."
 
 

@@ -12,6 +12,6 @@ export function Stations({ doc, active }) {
     ${STATIONS.map((name) => html`<a key=${name} href=${address('case', doc.id, name)}
       aria-current=${active.includes(name) ? 'page' : undefined}>${NAMES[name]}
       ${name === 'next' && waits > 0 && html`<i class="dot"></i><span
-        class="hidden">, ${waits} suggestions</span>`}</a>`)}
+        class="hidden">, ${waits} ${waits === 1 ? 'suggestion' : 'suggestions'}</span>`}</a>`)}
   </nav>`;
 }
