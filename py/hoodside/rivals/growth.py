@@ -139,7 +139,10 @@ class Growth:
         if graph is None:
             return
         how = (*leap.how, describe(leap.step))
-        for cis, form in double_bond_forms(graph, leap.step.site.graph):
+        parent = leap.step.site.graph
+        # An exchange of elements may number the atoms anew: there the parent's bonds tell nothing.
+        alike = len(parent.symbols) == len(graph.symbols)
+        for cis, form in double_bond_forms(graph, parent if alike else None):
             made = _Form(write_smiles(form), how, bool(cis), leap.step.tautomer)
             if cis:
                 self._push(cost + CIS * cis, made)
