@@ -13,7 +13,7 @@ from hoodside.methods.structures import structure_of
 from hoodside.molecule import Structure, drawing, read_structure
 from hoodside.molecule.edit import apply
 from hoodside.molecule.edit_options import Option, options_at
-from hoodside.molecule.edit_stereo import bond_labels, centre_labels
+from hoodside.molecule.edit_stereo import labels
 from hoodside.predict.formula import (
     Formula,
     exact_mass,
@@ -23,6 +23,7 @@ from hoodside.predict.formula import (
     shortfall,
     unsaturation,
 )
+from hoodside.readings.fields import text
 
 _LEAST_SIDE, _MOST_SIDE = 16, 4000
 #: Longest a bond is drawn for touching, pixels: a small structure keeps the look of a large one.
@@ -104,13 +105,15 @@ def _canvas(structure: Structure, width: int, height: int, wanted: str) -> dict[
 
 def _labels(structure: Structure) -> dict[str, dict[int, str]]:
     """R or S by atom, E or Z by bond."""
-    return {"atoms": centre_labels(structure), "bonds": bond_labels(structure)}
+    atoms, bonds = labels(structure)
+    return {"atoms": atoms, "bonds": bonds}
 
 
-def _wanted(text: str) -> Formula | None:
+def _wanted(given: object) -> Formula | None:
     """The formula of the sample, None while there is none that can be read: its own field says why."""
+    written = text(given, "formula")
     try:
-        return parse_formula(text) if text.strip() else None
+        return parse_formula(written) if written else None
     except FormulaError:
         return None
 

@@ -62,16 +62,21 @@ def flip_double_bond(structure: Structure, bond: int) -> Structure:
     return set_double_bond(structure, bond, "Z" if bond_labels(structure).get(bond) == "E" else "E")
 
 
+def labels(structure: Structure) -> tuple[dict[int, str], dict[int, str]]:
+    """CIP labels of stereocentres by atom, and of double bonds by bond number."""
+    atoms, bonds = kernel().stereo_labels(structure.source)
+    ends = {(min(b.a, b.b), max(b.a, b.b)): b.index for b in structure.bonds}
+    return atoms, {ends[pair]: label for pair, label in bonds.items()}
+
+
 def centre_labels(structure: Structure) -> dict[int, str]:
     """CIP labels of stereocentres by atom."""
-    return kernel().stereo_labels(structure.source)[0]
+    return labels(structure)[0]
 
 
 def bond_labels(structure: Structure) -> dict[int, str]:
     """CIP labels of double bonds by bond number."""
-    labels = kernel().stereo_labels(structure.source)[1]
-    ends = {(min(b.a, b.b), max(b.a, b.b)): b.index for b in structure.bonds}
-    return {ends[pair]: label for pair, label in labels.items()}
+    return labels(structure)[1]
 
 
 def _marked(structure: Structure, atom: int, mark: Mark) -> Structure:

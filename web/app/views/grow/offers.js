@@ -22,6 +22,9 @@ const DIRECT = { join: 'Join', remove: 'Remove', cut: 'Cut' };
 /** Pieces of a condensed formula between which a line may break: "CH2", "CH", "(CH3)2". */
 const PIECES = /\([^)]*\)\d*|[^(A-Z]*[A-Z][a-z]?[^(A-Z]*|.+/g;
 
+/** What a group would do to the formula, for those who do not see the chip. */
+const FITS = { completes: ', completes the formula', exceeds: ', more than the formula holds', fits: '', '': '' };
+
 /** A chip's words: groups and elements as formulas, the rest as said. @param {{ option: Option }} props */
 export function OptionText({ option: { label, step } }) {
   if (step !== 'attach' && step !== 'insert') return label;
@@ -32,7 +35,7 @@ export function OptionText({ option: { label, step } }) {
 export function OptionChip({ option, onTake, busy }) {
   const completes = option.fit === 'completes';
   return html`<button type="button" class="chip grow-chip ${option.fit === 'exceeds' ? 'grow-exceeds' : ''}" aria-disabled=${String(busy)}
-    aria-label="${option.step === 'attach' ? `attach ${option.name}` : option.name}${completes ? ', completes the formula' : ''}" onClick=${() => onTake(option)}>
+    aria-label="${option.step === 'attach' ? `attach ${option.name}` : option.name}${FITS[option.fit]}" onClick=${() => onTake(option)}>
     <span><${OptionText} option=${option} /></span>${completes && html`<${Icon} name="check" size=${18} />`}</button>`;
 }
 
