@@ -17,12 +17,23 @@ from hoodside.amounts.species import (
 )
 from hoodside.amounts.uncertain import Quantity, Result
 from hoodside.amounts.weighed import Weighed, percent_yield, purity_by_standard
-from hoodside.errors import InvalidInputError
+from hoodside.errors import FormulaError, InvalidInputError
 from hoodside.predict.formula import average_mass, parse_formula
+from hoodside.readings.fields import Span, number, text
+from hoodside.readings.solvents import solvent_asked
+from hoodside.readings.spans import PROTON_SHIFT
 
 _RELAXED = (
     "Integrals count only when the delay is at least five times the longest T1 and the baseline is flat."
 )
+_USUAL_SOLVENT = "CDCl3"
+_INTEGRAL = Span("integral", 0, 1e12)
+_PROTONS = Span("number of H", 0, 1000)
+_UNCERTAINTY = Span("standard uncertainty", 0, 1e12)
+_MASS = Span("mass", 0, 1e12)
+_PURITY = Span("purity", 0, 1, "as a mass fraction")
+_MOLAR_MASS = Span("molar mass", 1, 1e6, "g/mol")
+_STOICHIOMETRY = Span("number of moles of product per mole of start", 0.001, 1000)
 _NO_OVERLAP = "The signals chosen stand free of others, of solvent and of 13C satellites."
 
 
@@ -30,12 +41,13 @@ def answer(question: dict[str, Any]) -> dict[str, Any]:
     """Answer a question of kind "ratio", "conversion", "yield", "purity" or "solvent".
 
     Species are ``{"name", "signals": [{"integral", "protons", "u"?}], "formula" or "molar_mass"?}``; weighed
-    portions ``{"mass", "u"?, "formula" or "molar_mass", "purity"?, "u_purity"?}``. Fractions: per cent.
+    portions ``{"mass", "u"?, "formula" or "molar_mass", "purity"?, "u_purity"?}``: masses in one unit, molar
+    mass in g/mol, purity as a mass fraction. Answers in per cent.
 
     Raises: InvalidInputError naming the field.
     """
     kind = question.get("kind")
-    if kind not in _KINDS:
+    if not isinstance(kind, str) or kind not in _KINDS:
         raise InvalidInputError(
             f"There is no amount of kind {kind!r}.",
             hint=f"Use one of: {', '.join(_KINDS)}.",
@@ -72,7 +84,7 @@ def _yield(question: dict[str, Any]) -> dict[str, Any]:
     found = percent_yield(
         _weighed(_part(question, "product"), "product"),
         _weighed(_part(question, "limiting"), "limiting"),
-        _number(question.get("stoichiometry", 1.0), "stoichiometry"),
+        number(question.get("stoichiometry", 1.0), "stoichiometry", _STOICHIOMETRY),
     )
     return {"yield_percent": _plain(found), "assumptions": ["Purities not given are taken as 100 %."]}
 
@@ -90,9 +102,9 @@ def _purity(question: dict[str, Any]) -> dict[str, Any]:
 
 def _solvent(question: dict[str, Any]) -> dict[str, Any]:
     main = _species(_part(question, "main"), "main")
+    nmr_solvent = solvent_asked(question.get("nmr_solvent"), "nmr_solvent", _USUAL_SOLVENT)
     others = tuple(
-        _impurity(entry, f"solvents[{i}]", str(question.get("nmr_solvent", "CDCl3")))
-        for i, entry in enumerate(_rows(question, "solvents"))
+        _impurity(entry, f"solvents[{i}]", nmr_solvent) for i, entry in enumerate(_rows(question, "solvents"))
     )
     together = (main, *others)
     return {
@@ -119,7 +131,7 @@ def _impurity(entry: dict[str, Any], field: str, nmr_solvent: str) -> Species:
     from hoodside.molecule import read_structure
     from hoodside.predict.formula import formula_of
 
-    name = str(entry.get("name", ""))
+    name = text(entry.get("name"), f"{field}.name")
     signals = [s for s in impurity_signals(nmr_solvent) if s.compound.lower() == name.lower()]
     if not signals:
         raise InvalidInputError(
@@ -128,9 +140,11 @@ def _impurity(entry: dict[str, Any], field: str, nmr_solvent: str) -> Species:
             field=f"{field}.name",
             value=name,
         )
-    ppm = entry.get("ppm")
-    near = min(signals, key=lambda s: abs(s.ppm - float(ppm))) if ppm is not None else signals[0]
-    integral = _number(entry.get("integral"), f"{field}.integral")
+    near = signals[0]
+    if entry.get("ppm") is not None:
+        ppm = number(entry["ppm"], f"{field}.ppm", PROTON_SHIFT)
+        near = min(signals, key=lambda s: abs(s.ppm - ppm))
+    integral = number(entry.get("integral"), f"{field}.integral", _INTEGRAL)
     mass = average_mass(formula_of(read_structure(near.smiles)))
     return Species(name, (Signal(integral, near.protons, _u(entry, field)),), mass)
 
@@ -142,37 +156,45 @@ def _all_species(question: dict[str, Any]) -> tuple[Species, ...]:
 def _species(entry: dict[str, Any], field: str) -> Species:
     signals = tuple(
         Signal(
-            _number(s.get("integral"), f"{field}.signals[{i}].integral"),
-            _number(s.get("protons"), f"{field}.signals[{i}].protons"),
+            number(s.get("integral"), f"{field}.signals[{i}].integral", _INTEGRAL),
+            number(s.get("protons"), f"{field}.signals[{i}].protons", _PROTONS),
             _u(s, f"{field}.signals[{i}]"),
         )
         for i, s in enumerate(_rows(entry, "signals", field))
     )
-    return Species(str(entry.get("name") or field), signals, _molar_mass(entry, field, needed=False))
+    name = text(entry.get("name"), f"{field}.name") or field
+    return Species(name, signals, _molar_mass(entry, field, needed=False))
 
 
 def _weighed(entry: dict[str, Any], field: str) -> Weighed:
     molar_mass = _molar_mass(entry, field, needed=True)
     return Weighed(
-        Quantity(_number(entry.get("mass"), f"{field}.mass"), _u(entry, field) or 0.0),
+        Quantity(number(entry.get("mass"), f"{field}.mass", _MASS), _u(entry, field) or 0.0),
         molar_mass or 0.0,
         Quantity(
-            _number(entry.get("purity", 1.0), f"{field}.purity"),
-            _number(entry.get("u_purity", 0.0), f"{field}.u_purity"),
+            number(entry.get("purity", 1.0), f"{field}.purity", _PURITY),
+            number(entry.get("u_purity", 0.0), f"{field}.u_purity", _PURITY),
         ),
     )
 
 
 def _molar_mass(entry: dict[str, Any], field: str, needed: bool) -> float | None:
     if entry.get("molar_mass") is not None:
-        return _number(entry["molar_mass"], f"{field}.molar_mass")
+        return number(entry["molar_mass"], f"{field}.molar_mass", _MOLAR_MASS)
     if entry.get("formula"):
-        return average_mass(parse_formula(str(entry["formula"])))
+        return _mass_of(text(entry["formula"], f"{field}.formula"), f"{field}.formula")
     if needed:
         raise InvalidInputError(
             f"{field} has no molar mass.", hint="Give formula or molar_mass.", field=field
         )
     return None
+
+
+def _mass_of(formula: str, field: str) -> float:
+    try:
+        return average_mass(parse_formula(formula))
+    except FormulaError as err:
+        raise FormulaError(str(err), hint=err.hint, field=field, value=formula) from err
 
 
 def _part(question: dict[str, Any], key: str) -> dict[str, Any]:
@@ -192,17 +214,8 @@ def _rows(question: dict[str, Any], key: str, parent: str = "") -> list[dict[str
     return found
 
 
-def _number(value: Any, field: str) -> float:
-    try:
-        return float(str(value).replace(",", "."))
-    except ValueError as err:
-        raise InvalidInputError(
-            f"{field}: {value!r} is no number.", hint="Give a number.", field=field
-        ) from err
-
-
 def _u(entry: dict[str, Any], field: str) -> float | None:
-    return None if entry.get("u") is None else _number(entry["u"], f"{field}.u")
+    return None if entry.get("u") is None else number(entry["u"], f"{field}.u", _UNCERTAINTY)
 
 
 def _integral_assumptions() -> list[str]:

@@ -57,7 +57,11 @@ def ratio(first: Species, second: Species) -> Result:
 
 def conversion(start: Species, products: tuple[Species, ...]) -> Result:
     """Mole fraction of what was the start that has reacted: products / (products + start)."""
-    inputs = {"start": moles(start)} | {f"product {p.name}": moles(p) for p in products}
+    names = [p.name for p in products]
+    inputs = {"start": moles(start)}
+    for number, product in enumerate(products, start=1):
+        alike = names.count(product.name) > 1  # two that bear one name are still two
+        inputs[f"product {product.name}" + (f" ({number})" if alike else "")] = moles(product)
     return propagate(lambda v: 1 - v["start"] / sum(v.values()), inputs)
 
 

@@ -73,7 +73,7 @@ def weighted_mean(values: list[Quantity]) -> Quantity:
     """
     if not values:
         raise InvalidInputError("No signal was given.", hint="Give at least one integral.", field="signals")
-    if any(q.u <= 0 for q in values):
+    if not all(q.u > 0 and q.u**2 > 0 for q in values):
         mean = sum(q.value for q in values) / len(values)
         scatter = sum((q.value - mean) ** 2 for q in values)
         n = len(values)

@@ -6,11 +6,10 @@ from dataclasses import asdict
 from typing import Any
 
 from hoodside.advise import changes as advice
-from hoodside.methods.arguments import short_text
-from hoodside.methods.prediction import solvent_of
 from hoodside.methods.structures import structure_of
 from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT
 from hoodside.readings.fields import number
+from hoodside.readings.solvents import solvent_asked
 from hoodside.readings.spans import FIELD
 
 
@@ -19,7 +18,7 @@ def changes(start: str, product: str, solvent: str = USUAL_SOLVENT, mhz: float =
     found = advice.changes(
         structure_of(start, "start"),
         structure_of(product, "product"),
-        solvent_of(short_text(solvent or USUAL_SOLVENT, "solvent")),
+        solvent_asked(solvent, "solvent", USUAL_SOLVENT),
         number(mhz or USUAL_MHZ, "mhz", FIELD),
     )
     return {"changes": [{**asdict(change), "telling": round(change.telling, 1)} for change in found]}

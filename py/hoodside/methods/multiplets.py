@@ -5,7 +5,6 @@ from __future__ import annotations
 from typing import Any
 
 from hoodside.methods.arguments import integer
-from hoodside.methods.prediction import solvent_of
 from hoodside.methods.structures import structure_of
 from hoodside.predict.spins import envelope
 from hoodside.predict.spins.contract import fit_from_json, lines_to_json, spins_from_json
@@ -16,6 +15,7 @@ from hoodside.predict.spins.partners import find_partners
 from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT
 from hoodside.readings.fields import Span, number, rows
 from hoodside.readings.from_json import readings_from_json
+from hoodside.readings.solvents import solvent_asked
 
 _FIELD = Span("field", *FIELDS, "MHz")
 _SHIFT = Span("shift", -60, 60, "ppm")
@@ -52,7 +52,7 @@ def trace(
     structure = structure_of(smiles, "smiles")
     field = number(mhz or USUAL_MHZ, "mhz", _FIELD)
     width = number(linewidth_hz, "linewidth_hz", _WIDTH)
-    groups, systems = predict_spectrum(structure, solvent_of(solvent or USUAL_SOLVENT), field)
+    groups, systems = predict_spectrum(structure, solvent_asked(solvent, "solvent", USUAL_SOLVENT), field)
     lo, hi = _ends([g.ppm for g in groups], from_ppm, to_ppm)
     heights = [0.0] * integer(points, "points", 2, 20_000)
     for system in systems:

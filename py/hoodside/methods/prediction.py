@@ -9,8 +9,8 @@ from hoodside.methods.structures import structure_of
 from hoodside.predict.formula import exact_mass, formula_of, unsaturation
 from hoodside.predict.model import CarbonGroup, IrExpectation, MassExpectation, ProtonGroup, Term
 from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT, predict_all
-from hoodside.readings.fields import number, refusal
-from hoodside.readings.solvents import known_solvent, solvent_names
+from hoodside.readings.fields import number
+from hoodside.readings.solvents import solvent_asked
 from hoodside.readings.spans import FIELD
 
 
@@ -19,7 +19,7 @@ def predict(
 ) -> dict[str, Any]:
     """Every reading to expect of a structure, each number with the terms it is made of."""
     structure = structure_of(smiles, "smiles")
-    chosen = solvent_of(short_text(solvent or USUAL_SOLVENT, "solvent"))
+    chosen = solvent_asked(solvent, "solvent", USUAL_SOLVENT)
     field = number(mhz or USUAL_MHZ, "mhz", FIELD)
     found = predict_all(structure, chosen, field, short_text(medium, "medium"))
     formula = formula_of(structure)
@@ -35,14 +35,6 @@ def predict(
         "ir": [_band(band) for band in found.ir],
         "ms": {"ions": [_ion(ion) for ion in found.ms]},
     }
-
-
-def solvent_of(name: str) -> str:
-    found = known_solvent(name)
-    if not found:
-        known = ", ".join(solvent_names())
-        raise refusal("solvent", name, f"{name!r} is no NMR solvent known here.", f"Use one of: {known}.")
-    return found
 
 
 def _proton(group: ProtonGroup) -> dict[str, Any]:

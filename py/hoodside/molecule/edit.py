@@ -10,7 +10,7 @@ from collections.abc import Callable, Mapping
 from itertools import pairwise
 from typing import Any
 
-from hoodside.errors import InvalidInputError
+from hoodside.errors import InvalidInputError, StructureError
 from hoodside.molecule.draft import Draft
 from hoodside.molecule.edit_common import (
     atom_at,
@@ -37,11 +37,21 @@ def attach(structure: Structure, atom: int, group: str, order: int = 1) -> Struc
         order: 1 for a substituent, 2 for one such as oxo.
     """
     need_hydrogens(structure, atom, order)
-    added = read_structure(group)
+    added = _group(group)
     need_hydrogens(added, 0, order)
     draft = Draft(structure)
     draft.add_bond(atom, draft.add_copy(added)[0], order)
     return finished(draft)
+
+
+def _group(source: object) -> Structure:
+    if not isinstance(source, str):
+        raise refused("The group is no text.", "Give the SMILES of the group.", "group", source)
+    try:
+        return read_structure(source)
+    except StructureError as err:
+        err.field = "group"
+        raise
 
 
 def change_element(structure: Structure, atom: int, symbol: str) -> Structure:

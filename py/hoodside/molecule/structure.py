@@ -10,6 +10,7 @@ from typing import Any
 
 from hoodside.molecule.elements import SYMBOLS
 from hoodside.molecule.kernel import Matches, kernel
+from hoodside.molecule.nuclides import check_nuclide
 from hoodside.molecule.source import check_atoms, check_size
 
 
@@ -139,13 +140,16 @@ class Structure:
 def read_structure(source: str) -> Structure:
     """Read a SMILES, a CTfile or an RDKit JSON graph.
 
-    Raises: StructureError when the text is empty, larger than the kernels survive, or no molecule.
+    Raises: StructureError when the text is empty, larger than the kernels survive, no molecule, or holds an
+    atom without a mass.
     """
     check_size(source)
     source = source.strip() if "\n" not in source.strip() else source
     graph = json.loads(kernel().graph_json(source))
     structure = Structure(source, graph)
     check_atoms(len(structure.atoms), source)
+    for atom in structure.atoms:
+        check_nuclide(atom.symbol, atom.isotope, source)
     return structure
 
 

@@ -30,6 +30,8 @@ _DRAWN = 1e-3
 _SHIFTS, _COUPLINGS = (-60.0, 60.0), (-1000.0, 1000.0)
 _WIDTHS = (0.01, 200.0)
 _USUAL_WIDTH = 1.0
+#: Nothing measured reaches this; compared before turning an integer, however long, into a float.
+_BEYOND = 1e15
 #: Widths beyond the outermost lines that a trace takes in when its ends are not given.
 _MARGIN = 25.0
 _OBSERVED = {"H": True, "1H": True, "F": False, "19F": False, "P": False, "31P": False}
@@ -209,7 +211,7 @@ def _number(
 
 
 def _checked(value: Any, field: str, limits: tuple[float, float] | None) -> float:
-    if isinstance(value, bool) or not isinstance(value, int | float) or not isfinite(value):
+    if isinstance(value, bool) or not isinstance(value, int | float) or not abs(value) < _BEYOND:
         raise _wrong(field, value, "is no number", "Give a number.")
     if limits and not limits[0] <= value <= limits[1]:
         raise _wrong(field, value, "is out of range", f"Give {limits[0]:g} to {limits[1]:g}.")
