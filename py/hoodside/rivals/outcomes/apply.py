@@ -103,9 +103,9 @@ def _react(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -
     flat = [site[int(n)] for n in rule.args.get("flat", "").split(",") if n]
     sources = [_labelled(structure, site, flat)]
     if rule.two_component:
-        if step.partner is None:
+        if (partner := _partner_for(rule, step)) is None:
             return []
-        sources.append(step.partner.source)
+        sources.append(partner.source)
     found = []
     for products in kernel().react(_site_specific(rule.pattern, site), sources):
         parts = [part for p in products for part in p.split(".")]
@@ -115,6 +115,14 @@ def _react(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -
         if made:
             found.append(sorted(made, key=lambda p: -len(p.atoms)))
     return found
+
+
+def _partner_for(rule: Rule, step: Step) -> Structure | None:
+    """The organic partner, else an alcohol named among the reagents where the rule takes one."""
+    if step.partner is not None:
+        return step.partner
+    named = nucleophile_of(rule.args.get("partner", ""), None, step.names, step.roles)
+    return named[0] if named else None
 
 
 def _site_specific(pattern: str, site: dict[int, int]) -> str:

@@ -45,7 +45,9 @@ def find_outcomes(
         raise InvalidInputError(
             "No reagent was given.", hint="Name what was added, or the kind of reaction.", field="with"
         )
-    partner = partner or _named_partner(reagents)
+    by_name = None if partner else _named_partner(reagents)
+    if by_name:
+        partner = read_structure(by_name[1])
     read = _in_turn(reagents, partner)
     now = settled(start)
     found: list[Outcome] = []
@@ -59,16 +61,16 @@ def find_outcomes(
     return Outcomes(
         (*found[:_MOST], _unchanged(start)),
         tuple(name for one in read for name in one.names),
-        tuple(piece for one in read for piece in one.unknown),
+        tuple(piece for one in read for piece in one.unknown if not by_name or piece != by_name[0]),
     )
 
 
-def _named_partner(reagents: str) -> Structure | None:
-    """An organic partner named among the reagents ("2-mercaptoethanol"), where the reagent table has none."""
+def _named_partner(reagents: str) -> tuple[str, str] | None:
+    """Name and SMILES of an organic partner named among the reagents, where the reagent table has none."""
     for piece in read_reagents(" ".join(stages(reagents))).unknown:
         named = exact_name(piece)
         if named is not None and named.kind not in _NO_PARTNERS:
-            return read_structure(named.smiles)
+            return piece, named.smiles
     return None
 
 
