@@ -143,13 +143,21 @@ def read_structure(source: str) -> Structure:
     Raises: StructureError when the text is empty, larger than the kernels survive, no molecule, or holds an
     atom without a mass.
     """
-    check_size(source)
-    source = source.strip() if "\n" not in source.strip() else source
-    graph = json.loads(kernel().graph_json(source))
-    structure = Structure(source, graph)
-    check_atoms(len(structure.atoms), source)
+    structure = read_marked(source)
     for atom in structure.atoms:
         check_nuclide(atom.symbol, atom.isotope, source)
+    return structure
+
+
+def read_marked(source: str) -> Structure:
+    """As ``read_structure``, for sources of the program's own whose mass numbers are marks.
+
+    Raises: StructureError when the text is empty, larger than the kernels survive, or no molecule.
+    """
+    check_size(source)
+    source = source.strip() if "\n" not in source.strip() else source
+    structure = Structure(source, json.loads(kernel().graph_json(source)))
+    check_atoms(len(structure.atoms), source)
     return structure
 
 

@@ -7,9 +7,10 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 
 from hoodside.errors import StructureError
-from hoodside.molecule import Structure, read_structure
+from hoodside.molecule import Structure
 from hoodside.molecule.draft import Draft
 from hoodside.molecule.kernel import kernel
+from hoodside.molecule.structure import read_marked
 from hoodside.molecule.symmetry import constitutional_classes
 from hoodside.rivals.outcomes.addition import (
     add_across,
@@ -148,7 +149,7 @@ def _labelled(structure: Structure, site: dict[int, int], flat: Sequence[int]) -
 
 def _unlabelled(smiles: str) -> Structure | None:
     try:
-        made = read_structure(smiles)
+        made = read_marked(smiles)
         draft = Draft(made)
         for atom in made.atoms:
             if atom.isotope > _LABEL:
