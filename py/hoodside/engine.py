@@ -98,6 +98,10 @@ def _arguments(params: str) -> dict[str, Any]:
             hint="Send one JSON object.",
             field="params",
         ) from err
+    except ValueError as err:  # a number of thousands of digits
+        raise InvalidInputError(
+            f"The parameters cannot be read: {err}.", hint="Shorten the longest number.", field="params"
+        ) from err
     except RecursionError as err:
         raise InvalidInputError(
             "The parameters are nested too deeply.", hint="Send a flat object.", field="params"

@@ -39,7 +39,8 @@ SPECIES = {"name": "a", "signals": [{"integral": 1.2, "protons": 3, "u": 0.05}],
 WEIGHED = {**SPECIES, "mass": 12.0, "u": 0.1, "purity": 0.99, "u_purity": 0.001}
 JCAMP = (
     "##TITLE=x\n##JCAMP-DX=4.24\n##DATA TYPE=INFRARED SPECTRUM\n##XUNITS=1/CM\n##YUNITS=TRANSMITTANCE\n"
-    "##FIRSTX=400\n##LASTX=404\n##NPOINTS=5\n##XFACTOR=1\n##YFACTOR=1\n##XYDATA=(X++(Y..Y))\n400 1 2 3 4 5\n##END=\n"
+    "##FIRSTX=400\n##LASTX=404\n##NPOINTS=5\n##XFACTOR=1\n##YFACTOR=1\n##XYDATA=(X++(Y..Y))\n400 1 2 3 4 5\n"
+    "##END=\n"
 )
 AMOUNTS: list[dict[str, Any]] = [
     {"kind": "ratio", "species": [SPECIES, {**SPECIES, "name": "b"}]},

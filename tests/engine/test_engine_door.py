@@ -131,6 +131,7 @@ def test_solvents_names_and_bench_tests() -> None:
         ("describe", "{", "params"),
         ("describe", "[1]", "params"),
         ("describe", "[" * 100_000, "params"),
+        ("spins", '{"mhz": ' + "1" * 5_000 + "}", "params"),
         ("describe", "{}", "structure"),
         ("describe", '{"structure": "C", "colour": "red"}', "colour"),
         ("describe", '{"structure": 7}', "structure"),

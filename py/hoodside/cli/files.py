@@ -21,6 +21,8 @@ def read_text(name: str) -> str:
 def _bytes(name: str) -> bytes:
     try:
         if name == "-":
+            if sys.stdin is None:
+                raise ValueError("stdin is closed")
             content = sys.stdin.buffer.read(MOST_BYTES + 1)
         else:
             with open(name, "rb") as file:
@@ -66,6 +68,9 @@ def read_json(name: str) -> tuple[list[Any], bool]:
     except RecursionError as err:
         hint = "Give one JSON object, or an array of them."
         raise InvalidInputError("The JSON is nested too deeply.", hint=hint, field="FILE") from err
+    except ValueError as err:  # a number of thousands of digits
+        hint = "Shorten the longest number."
+        raise InvalidInputError(f"The JSON cannot be read: {err}.", hint=hint, field="FILE") from err
     return (found, True) if isinstance(found, list) else ([found], False)
 
 

@@ -91,7 +91,10 @@ def _check(mz: float, mass: float, ppm: float, limits: Limits) -> None:
     for element in limits:
         if not valence_of(element):
             raise InvalidInputError(
-                f"No formulas can be sought with {element!r}.", hint="Use main-group elements.", value=element
+                f"No formulas can be sought with {element!r}.",
+                hint="Use main-group elements.",
+                field=f"limits.{element}",
+                value=element,
             )
 
 
