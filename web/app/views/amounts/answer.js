@@ -1,6 +1,9 @@
 import { html } from 'htm/preact';
 import { Section } from '../../components/parts.js';
+import { useAnswer } from '../../state/use-answer.js';
 import { fixed } from '../../words/numbers.js';
+import { kindOf } from './kinds.js';
+import { amountsOf, amountsQuestion } from './question.js';
 
 /** @typedef {import('./types').Figure} Figure */
 /** @typedef {import('./types').AmountAnswer} AmountAnswer */
@@ -32,6 +35,13 @@ const tooMuch = (figure) => figure && figure.value - figure.expanded > 100;
 /** A figure for each species. @param {{ title: string, figures: Record<string, Figure> }} props */
 const Each = ({ title, figures }) => html`<${Section} title=${title}><dl class="facts-table">${Object.entries(figures).map(([name, figure]) => html`<div key=${name}>
   <dt>${name}</dt><dd>${figureWords(figure)} %</dd></div>`)}</dl><//>`;
+
+/** The figures of a case for its record; nothing while the question is not whole. @param {{ doc: import('../../types').CaseDoc }} props */
+export function RecordedAmounts({ doc }) {
+  const { params } = doc.amounts ? amountsQuestion(doc) : { params: null };
+  const { value } = useAnswer('amounts', params);
+  return params && value ? html`<${Section} title="Amounts: ${kindOf(amountsOf(doc).kind).name.toLowerCase()}"><${Answer} answer=${/** @type {any} */ (value)} /><//>` : null;
+}
 
 /** The figures asked for, with uncertainty and assumptions. @param {{ answer: AmountAnswer }} props */
 export const Answer = ({ answer }) => html`<div class="amount-answer" aria-live="polite">

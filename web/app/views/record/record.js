@@ -9,6 +9,7 @@ import { address } from '../../state/route.js';
 import { say } from '../../state/toast.js';
 import { signed } from '../../words/numbers.js';
 import { letterOf, structureName } from '../../words/structures.js';
+import { RecordedAmounts } from '../amounts/answer.js';
 import { VerdictLine } from '../tally/verdict-line.js';
 import { Rows } from '../tally/rows.js';
 import { rowsOf } from '../tally/row-data.js';
@@ -48,6 +49,7 @@ export function Record({ doc }) {
     })}</ul><//>
     ${found && html`<${Section} title="For and against ${structureName(doc, found, touchedAt(doc, found))}">
       <${Rows} doc=${doc} rows=${rowsOf(doc, found, touchedAt(doc, found))} at=${touchedAt(doc, found)} /><//>`}
+    <${RecordedAmounts} doc=${doc} />
     <p class="whisper">Weights of evidence, not proof. Each 10 decibans is ten times as likely.</p>
   <//></div>`;
 }

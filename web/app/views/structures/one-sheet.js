@@ -8,6 +8,7 @@ import { changeCase, changeWithUndo } from '../../state/cases.js';
 import { address, go } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { letterOf, nameOf } from '../../words/structures.js';
+import { touchStructure } from '../tally/touched.js';
 import { verdictFor } from './card.js';
 import { Predicted } from './predicted.js';
 import { useState } from 'preact/hooks';
@@ -42,6 +43,7 @@ export function OneStructure({ doc, id }) {
         onClick=${() => changeCase(doc.id, (draft) => { draft.intended = intended ? '' : id; })}>${intended ? 'Intended' : 'Mark as intended'}</button>
       <button type="button" class="button" onClick=${remove}>Remove</button>
     </div>
+    <button type="button" class="button" onClick=${() => { touchStructure(doc, structure.smiles); go('case', doc.id, 'tally', 'trace'); }}>Simulated trace, at any field</button>
     <label class="text-label">Call it<input class="text-field" autocomplete="off" value=${structure.name}
       placeholder="a name, if you like"
       onInput=${(/** @type {any} */ e) => rename(e.currentTarget.value)} /></label>

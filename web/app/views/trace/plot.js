@@ -49,12 +49,18 @@ export function Plot({ trace, sticks, group, view, whole, setView, onTap, words 
         class="axis-word" text-anchor="middle" x=${x(ppm)} y=${HEIGHT - 14}>${text}</text></g>`)}
     </svg>
     <figcaption class="hidden">${words}</figcaption>
-    <${ViewButtons} view=${view} whole=${whole} setView=${setView} />
+    <${ViewButtons} view=${view} whole=${whole} setView=${setView} about=${middleOf(view, group)} />
   </figure>`;
 }
 
-/** What the fingers do on the plot, as buttons. @param {{ view: View, whole: View, setView: (view: View) => void }} props */
-function ViewButtons({ view, whole, setView }) {
+/** The place that stays put when one comes nearer: the touched group where it is in view. @param {View} view @param {TracedGroup | null} group */
+function middleOf(view, group) {
+  const middle = group ? (group.hi + group.lo) / 2 : NaN;
+  return middle > view.lo && middle < view.hi ? middle : (view.hi + view.lo) / 2;
+}
+
+/** What the fingers do on the plot, as buttons. @param {{ view: View, whole: View, setView: (view: View) => void, about: number }} props */
+function ViewButtons({ view, whole, setView, about }) {
   const all = view.hi - view.lo >= whole.hi - whole.lo - 1e-6;
   const key = (/** @type {string} */ name, /** @type {any} */ face, /** @type {boolean} */ off, /** @type {View} */ next) =>
     html`<button type="button" class="step" aria-label=${name} disabled=${off} onClick=${() => setView(next)}>${face}</button>`;
@@ -62,7 +68,7 @@ function ViewButtons({ view, whole, setView }) {
     ${key('To higher shift', html`<${Icon} name="left" />`, view.hi >= whole.hi - 1e-6, shifted(view, 0.5, whole))}
     ${key('Farther', html`<${Icon} name="minus" />`, all, zoomed(view, 1 / ZOOM, whole))}
     ${key('Whole trace', 'whole', all, whole)}
-    ${key('Nearer', html`<${Icon} name="plus" />`, false, zoomed(view, ZOOM, whole))}
+    ${key('Nearer', html`<${Icon} name="plus" />`, false, zoomed(view, ZOOM, whole, about))}
     ${key('To lower shift', html`<${Icon} name="right" />`, view.lo <= whole.lo + 1e-6, shifted(view, -0.5, whole))}
   </div>`;
 }
