@@ -107,6 +107,20 @@ def test_purity_equation_of_internal_standard() -> None:
     assert found["expanded"] == pytest.approx(2 * found["u"])
 
 
+def test_what_a_standard_does_not_go_with_is_said() -> None:
+    """Maleic acid makes esters in CD3OD: BIPM Rapport 2018/01 (qNMR internal standard reference data)."""
+    assert any("CD3OD" in said and "BIPM" in said for said in answer(PURITY)["assumptions"])
+    unknown = {**PURITY, "standard": {**PURITY["standard"], "name": "what stood there"}}
+    assert not any("BIPM" in said for said in answer(unknown)["assumptions"])
+
+
+def test_two_products_of_one_name_are_both_counted() -> None:
+    """One part start beside twice one part product: two thirds converted (common practice)."""
+    one = {"name": "diol", "signals": [{"integral": 1.0, "protons": 1}]}
+    found = answer({"kind": "conversion", "start": {**one, "name": "alkene"}, "products": [one, one]})
+    assert found["conversion_percent"]["value"] == pytest.approx(100 * 2 / 3)
+
+
 def test_purity_falls_in_proportion_to_the_integral() -> None:
     """Proportionality of area and moles: the basis of quantitative NMR (same source)."""
     question = {**PURITY, "analyte": {**PURITY["analyte"], "signals": [{"integral": 90.0, "protons": 2}]}}

@@ -15,6 +15,7 @@ from hoodside.amounts.species import (
     ratio,
     routine_error,
 )
+from hoodside.amounts.standards import standard_notes
 from hoodside.amounts.uncertain import Quantity, Result
 from hoodside.amounts.weighed import Weighed, percent_yield, purity_by_standard
 from hoodside.errors import FormulaError, InvalidInputError
@@ -97,7 +98,9 @@ def _purity(question: dict[str, Any]) -> dict[str, Any]:
         _species(standard, "standard"),
         _weighed(standard, "standard"),
     )
-    return {"purity_percent": _plain(found), "assumptions": _integral_assumptions()}
+    noted = standard_notes(text(standard.get("name"), "standard.name"))
+    assumptions = [*_integral_assumptions(), *([noted] if noted else [])]
+    return {"purity_percent": _plain(found), "assumptions": assumptions}
 
 
 def _solvent(question: dict[str, Any]) -> dict[str, Any]:

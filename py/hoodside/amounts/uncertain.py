@@ -36,7 +36,7 @@ class Result:
         return COVERAGE * self.u
 
 
-def propagate(model: Callable[[Mapping[str, float]], float], inputs: Mapping[str, Quantity]) -> Result:
+def propagate(model: Callable[[dict[str, float]], float], inputs: Mapping[str, Quantity]) -> Result:
     """Value and combined standard uncertainty of ``model(inputs)``.
 
     Sensitivity coefficients are taken numerically at the input values (GUM 5.1.3, note 2).
@@ -56,9 +56,7 @@ def propagate(model: Callable[[Mapping[str, float]], float], inputs: Mapping[str
     return Result(centre, math.sqrt(variance), shares)
 
 
-def _part(
-    model: Callable[[Mapping[str, float]], float], at: Mapping[str, float], name: str, u: float
-) -> float:
+def _part(model: Callable[[dict[str, float]], float], at: dict[str, float], name: str, u: float) -> float:
     """Contribution of one input to the combined uncertainty: sensitivity times standard uncertainty."""
     step = u * _STEP
     up, down = {**at, name: at[name] + step}, {**at, name: at[name] - step}

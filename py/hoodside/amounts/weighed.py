@@ -38,7 +38,7 @@ def percent_yield(product: Weighed, limiting: Weighed, stoichiometry: float = 1.
         return 100 * made / expected
 
     return propagate(
-        model,  # type: ignore[arg-type]
+        model,
         {
             "mass of product": product.mass,
             "purity of product": product.purity,
@@ -65,7 +65,7 @@ def purity_by_standard(analyte: Species, sample: Weighed, standard: Species, ref
         return 100 * per_mole * masses * v["purity of standard"]
 
     return propagate(
-        model,  # type: ignore[arg-type]
+        model,
         {
             "integral of analyte": moles(analyte),
             "integral of standard": moles(standard),
