@@ -7,8 +7,8 @@ from typing import Any
 
 from bench.fit_carbon import _json
 from bench.left_out import folds, predicting
+from hoodside.check import check_case
 from hoodside.molecule import read_structure
-from hoodside.weigh.check import check_case
 
 KEYS = ("formula", "solvent", "mhz", "h1", "c13", "ir", "ir_medium", "ms", "hrms")
 FAR = 10.0

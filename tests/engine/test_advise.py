@@ -6,9 +6,9 @@ import pytest
 
 from hoodside.advise.next import Standing, advise
 from hoodside.advise.stereo import differ_in_space_only, mirror_images
+from hoodside.check import check_case
 from hoodside.molecule import read_structure
 from hoodside.readings.from_json import readings_from_json
-from hoodside.weigh.check import check_case
 from hoodside.weigh.expectations import expectations
 
 

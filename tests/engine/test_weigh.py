@@ -8,8 +8,8 @@ import math
 import pytest
 from scipy import stats
 
+from hoodside.check import check_case
 from hoodside.errors import FormulaError, InvalidInputError, StructureError
-from hoodside.weigh.check import check_case
 from hoodside.weigh.decibans import decibans, joined, odds, t_below, t_density
 
 CUMINALDEHYDE = "CC(C)c1ccc(C=O)cc1"

@@ -10,8 +10,8 @@ from pathlib import Path
 
 import pytest
 
+from hoodside.check import check_case
 from hoodside.molecule import read_structure
-from hoodside.weigh.check import check_case
 
 with (Path(__file__).parent / "check_cases.csv").open(encoding="utf-8", newline="") as file:
     ROWS = list(csv.DictReader(file))

@@ -11,8 +11,8 @@ from pathlib import Path
 
 import pytest
 
+from hoodside.check import check_case
 from hoodside.molecule import read_structure
-from hoodside.weigh.check import check_case
 
 CASES = {
     c["id"]: c

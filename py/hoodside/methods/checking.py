@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from typing import Any
 
-from hoodside.weigh.check import check_case
+from hoodside.check import check_case
 
 
 def check(**case: Any) -> dict[str, Any]:
