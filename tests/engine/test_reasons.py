@@ -4,12 +4,12 @@ from __future__ import annotations
 
 import pytest
 
+from hoodside.check import check_case
 from hoodside.facts import load_table
 from hoodside.molecule import read_structure
 from hoodside.predict.model import CarbonGroup
 from hoodside.predict.proton import predict_protons
 from hoodside.readings import ProtonSignal
-from hoodside.weigh.check import check_case
 from hoodside.weigh.impurities import proton_stray
 from hoodside.weigh.words import carbon_name
 
