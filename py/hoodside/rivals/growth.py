@@ -10,9 +10,12 @@ import heapq
 import math
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass
+from functools import cache
 
 from hoodside.errors import StructureError
+from hoodside.facts import load_table
 from hoodside.molecule.structure import Structure
+from hoodside.predict.formula import formula_of
 from hoodside.rivals.configurations import diastereomers, double_bond_forms
 from hoodside.rivals.held_back import NEVER, doubts, penalty
 from hoodside.rivals.model import Rival
@@ -25,6 +28,8 @@ from hoodside.rivals.writer import write_smiles
 #: Cost of turning over one stereounit, and of a Z double bond where an E one would do.
 TURNED = 0.4
 CIS = 0.5
+#: Cost of a structure for which no move speaks but that it is met often.
+COMMON = 1.5
 #: What a second and later move adds beyond its own cost.
 AGAIN = 0.6
 #: No move costs less: the bound for what a structure not yet opened may give.
@@ -116,6 +121,9 @@ class Growth:
         for count, other in diastereomers(self._site.graph):
             form = _Form(write_smiles(other), ("another relative configuration",), True)
             self._push(TURNED * count, form)
+        for name, smiles in common_compounds(formula_of(self._site.structure).text):
+            how = (f"{name}, a common compound of the same formula",)
+            self._push(COMMON, _Form(smiles, how, False))
         self._open(self._site, 0.0, ())
 
     def _push(self, cost: float, what: _Stone | _Leap | _Form) -> None:
@@ -186,6 +194,19 @@ class Growth:
         if doubt < SENSIBLE and self._keep(name):
             self._record(cost + doubt, Rival(name, (how,), 0, plausibility(cost + doubt)))
         return doubt
+
+
+@cache
+def _by_formula() -> dict[str, list[tuple[str, str]]]:
+    found: dict[str, list[tuple[str, str]]] = {}
+    for row in load_table("common_names"):
+        found.setdefault(row["formula"], []).append((row["name"], row["smiles"]))
+    return found
+
+
+def common_compounds(formula: str) -> list[tuple[str, str]]:
+    """Name and SMILES of the common compounds of a formula (facts table common_names)."""
+    return _by_formula().get(formula, [])
 
 
 def plausibility(cost: float) -> float:

@@ -19,8 +19,9 @@ from hoodside.rivals.steps import steps_from
 from hoodside.rivals.swaps import moves_and_swaps
 from hoodside.rivals.writer import write_smiles
 
-#: Structures looked at before the search gives up filling its list.
-STEPS = 3_000
+#: Structures looked at before the search gives up filling its list: in all, and for each rival asked for.
+STEPS = 300
+_STEPS_PER_RIVAL = 14
 #: The same where all isomers are enumerated anyway: moves then serve to rank them.
 _STEPS_WHEN_SMALL = 500
 #: Formulas that are enumerated: heavy atoms, degrees of unsaturation, and isomers at the most.
@@ -39,7 +40,7 @@ def find_rivals(
     readings: Readings | None = None,
     limit: int = 200,
     budget_s: float | None = None,
-    steps: int = STEPS,
+    steps: int | None = None,
     on_progress: Callable[[list[Rival]], bool | None] | None = None,
 ) -> RivalsFound:
     """Look-alikes of a structure, most plausible first.
@@ -49,7 +50,7 @@ def find_rivals(
         readings: rivals that these rule out beyond doubt are left out.
         limit: how many to keep.
         budget_s: seconds after which the search stops with what it has (None: no limit in time).
-        steps: how many structures to look at in all.
+        steps: how many structures to look at in all (None: by ``limit``).
         on_progress: called with every slice found; a true answer stops the search.
     """
     search = _Search(structure, formula_known, readings, limit, steps)
@@ -67,7 +68,7 @@ def iterate_rivals(
     formula_known: bool = True,
     readings: Readings | None = None,
     limit: int = 200,
-    steps: int = STEPS,
+    steps: int | None = None,
 ) -> Iterator[list[Rival]]:
     """Slices of rivals as they are found, for a caller that shows progress and may stop at any slice."""
     yield from _Search(structure, formula_known, readings, limit, steps).run()
@@ -77,12 +78,17 @@ class _Search:
     """Growth by moves, then, where the formula is small, whatever isomers are left."""
 
     def __init__(
-        self, structure: Structure, formula_known: bool, readings: Readings | None, limit: int, steps: int
+        self,
+        structure: Structure,
+        formula_known: bool,
+        readings: Readings | None,
+        limit: int,
+        steps: int | None,
     ) -> None:
         self._structure, self._limit = structure, limit
         self._small = formula_known and _is_small(structure)
-        self._steps = steps
-        budget = min(steps, _STEPS_WHEN_SMALL) if self._small else steps
+        self._steps = STEPS + _STEPS_PER_RIVAL * limit if steps is None else steps
+        budget = min(self._steps, _STEPS_WHEN_SMALL) if self._small else self._steps
         keep = early_test(readings) if readings else lambda smiles: True
         moves = steps_from if formula_known else moves_and_swaps
         self.growth = Growth(structure, limit, budget, keep, moves)
