@@ -31,7 +31,7 @@ _WIDER, _ADDED = 1.4, 0.03
 #: Spread of a printed number of H about the true one: absolute, and relative for raw integrals.
 _COUNT_SD, _RAW_SD = 0.25, 0.08
 #: Share of numbers of H that are off by whole H, falling off by e per H.
-_MISCOUNTED = 0.08
+_MISCOUNTED = 0.05
 _COUNT_FLOOR = -30.0
 #: The two H of one CH2 in one signal, decibans beside the place of one of them.
 _PAIR = -1.0
