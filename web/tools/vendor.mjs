@@ -1,12 +1,16 @@
 // Copies the npm modules that the app imports into OUT, with all that they import in turn, and writes the
-// import map that names them to the page. Workers have no import map: they import the copies by path.
+// import map that names them to the page. Workers have no import map and import by path; the start counts
+// there, so what they use of a package becomes one file.
 // usage: node vendor.mjs OUT INDEX_HTML
 import { existsSync } from 'node:fs';
 import { copyFile, mkdir, readFile, writeFile } from 'node:fs/promises';
 import { dirname, join, relative, resolve } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { nodeResolve } from '@rollup/plugin-node-resolve';
+import { rollup } from 'rollup';
 
-const packages = join(dirname(fileURLToPath(import.meta.url)), '../node_modules');
+const here = dirname(fileURLToPath(import.meta.url));
+const packages = join(here, '../node_modules');
 
 /** Bare import -> the ES module of the package. Add a line here to use another package. */
 const MODULES = /** @type {Record<string, string>} */ ({
@@ -18,15 +22,11 @@ const MODULES = /** @type {Record<string, string>} */ ({
   '@preact/signals': '@preact/signals/dist/signals.mjs',
   idb: 'idb/build/index.js',
   uplot: 'uplot/dist/uPlot.esm.js',
-  'is-any-array': 'is-any-array/lib/index.js',
-  'ml-array-max': 'ml-array-max/lib/index.js',
-  'ml-array-min': 'ml-array-min/lib/index.js',
-  'ml-array-rescale': 'ml-array-rescale/lib/index.js',
 });
 /** What a page names; the other modules are only named by those above and below. */
 const FOR_PAGES = ['preact', 'preact/hooks', 'htm', 'htm/preact', '@preact/signals', 'idb', 'uplot'];
-/** Of ml-matrix the eigen-solver alone. */
-const FOR_WORKERS = ['ml-matrix/src/matrix.js', 'ml-matrix/src/dc/evd.js'];
+/** File in OUT -> the module, in this folder, that names what workers use. */
+const FOR_WORKERS = { 'eigen-solver.js': 'eigen-solver.mjs' };
 const STYLES = ['uplot/dist/uPlot.min.css'];
 
 const SPECIFIER = /(\b(?:from|import)\s*)(["'])([^"'\n]+)\2/g;
@@ -61,6 +61,12 @@ async function copyModule(out, path, done) {
   for (const target of imported) await copyModule(out, target, done);
 }
 
+/** A module and all it imports as one file, less what is not used. @param {string} file @param {string} entry */
+async function joinModule(file, entry) {
+  const joined = await rollup({ input: entry, plugins: [nodeResolve()] });
+  await joined.write({ file, format: 'es' });
+}
+
 /** Browsers want the import map before the first script. @param {string} index */
 async function insertMap(index) {
   const imports = Object.fromEntries(FOR_PAGES.map((bare) => [bare, `./vendor/${MODULES[bare]}`]));
@@ -73,6 +79,7 @@ async function insertMap(index) {
 
 const [out, index] = process.argv.slice(2).map((path) => resolve(path));
 const done = /** @type {Set<string>} */ (new Set());
-for (const path of [...FOR_PAGES.map((bare) => MODULES[bare]), ...FOR_WORKERS]) await copyModule(out, path, done);
+for (const bare of FOR_PAGES) await copyModule(out, MODULES[bare], done);
+for (const [file, entry] of Object.entries(FOR_WORKERS)) await joinModule(join(out, file), join(here, entry));
 for (const file of STYLES) await copyFile(join(packages, file), join(out, /** @type {string} */ (file.split('/').at(-1))));
 await insertMap(index);

@@ -36,12 +36,9 @@ async function startMolecules() {
 }
 
 async function loadNumerics() {
-  const [{ makeNumerics }, { default: Matrix }, { default: EigenvalueDecomposition }] = await Promise.all([
-    import('../engine/numerics-bridge.js'),
-    import('../vendor/ml-matrix/src/matrix.js'),
-    import('../vendor/ml-matrix/src/dc/evd.js'),
-  ]);
-  return makeNumerics({ Matrix, EigenvalueDecomposition });
+  const [{ makeNumerics }, solver] = await Promise.all([
+    import('../engine/numerics-bridge.js'), import('../vendor/eigen-solver.js')]);
+  return makeNumerics(solver);
 }
 
 async function wake() {

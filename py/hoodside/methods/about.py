@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-import platform
+import sys
 from typing import Any
 
 import hoodside
@@ -15,5 +15,5 @@ def about() -> dict[str, Any]:
         "version": hoodside.__version__,
         "kernel": kernel().name,
         "kernel_version": kernel().version(),
-        "python": platform.python_version(),
+        "python": ".".join(map(str, sys.version_info[:3])),
     }

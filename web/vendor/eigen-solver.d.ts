@@ -1,0 +1,1 @@
+export { EigenvalueDecomposition, Matrix } from 'ml-matrix';

@@ -1,1 +1,0 @@
-export { EigenvalueDecomposition as default } from 'ml-matrix';

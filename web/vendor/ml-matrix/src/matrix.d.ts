@@ -1,1 +1,0 @@
-export { Matrix as default } from 'ml-matrix';
