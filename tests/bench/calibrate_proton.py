@@ -11,14 +11,14 @@ from collections import defaultdict
 
 import numpy as np
 
-from bench.fit_proton import FACTS, Model, predict
-from bench.proton_cases import Compound, load_compounds
-from bench.proton_matching import match
-from hoodside.molecule import read_structure
-from hoodside.predict.learned import learned_table
-from hoodside.predict.proton.classes import class_estimates
-from hoodside.predict.proton.predict import scheme_estimates
-from hoodside.predict.proton.view import View
+from bench.fit_proton import FACTS, Model, predict  # noqa: E402
+from bench.proton_cases import Compound, load_compounds  # noqa: E402
+from bench.proton_matching import match  # noqa: E402
+from hoodside.molecule import read_structure  # noqa: E402
+from hoodside.predict.learned import learned_table  # noqa: E402
+from hoodside.predict.proton.classes import class_estimates  # noqa: E402
+from hoodside.predict.proton.predict import scheme_estimates  # noqa: E402
+from hoodside.predict.proton.view import View  # noqa: E402
 
 #: 0.6745 of a normal deviation holds half of the values.
 HALF = 0.6745
