@@ -7,9 +7,14 @@ signal, robust against misassignment. Run it before fit_proton.py when a scheme 
 from __future__ import annotations
 
 import csv
+import sys
 from collections import defaultdict
+from pathlib import Path
 
 import numpy as np
+
+HERE = Path(__file__).resolve()
+sys.path[:0] = [str(HERE.parents[2] / "py"), str(HERE.parents[1])]
 
 from bench.fit_proton import FACTS, Model, predict  # noqa: E402
 from bench.proton_cases import Compound, load_compounds  # noqa: E402
