@@ -19,6 +19,8 @@ FITS, CLASHES, UNDECIDED = "fits", "clashes", "undecided"
 
 #: Structures nearer than this are not told apart by the readings, decibans (ten times as likely).
 TELLS_APART = 10.0
+#: The same while one kind of reading alone speaks, whose errors are shared.
+ONE_KIND_APART = 13.0
 #: This far behind the best one a structure clashes, decibans.
 BEHIND = 20.0
 #: One reading, or one expected and missing, that speaks this strongly against a structure rules it out.
@@ -33,6 +35,8 @@ ENOUGH = 10.0
 #: 0.5 % beyond the second; of the best wrong ones 27 % and 8 %.
 STRAINED, BROKEN = 0.42, 1.0
 _FORGIVEN = 6.0
+#: Findings below this say next to nothing, decibans.
+_SPEAKS = 1.0
 #: With fewer readings than this strain is an accident.
 _FEW = 4
 
@@ -78,13 +82,17 @@ def _standing(tally: Tally, rest: Sequence[Tally]) -> Verdict:
         return Verdict(UNDECIDED, "The readings so far say too little for it.")
     if ahead > 0:
         return Verdict(UNDECIDED, f"Another structure is {ahead:.0f} ahead.")
-    if ahead > -TELLS_APART:
+    if ahead > (-TELLS_APART if _kinds_that_speak(tally) > 1 else -ONE_KIND_APART):
         return Verdict(UNDECIDED, f"Another structure is only {-ahead:.0f} behind.")
     readings = _by_reading(tally.findings)
     if strain(readings) > STRAINED:
         worst = min(readings, key=lambda f: f.weight_db)
         return Verdict(UNDECIDED, f"Too much does not suit it, most of all: {worst.text}", worst)
     return Verdict(FITS, "The readings suit it, and no other structure put up comes near.")
+
+
+def _kinds_that_speak(tally: Tally) -> int:
+    return len({f.kind.split(".")[0] for f in tally.findings if abs(f.weight_db) >= _SPEAKS})
 
 
 def strain(readings: Sequence[Finding]) -> float:
