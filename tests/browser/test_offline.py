@@ -5,6 +5,7 @@ from __future__ import annotations
 from pathlib import Path
 from threading import Thread
 
+import pytest
 from cheroot.wsgi import Server
 from playwright.sync_api import Page
 from werkzeug.exceptions import NotFound
@@ -83,9 +84,12 @@ def test_app_works_below_a_path_of_a_shared_host(dist: Path, open_device: OpenDe
     assert_engine_answers(page)
 
 
-def test_new_version_waits_until_it_is_asked_for(tmp_path: Path, open_device: OpenDevice) -> None:
+def test_new_version_waits_until_it_is_asked_for(
+    tmp_path: Path, open_device: OpenDevice, request: pytest.FixtureRequest
+) -> None:
     dist = copy_of_dist(tmp_path)
     host = start_host(dist)
+    request.addfinalizer(host.stop)
     page = open_device().new_page()
     page.goto(host.address)
     page.evaluate(WAIT_UNTIL_KEPT)
