@@ -53,6 +53,10 @@ class Awaited:
         return _text(seen) if seen else self.text
 
 
+#: Several sets of H in one signal, whatever they are.
+_CROWD = Awaited("several", (), "", {(): ()})
+
+
 class Patterns:
     """The patterns of one structure, by the groups that share a signal."""
 
@@ -75,6 +79,9 @@ class Patterns:
         return self._weights[key]
 
     def _weigh(self, members: tuple[int, ...], printed: str, j: tuple[float, ...]) -> tuple[float, float]:
+        if (not printed or key_of(printed) == _MULTIPLET) and self._is_crowd(members):
+            # Most sets that the search tries: what their pattern would be in full makes no odds.
+            return (pattern_weight(_CROWD, printed) if printed else 0.0), 0.0
         awaited = self.awaited(members)
         shape = pattern_weight(awaited, printed) if printed else 0.0
         seen = awaited.readings.get(key_of(printed)) if printed else None
@@ -99,6 +106,9 @@ class Patterns:
         key = key_of(name_of(usual))
         readings[key] = usual
         return Awaited(self._kind(members, held, key), key, _text(usual), readings)
+
+    def _is_crowd(self, members: tuple[int, ...]) -> bool:
+        return len(members) > 1 and not is_pair([self._groups[m] for m in members])
 
     def _kind(self, members: tuple[int, ...], held: list[ProtonGroup], usual: Key) -> str:
         if len(held) > 1 and not is_pair(held):
