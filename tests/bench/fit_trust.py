@@ -104,7 +104,7 @@ def main() -> None:
     tables = [evidence(weigh_case(case)) for cases in folds() for case in cases]
     tables = [t for t in tables if len(t) > 1]
     print(
-        f"mean surprise of the truth, cross-validated: {cross_validated(tables):.3f} nats, {len(tables)} cases"
+        f"mean surprise of the truth, left out: {cross_validated(tables):.3f} nats, {len(tables)} cases"
     )
     found = fit(tables)
     for kinds, factor in zip(GROUPS, found, strict=True):
