@@ -23,9 +23,7 @@ class Solver(Protocol):
         """See ``numerics.eigh``."""
         ...
 
-    def product(
-        self, n: int, k: int, m: int, a: Vector, b: Vector, out: Vector, turned: bool
-    ) -> None:
+    def product(self, n: int, k: int, m: int, a: Vector, b: Vector, out: Vector, turned: bool) -> None:
         """See ``numerics.product``."""
         ...
 
@@ -43,9 +41,7 @@ class Solver(Protocol):
         """See ``numerics.transitions``; returns how many were written."""
         ...
 
-    def merge(
-        self, count: int, hz: Vector, intensity: Vector, within: float, least: float
-    ) -> int:
+    def merge(self, count: int, hz: Vector, intensity: Vector, within: float, least: float) -> int:
         """See ``numerics.merge_lines``; works in place and returns how many are left."""
         ...
 
@@ -65,9 +61,7 @@ def eigh(n: int, matrix: Vector) -> Pair:
     return values, vectors
 
 
-def product(
-    n: int, k: int, m: int, a: Vector, b: Vector, turned: bool = False
-) -> Vector:
+def product(n: int, k: int, m: int, a: Vector, b: Vector, turned: bool = False) -> Vector:
     """The n x m matrix product a b of ``a`` (n x k) and ``b`` (k x m).
 
     ``turned``: ``a`` is given as k x n and enters transposed.

@@ -103,9 +103,7 @@ def main() -> None:
         factors[kind] = 1.0
     tables = [evidence(weigh_case(case)) for cases in folds() for case in cases]
     tables = [t for t in tables if len(t) > 1]
-    print(
-        f"mean surprise of the truth, left out: {cross_validated(tables):.3f} nats, {len(tables)} cases"
-    )
+    print(f"mean surprise of the truth, left out: {cross_validated(tables):.3f} nats, {len(tables)} cases")
     found = fit(tables)
     for kinds, factor in zip(GROUPS, found, strict=True):
         print(f"  {', '.join(kinds):36} {factor:.2f}")
