@@ -15,6 +15,7 @@ def test_trace_of_a_para_pair_at_two_fields() -> None:
     assert len(high["heights"]) == 1600
     assert max(high["heights"]) == 1
     assert sum(h["n"] for h in high["h1"]) == 14
+    assert sorted(h["mult"] for h in high["h1"]) == ["d", "d", "q", "q", "t", "t"]  # common practice
     total = sum(line["intensity"] for system in low["systems"] for line in system["lines"])
     assert total == pytest.approx(14, abs=0.3)
 

@@ -9,10 +9,10 @@ from hoodside.methods.structures import structure_of
 from hoodside.predict.spins import envelope
 from hoodside.predict.spins.contract import fit_from_json, lines_to_json, spins_from_json
 from hoodside.predict.spins.model import LineList
-from hoodside.predict.spins.molecule import FIELDS, predict_spectrum
+from hoodside.predict.spins.molecule import FIELDS, simulate_groups
 from hoodside.predict.spins.multiplet_reading import MultipletReading, read_multiplet
 from hoodside.predict.spins.partners import find_partners
-from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT
+from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT, predict_all
 from hoodside.readings.fields import Span, number, rows
 from hoodside.readings.from_json import readings_from_json
 from hoodside.readings.solvents import solvent_asked
@@ -52,7 +52,9 @@ def trace(
     structure = structure_of(smiles, "smiles")
     field = number(mhz or USUAL_MHZ, "mhz", _FIELD)
     width = number(linewidth_hz, "linewidth_hz", _WIDTH)
-    groups, systems = predict_spectrum(structure, solvent_asked(solvent, "solvent", USUAL_SOLVENT), field)
+    chosen = solvent_asked(solvent, "solvent", USUAL_SOLVENT)
+    groups = predict_all(structure, chosen, field).h1
+    systems = simulate_groups(structure, groups, chosen, field)
     lo, hi = _ends([g.ppm for g in groups], from_ppm, to_ppm)
     heights = [0.0] * integer(points, "points", 2, 20_000)
     for system in systems:
