@@ -8,6 +8,8 @@ from typing import Any
 
 from playwright.sync_api import Error, Locator, Page, expect
 
+from browser.stand import ANSWER_MS
+
 #: Where the atoms stand on the screen, read off the drawing as an eye does: by letters, else by line ends.
 ATOMS = """() => {
   const drawing = document.querySelector('.grow-drawing svg');
@@ -81,6 +83,7 @@ class Grower:
 
     def chip(self, words: str) -> None:
         """Tap a chip, by way of its tab or of the whole list where it is not in sight."""
+        expect(self.page.locator(".grow-panel")).to_have_attribute("aria-busy", "false", timeout=ANSWER_MS)
         wanted = self.page.locator(".grow-chip").filter(has_text=re.compile(f"^{re.escape(words)}$"))
         self.page.locator(".grow-tab").first.wait_for()
         if not wanted.count():
@@ -104,12 +107,13 @@ class Grower:
         before = self.drawn
         act()
         drawing = self.page.locator(".grow-drawing")
-        expect(drawing).not_to_have_attribute("aria-label", f"Drawing of {before}")
+        expect(drawing).not_to_have_attribute("aria-label", f"Drawing of {before}", timeout=ANSWER_MS)
         self.settled()
 
     def settled(self) -> None:
         """Wait until the drawing and its offers stand."""
-        expect(self.page.locator(".grow-stage")).to_have_attribute("aria-busy", "false")
+        expect(self.page.locator(".grow-stage")).to_have_attribute("aria-busy", "false", timeout=ANSWER_MS)
+        expect(self.page.locator(".grow-panel")).to_have_attribute("aria-busy", "false", timeout=ANSWER_MS)
         self.page.locator(".grow-drawing svg").wait_for()
         self.page.locator(".grow-tab").first.wait_for()
         self.drawn = self.smiles()

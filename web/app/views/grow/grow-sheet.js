@@ -1,5 +1,5 @@
 import { html } from 'htm/preact';
-import { useEffect, useState } from 'preact/hooks';
+import { useEffect, useRef, useState } from 'preact/hooks';
 import { Sheet } from '../../components/sheet.js';
 import { address } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
@@ -37,6 +37,16 @@ function useDrawing(key, size, formula) {
   return { drawn: step.drawn, frame, fault };
 }
 
+/** What can be done at the touched place. Until it is known the last offers stay in sight, but do nothing: they
+ * belong to another place. @param {Canvas | null} drawn @param {Place | null} touched @param {string} formula */
+function useOffers(drawn, touched, formula) {
+  const shown = useRef(/** @type {{ place: Place | null, options: Option[] }} */ ({ place: null, options: [] }));
+  const { value, busy } = useAnswer('options', drawn && touched ? { structure: drawn.source, [touched.kind]: touched.at, formula } : null);
+  const fresh = Boolean(touched && value && !busy);
+  if (fresh || !touched) shown.current = { place: touched, options: fresh ? /** @type {any} */ (value).options : [] };
+  return { ...shown.current, fresh };
+}
+
 /** A structure grown by touch. @param {{ doc: CaseDoc, name: string, purpose: Purpose }} props `name` keeps growths of different purposes apart */
 export function GrowSheet({ doc, name, purpose }) {
   const key = `${doc.id} ${name}`;
@@ -47,11 +57,11 @@ export function GrowSheet({ doc, name, purpose }) {
   const [joining, setJoining] = useState(/** @type {Option | null} */ (null));
   const [listing, setListing] = useState(false);
   const busy = growingSince.value > 0;
-  const { value } = useAnswer('options', drawn && touched ? { structure: drawn.source, [touched.kind]: touched.at, formula: doc.formula.trim() } : null);
-  const options = /** @type {Option[]} */ (drawn && touched ? /** @type {any} */ (value)?.options ?? [] : []);
+  const { place, options, fresh } = useOffers(drawn, touched, doc.formula.trim());
   const choice = drawn && joining ? joinable(drawn, joining.arguments.a) : null;
   useEffect(() => { setJoining(null); setListing(false); }, [source]);
   const onTake = (/** @type {Option} */ option) => {
+    if (!fresh) return;
     if (option.needs_atom) setJoining(option);
     else if (frame) { setListing(false); take(key, option, frame); }
   };
@@ -59,8 +69,8 @@ export function GrowSheet({ doc, name, purpose }) {
     if (joining && frame) { setJoining(null); take(key, joining, frame, place.at); } else touch(key, place);
   };
   const foot = html`<${Corners} id=${key} label=${purpose.done} onUse=${drawn && source && !busy ? () => purpose.use(doc, drawn) : null} />
-    ${source && html`<div class="grow-panel" aria-busy=${String(busy)}>${joining ? html`<${Joining} drawn=${drawn} choice=${choice ?? []} onPick=${onTouch} onCancel=${() => setJoining(null)} />`
-      : touched && options.length ? html`<${Offers} place=${touched} options=${options} busy=${busy} onTake=${onTake} onMore=${() => setListing(true)} />`
+    ${source && html`<div class="grow-panel" aria-busy=${String(busy || Boolean(touched && !fresh))}>${joining ? html`<${Joining} drawn=${drawn} choice=${choice ?? []} onPick=${onTouch} onCancel=${() => setJoining(null)} />`
+      : place && options.length ? html`<${Offers} place=${place} options=${options} busy=${busy || !fresh} onTake=${onTake} onMore=${() => setListing(true)} />`
         : html`<p class="hint">${drawn ? 'Touch an atom or a bond: what can be done there comes up here.' : 'The chemistry is drawing.'}</p>`}</div>`}`;
   const anew = growthOf(key).at > 0 && source && !listing
     && html`<button type="button" class="bar-action" onClick=${() => beginAnew(key)}>Begin anew</button>`;
@@ -68,7 +78,7 @@ export function GrowSheet({ doc, name, purpose }) {
     <${Tiles} doc=${doc} onBegin=${(/** @type {string} */ smiles) => begin(key, smiles)} /><//>`;
   if (listing) return html`<${Sheet} title="Attach a group" back=${address(...purpose.back)} class="grow-sheet grow-listing" key="listing"
       foot=${html`<button type="button" class="button" onClick=${() => setListing(false)}>Back to the drawing</button>`}>
-    <${Groups} options=${options} busy=${busy} onTake=${onTake} /><//>`;
+    <${Groups} options=${options} busy=${busy || !fresh} onTake=${onTake} /><//>`;
   return html`<${Sheet} title=${purpose.title} back=${address(...purpose.back)} class="grow-sheet" action=${anew} foot=${foot} key="drawing">
     <${FormulaLine} drawn=${drawn} />
     <${Stage} drawn=${drawn} size=${stepOf(key).frame} touched=${touched} choice=${choice} busy=${busy} onSize=${setSize} onTouch=${onTouch}
