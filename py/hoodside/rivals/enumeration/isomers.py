@@ -15,6 +15,8 @@ from hoodside.rivals.enumeration.units import Unit, divisions, units
 from hoodside.rivals.graph import Graph
 from hoodside.rivals.writer import write_smiles
 
+#: The highest bond order there is.
+TRIPLE = 3
 #: Graphs at one stage beyond which a formula is not small any more.
 MOST = 3_000
 
@@ -42,12 +44,12 @@ def enumerate_isomers(
     """
     counts = _counts(formula)
     found: dict[str, None] = {}
-    may_bond = _may_bond if sensible else _always
+    most_order = sensible_order if sensible else _any_order
     for division in divisions({s: n for s, n in counts.items() if s != "H"}):
         if not charged_groups and any(len(unit.atoms) > 1 for unit, _ in division):
             continue
         try:
-            for smiles in _of_division(division, counts.get("H", 0), may_bond, most):
+            for smiles in _of_division(division, counts.get("H", 0), most_order, most):
                 found[smiles] = None
         except TooMany:
             return Enumeration(tuple(found), False)
@@ -70,7 +72,7 @@ def _counts(formula: Formula | str) -> dict[str, int]:
 def _of_division(
     division: tuple[tuple[Unit, int], ...],
     hydrogens: int,
-    may_bond: Callable[[Unit, Unit], bool],
+    most_order: Callable[[Unit, Unit], int],
     most: int,
 ) -> Iterator[str]:
     kinds = [unit for unit, _ in division]
@@ -83,7 +85,7 @@ def _of_division(
         [unit.valence for unit in kinds],
         [count for _, count in division],
         spare // 2,
-        lambda a, b: may_bond(kinds[a], kinds[b]),
+        lambda a, b: most_order(kinds[a], kinds[b]),
         most,
     )
     for graph in found:
@@ -102,12 +104,13 @@ def _graph(found: Multigraph, kinds: list[Unit]) -> Graph:
     return graph
 
 
-def _always(_a: Unit, _b: Unit) -> bool:
-    return True
+def _any_order(_a: Unit, _b: Unit) -> int:
+    return TRIPLE
 
 
-def _may_bond(a: Unit, b: Unit) -> bool:
-    return frozenset((a.name, b.name)) not in _barred()
+def sensible_order(a: Unit, b: Unit) -> int:
+    """The highest order of a bond between two units; 0 for what is held back (held_back_bonds)."""
+    return 0 if frozenset((a.name, b.name)) in _barred() else TRIPLE
 
 
 @cache

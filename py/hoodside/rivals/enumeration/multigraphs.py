@@ -11,7 +11,6 @@ from collections.abc import Callable, Iterator, Sequence
 from dataclasses import dataclass
 from functools import cached_property
 
-_MOST_ORDER = 3
 #: Rounds of refinement: enough for vertices to learn of all others in graphs this small.
 _ROUNDS = 3
 
@@ -96,8 +95,8 @@ class Collection:
             self.items.append(graph)
 
 
-#: Whether two kinds of vertex may be bonded at all.
-MayBond = Callable[[int, int], bool]
+#: The highest bond order allowed between two kinds of vertex; 0 when they may not be bonded at all.
+MostOrder = Callable[[int, int], int]
 
 
 class TooMany(Exception):  # noqa: N818 - a signal within this package, not an error
@@ -105,20 +104,20 @@ class TooMany(Exception):  # noqa: N818 - a signal within this package, not an e
 
 
 def multigraphs(
-    valences: Sequence[int], counts: Sequence[int], extra_bonds: int, may_bond: MayBond, most: int
+    valences: Sequence[int], counts: Sequence[int], extra_bonds: int, most_order: MostOrder, most: int
 ) -> Iterator[Multigraph]:
     """Connected multigraphs of ``counts[k]`` vertices of kind k with valence ``valences[k]``.
 
     Args:
         extra_bonds: bonds (by order) beyond those of a tree: the degree of unsaturation.
-        may_bond: which kinds may be neighbours.
+        most_order: which kinds may be neighbours, and how closely.
         most: TooMany is raised when a stage holds more graphs than this.
     """
-    stage = _Trees(valences, may_bond, most).of(tuple(counts))
+    stage = _Trees(valences, most_order, most).of(tuple(counts))
     for _ in range(extra_bonds):
         wider = Collection()
         for graph in stage:
-            for a, b in _openings(graph, may_bond):
+            for a, b in _openings(graph, most_order):
                 wider.add(graph.with_bond(a, b))
             if len(wider.items) > most:
                 raise TooMany
@@ -126,19 +125,19 @@ def multigraphs(
     yield from stage
 
 
-def _openings(graph: Multigraph, may_bond: MayBond) -> Iterator[tuple[int, int]]:
+def _openings(graph: Multigraph, most_order: MostOrder) -> Iterator[tuple[int, int]]:
     for a, free in enumerate(graph.free):
         for b in range(a) if free else ():
             order = graph.rows[a].get(b, 0)
-            if graph.free[b] and order < _MOST_ORDER and may_bond(graph.kinds[a], graph.kinds[b]):
+            if graph.free[b] and order < most_order(graph.kinds[a], graph.kinds[b]):
                 yield b, a
 
 
 class _Trees:
     """Trees by composition, each composition worked out once."""
 
-    def __init__(self, valences: Sequence[int], may_bond: MayBond, most: int) -> None:
-        self._valences, self._may_bond, self._most = valences, may_bond, most
+    def __init__(self, valences: Sequence[int], most_order: MostOrder, most: int) -> None:
+        self._valences, self._most_order, self._most = valences, most_order, most
         self._known: dict[tuple[int, ...], list[Multigraph]] = {}
 
     def of(self, counts: tuple[int, ...]) -> list[Multigraph]:
@@ -155,7 +154,7 @@ class _Trees:
             fewer = tuple(n - (k == kind) for k, n in enumerate(counts))
             for graph in self.of(fewer):
                 for at, free in enumerate(graph.free):
-                    if free and self._may_bond(graph.kinds[at], kind):
+                    if free and self._most_order(graph.kinds[at], kind):
                         found.add(graph.with_leaf(at, kind, self._valences[kind]))
             if len(found.items) > self._most:
                 raise TooMany
