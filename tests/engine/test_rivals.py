@@ -221,3 +221,13 @@ def test_readings_that_leave_no_doubt_are_used_early() -> None:
 @pytest.mark.parametrize("case", CASES, ids=lambda case: str(case["id"]))
 def test_early_use_of_readings_never_loses_the_truth(case: dict[str, object]) -> None:
     assert early_test(readings_from_json(case))(str(case["smiles"]))
+
+
+@pytest.mark.parametrize("smiles", ["[CH3]", "[2H]C([2H])([2H])O", "[Na+].[Cl-]", "CCO.CC=O", "C[N+](C)(C)C"])
+def test_no_list_is_called_complete_for_what_cannot_be_enumerated(smiles: str) -> None:
+    assert not find_rivals(read_structure(smiles), limit=30).complete
+
+
+def test_ions_are_no_place_for_isosteres_of_bound_halogen() -> None:
+    found = find_rivals(read_structure("CC[NH3+].[Cl-]"), formula_known=False, limit=60).rivals
+    assert all(read_structure(rival.smiles).charge == 0 for rival in found)

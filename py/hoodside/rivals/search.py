@@ -154,6 +154,7 @@ def _is_small(structure: Structure) -> bool:
     return (
         heavy <= _SMALL_HEAVY
         and not structure.charge
+        and not any(atom.radicals or atom.isotope for atom in structure.atoms)
         and (unsaturation(formula_of(structure)) or 0) <= _SMALL_UNSATURATION
         and all(step >= 0 for step in structure.distances_from(0))
     )
