@@ -7,10 +7,10 @@ import time
 from pathlib import Path
 
 from bench.tables import Figure, print_figures
+from hoodside.advise.proposals import propose
 from hoodside.molecule import read_structure
 from hoodside.readings.from_json import readings_from_json
 from hoodside.rivals.names import flat
-from hoodside.rivals.proposals import propose
 
 CASES = Path(__file__).parents[1] / "cases" / "published.json"
 #: Every n-th case, to keep the section short.

@@ -9,9 +9,9 @@ import csv
 import json
 from pathlib import Path
 
+from hoodside.advise.proposals.signs import find_sign, parse_sign
 from hoodside.molecule import read_structure
 from hoodside.readings.from_json import readings_from_json
-from hoodside.rivals.proposals.signs import find_sign, parse_sign
 
 ROOT = Path(__file__).parents[2]
 TABLE = ROOT / "py" / "hoodside" / "facts" / "fragment_signs.csv"

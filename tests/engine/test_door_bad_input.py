@@ -82,6 +82,7 @@ GOOD: list[tuple[str, dict[str, Any]]] = [
     ("outcomes", {"structure": "CCC=C", "reagents": "OsO4, NMO", "partner": "CCBr", "kind": ""}),
     ("reagents", {"query": "os"}),
     ("rivals", {"structure": "CCO", "readings": {"formula": "C2H6O"}, "limit": 2, "formula_known": True}),
+    ("proposals", {"readings": READINGS, "limit": 2}),
     ("changes", {"start": "CCCO", "product": "CCC=O", "solvent": "CDCl3", "mhz": 400}),
     *(("amounts", question) for question in AMOUNTS),
 ]

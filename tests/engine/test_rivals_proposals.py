@@ -6,6 +6,8 @@ from typing import Any
 
 import pytest
 
+from hoodside.advise.proposals import find_fragments, propose
+from hoodside.advise.proposals.signs import parse_sign
 from hoodside.engine import call
 from hoodside.errors import DataFileError, InvalidInputError
 from hoodside.facts import load_table
@@ -13,8 +15,6 @@ from hoodside.molecule import read_structure
 from hoodside.molecule.kernel import kernel
 from hoodside.readings.from_json import readings_from_json
 from hoodside.rivals.names import name_of
-from hoodside.rivals.proposals import find_fragments, propose
-from hoodside.rivals.proposals.signs import parse_sign
 
 
 def signal(ppm: float, mult: str, n: float, *j: float) -> dict[str, Any]:

@@ -4,10 +4,10 @@ from __future__ import annotations
 
 from typing import Any
 
+from hoodside.advise.proposals import Fragment, propose
 from hoodside.methods.arguments import integer
 from hoodside.readings.fields import refusal
 from hoodside.readings.from_json import readings_from_json
-from hoodside.rivals.proposals import Fragment, propose
 
 USUAL_LIMIT = 12
 MOST = 100

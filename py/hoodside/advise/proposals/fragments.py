@@ -6,9 +6,9 @@ import math
 from dataclasses import dataclass
 from functools import cache
 
+from hoodside.advise.proposals.signs import Demand, find_sign, parse_sign
 from hoodside.facts import load_table
 from hoodside.readings.model import Readings
-from hoodside.rivals.proposals.signs import Demand, find_sign, parse_sign
 
 #: Added to every count: a sign never seen to fail has failed half a time.
 _HALF = 0.5

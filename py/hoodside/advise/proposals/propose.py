@@ -5,6 +5,9 @@ from __future__ import annotations
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
 
+from hoodside.advise.proposals.assembly import Part, assemble, elements_of, part_of
+from hoodside.advise.proposals.fragments import Fragment, find_fragments
+from hoodside.advise.proposals.rings import Ring, ring_choices
 from hoodside.errors import FormulaError, StructureError
 from hoodside.molecule.structure import Structure, read_structure
 from hoodside.molecule.symmetry import atom_classes
@@ -17,9 +20,6 @@ from hoodside.rivals.graph import graph_of
 from hoodside.rivals.growth import SENSIBLE
 from hoodside.rivals.held_back import doubts, penalty
 from hoodside.rivals.names import name_of
-from hoodside.rivals.proposals.assembly import Part, assemble, elements_of, part_of
-from hoodside.rivals.proposals.fragments import Fragment, find_fragments
-from hoodside.rivals.proposals.rings import Ring, ring_choices
 from hoodside.rivals.writer import write_smiles
 from hoodside.weigh.expectations import expectations
 from hoodside.weigh.structure import weigh_structure

@@ -7,11 +7,11 @@ from dataclasses import dataclass
 from functools import cache
 from itertools import combinations_with_replacement
 
+from hoodside.advise.proposals.assembly import Part, elements_of
 from hoodside.facts import load_table
 from hoodside.molecule.structure import read_structure
 from hoodside.readings.model import Readings
 from hoodside.rivals.graph import graph_of
-from hoodside.rivals.proposals.assembly import Part, elements_of
 
 #: ppm: where hydrogens on aromatic rings lie (common practice).
 _FROM, _TO = 6.2, 9.0
