@@ -96,3 +96,18 @@ def test_every_place_a_carbon_can_have_has_words():
             group = CarbonGroup(ppm=1.0, sd=1.0, kind="CH2", n=1, atoms=(0,), environment=row["environment"])
             assert "sp3" not in carbon_name(group)
             assert "chain" not in carbon_name(group)
+
+
+def test_structure_beaten_by_one_that_only_the_formula_rules_out_does_not_fit():
+    # Benzyl alcohol's spectra (common practice) with the formula of its acetate typed in.
+    case = {
+        "text": "1H NMR (400 MHz, CDCl3) δ 7.40-7.28 (m, 5H), 4.68 (s, 2H), 1.80 (br s, 1H). "
+        "IR (film) 3330 (br), 3030, 2872, 1496, 1454, 1018, 735, 697",
+        "formula": "C9H10O2",
+        "candidates": ["CC(=O)OCc1ccccc1", "OCc1ccccc1"],
+    }
+    found = {c["index"]: c for c in check_case(case)["candidates"]}
+    assert found[0]["verdict"] != "fits"
+    assert found[1]["verdict"] == "clashes"
+    assert "-" not in found[0]["sentence"]
+    assert "not C₉H₁₀O₂" in found[0]["sentence"]

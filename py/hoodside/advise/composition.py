@@ -12,6 +12,8 @@ from hoodside.weigh.formulas import weigh_formula
 
 #: Isotope ratios that can be told apart on any instrument.
 _RATIO = 0.15
+#: Masses further apart than this are told apart without accurate mass, u.
+_NOMINAL = 0.5
 _DIFFER = "They should break up differently."
 
 
@@ -49,9 +51,15 @@ def _accurate(pair: Pair, readings: Readings) -> Gain:
     weight = gap(pair.first, pair.second, imagine, _by_formula)
     masses = [adduct_mz(e.formula, "[M+H]+") for e in (pair.first, pair.second)]
     a, b = pair.names
-    apart = abs(masses[0] - masses[1]) / masses[0] * 1e6
-    why = f"[M+H]⁺ of {a} is {masses[0]:.4f}, of {b} {masses[1]:.4f}: {apart:.0f} ppm apart."
+    apart = _apart(masses[0], masses[1])
+    why = f"[M+H]⁺ of {a} is {masses[0]:.4f}, of {b} {masses[1]:.4f}: {apart}."
     return Gain(weight, why, (f"{masses[0]:.4f}: {a}.", f"{masses[1]:.4f}: {b}."))
+
+
+def _apart(one: float, other: float) -> str:
+    if abs(one - other) > _NOMINAL:
+        return f"{abs(one - other):.0f} u apart, so any mass spectrum will do"
+    return f"{abs(one - other) / one * 1e6:.0f} ppm apart"
 
 
 def _peaks(pair: Pair, readings: Readings) -> Gain:

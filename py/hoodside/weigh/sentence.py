@@ -55,12 +55,21 @@ def _open(tally: Tally, verdict: Verdict, others: Sequence[Entry]) -> str:
     near = [
         e for e in others if abs(e[1].weight_db - tally.weight_db) < TELLS_APART and e[2].verdict != CLASHES
     ]
-    ahead = [e for e in others if e[1].weight_db - tally.weight_db >= TELLS_APART]
+    ahead = [e for e in others if e[1].weight_db > tally.weight_db]
     if near:
         names = [name for name, _, _ in near[:_NAMED]]
         more = [f"{len(near) - _NAMED} more"] if len(near) > _NAMED else []
         return f"Not told apart from {listed([*names, *more])} by these readings."
     if ahead:
-        gap = ahead[0][1].weight_db - tally.weight_db
-        return f"{capital(ahead[0][0])} is {gap:.0f} ahead, yet nothing rules this one out."
+        return _although(ahead[0], ahead[0][1].weight_db - tally.weight_db)
     return verdict.reason
+
+
+def _although(better: Entry, gap: float) -> str:
+    name, _, verdict = better
+    if verdict.verdict == CLASHES:
+        return (
+            f"{capital(name)} suits the readings better by {gap:.0f}, but for one thing: {verdict.reason} "
+            "Make sure of that reading."
+        )
+    return f"{capital(name)} is {gap:.0f} ahead, yet nothing rules this one out."

@@ -60,8 +60,10 @@ def judge(tallies: Sequence[Tally]) -> list[Verdict]:
         if against is not None:
             verdicts.append(Verdict(CLASHES, against.text, against))
         else:
-            rest = [t for k, t in enumerate(tallies) if k != i and clashing[k] is None]
-            verdicts.append(_standing(tally, rest))
+            others = _others(tally, tallies)
+            rest = [tallies[k] for k in others if clashing[k] is None]
+            fallen = [tallies[k] for k in others if clashing[k] is not None]
+            verdicts.append(_standing(tally, rest, fallen))
     return verdicts
 
 
@@ -74,16 +76,24 @@ def shares(tallies: Sequence[Tally]) -> list[float]:
     return [ratio / fsum(ratios) for ratio in ratios]
 
 
-def _standing(tally: Tally, rest: Sequence[Tally]) -> Verdict:
+def _others(tally: Tally, tallies: Sequence[Tally]) -> list[int]:
+    """Places of the structures that are another compound."""
     identity = tally.expected.structure.inchikey
-    others = [t for t in rest if t.expected.structure.inchikey != identity]
-    ahead = max((t.weight_db - tally.weight_db for t in others), default=-1e9)
+    return [k for k, t in enumerate(tallies) if t.expected.structure.inchikey != identity]
+
+
+def _standing(tally: Tally, rest: Sequence[Tally], fallen: Sequence[Tally]) -> Verdict:
+    """``rest``: the others not ruled out, ``fallen``: those ruled out."""
+    ahead = max((t.weight_db - tally.weight_db for t in rest), default=-1e9)
     if tally.weight_db < ENOUGH:
         return Verdict(UNDECIDED, "The readings so far say too little for it.")
     if ahead > 0:
         return Verdict(UNDECIDED, f"Another structure is {ahead:.0f} ahead.")
     if ahead > (-TELLS_APART if _kinds_that_speak(tally) > 1 else -ONE_KIND_APART):
         return Verdict(UNDECIDED, f"Another structure is only {-ahead:.0f} behind.")
+    if any(t.weight_db > tally.weight_db for t in fallen):
+        # What rules the better one out may itself be wrong: a formula mistyped, a stray band.
+        return Verdict(UNDECIDED, "A structure that is ruled out suits the readings better.")
     readings = _by_reading(tally.findings)
     if strain(readings) > STRAINED:
         worst = min(readings, key=lambda f: f.weight_db)
