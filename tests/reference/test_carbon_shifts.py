@@ -90,3 +90,24 @@ def test_kinds_and_numbers_of_cumene() -> None:
     """Six lines, one C, three CH, one CH2-free, CH3 pair: common practice."""
     kinds = [(g.kind, g.n) for g in predict_carbons(read_structure("CC(C)c1ccccc1"))]
     assert sorted(kinds) == [("C", 1), ("CH", 1), ("CH", 1), ("CH", 2), ("CH", 2), ("CH3", 2)]
+
+
+#: 13C shifts in CDCl3 of carbons on acylated nitrogen and beside flat groups, from memory of common spectra.
+BESIDE_FLAT_GROUPS = [
+    ("CCCCNC(=O)c1ccccc1", 3, 39.8),
+    ("CCCCNC(C)=O", 3, 39.4),
+    ("CCCCNC(C)=O", 2, 31.7),
+    ("CC(C)NC(C)=O", 1, 41.4),
+    ("CCNC(=O)NCC", 1, 35.1),
+    ("CC(C)(C)OC(=O)N1CCCC1", 8, 45.9),
+    ("COC(=O)[C@H](CC(C)C)NC(=O)OC(C)(C)C", 4, 52.0),
+    ("CC(C)Cc1ccc(cc1)C(C)C(=O)O", 10, 45.0),
+    ("CCCC(C)C(=O)OC", 3, 39.3),
+    ("CC(C)c1ccccc1", 1, 34.1),
+]
+
+
+@pytest.mark.parametrize(("smiles", "atom", "ppm"), BESIDE_FLAT_GROUPS)
+def test_carbon_beside_an_acylated_nitrogen_or_a_flat_group(smiles: str, atom: int, ppm: float) -> None:
+    group = next(g for g in predict_carbons(read_structure(smiles)) if atom in g.atoms)
+    assert group.ppm == pytest.approx(ppm, abs=5)

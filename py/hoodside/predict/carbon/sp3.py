@@ -18,6 +18,8 @@ from hoodside.predict.model import Term
 _SET = "Pretsch"
 _REACH = ("alpha", "beta", "gamma", "delta")
 _ARYL = "phenyl"
+#: Neighbours whose branches the steric corrections count.
+_BRANCHING = ("C", "N")
 _MULTIPLE = ("N", "O", "S", "P", "F", "Cl", "Br", "I")
 
 
@@ -32,16 +34,26 @@ def estimate_sp3(structure: Structure, atom: int) -> Estimate:
 
 
 def _increments(structure: Structure, atom: int) -> list[Term]:
-    """A functional group counts once, at the distance where it begins."""
+    """A functional group counts once, at the distance where it begins.
+
+    What stands behind an atom without increments of its own (silicon, phosphorus, boron) does not count:
+    nobody knows how it reaches through.
+    """
     groups = substituents_in(structure, "carbon_alkane", _patterns())
     distances = structure.distances_from(atom)
-    seen, terms = {atom}, []
+    seen, screened = {atom}, set[int]()
+    terms: list[Term] = []
     for here in sorted(range(len(distances)), key=distances.__getitem__):
         if here in seen or not 0 < distances[here] <= len(_REACH):
             continue
         nearer = {n for n in structure.neighbours[here] if distances[n] < distances[here]}
+        if nearer <= screened:
+            screened.add(here)
+            continue
         name, members = _group_at(structure, groups, here, {atom, *nearer})
         seen |= members
+        if not name and structure.atoms[here].symbol != "C":
+            screened.add(here)
         if (term := _term(name, _REACH[distances[here] - 1])) is not None:
             terms.append(term)
     return terms
@@ -82,11 +94,34 @@ def _branching(structure: Structure, atom: int) -> list[Term]:
     own = len(structure.neighbours[atom])
     terms = []
     for near in structure.neighbours[atom]:
-        other = len(structure.neighbours[near])
-        row = _steric().get((own, min(other, 4)))
-        if structure.atoms[near].symbol == "C" and row is not None and float(row["delta_ppm"]):
+        other = min(_crowding(structure, near), 4)
+        if own == 1 and structure.atoms[near].symbol == "N":
+            continue  # trimethylamine at 47.6 and DMF at 36.5 and 31.5 ppm show no crowding (Fulmer 2010)
+        if (row := _steric().get((own, other))) is not None and float(row["delta_ppm"]):
             terms.append(Term(f"branching {own}({other})", float(row["delta_ppm"]), row["source"]))
     return terms
+
+
+def _crowding(structure: Structure, near: int) -> int:
+    """Branches of a neighbour as the corrections count them, 0 where its increment holds them already.
+
+    As in the worked examples of the scheme (from memory) nitrogen counts and the carboxyl family does not. An
+    aromatic ring turns its face and crowds like a CH2 (ethylbenzene, cumene, tert-butylbenzene: 28.9, 34.1,
+    34.6 ppm, from memory).
+    """
+    atom = structure.atoms[near]
+    if atom.symbol not in _BRANCHING or _carboxylic(structure, near) or _linear(structure, near):
+        return 0
+    return 2 if atom.aromatic else len(structure.neighbours[near])
+
+
+def _carboxylic(structure: Structure, atom: int) -> bool:
+    hetero = [n for n in structure.neighbours[atom] if structure.atoms[n].symbol in _MULTIPLE]
+    return structure.atoms[atom].symbol == "C" and _unsaturated(structure, atom) and len(hetero) > 1
+
+
+def _linear(structure: Structure, atom: int) -> bool:
+    return any(bond.order > 2 for bond in structure.bonds_of[atom])
 
 
 def _geminal(structure: Structure, atom: int) -> list[Term]:
