@@ -104,3 +104,15 @@ def test_any_text_is_read_or_named(text: str) -> None:
     for part in (*parsed.pieces, *parsed.unread):
         assert text[part.start : part.end] == part.text
         assert part.text
+
+
+@pytest.mark.parametrize("start", ["δ -0.21", "δ −0.21", ": –0.21", "δ = -0.21"])
+def test_first_shift_of_a_list_keeps_its_sign(start: str) -> None:
+    parsed = parse_report(f"1H NMR (400 MHz, CDCl3) {start} (s, 9H), 7.30 (m, 5H)")
+    assert sorted(s.lo for s in parsed.readings.h1) == [-0.21, 7.3]
+    assert parsed.unread == ()
+
+
+def test_accurate_mass_is_repeated_with_all_its_decimals() -> None:
+    parsed = parse_report("HRMS calcd for C9H11O2 [M+H]+ 151.0754, found 151.0757")
+    assert "found 151.0757 as [M+H]+, calculated 151.0754" in parsed.pieces[-1].means

@@ -151,8 +151,8 @@ def read_high_res(plain: str, start: int, end: int, into: Gathered) -> None:
         into.missed(start, masses[-1].end(), "It gives a calculated mass but none that was found.")
         return
     into.hrms = HighResMass(found, adduct or "[M+H]+", calc)
-    words = f"accurate mass: found {found:g} as {into.hrms.adduct}" + (
-        f", calculated {calc:g}" if calc else ""
+    words = f"accurate mass: found {found:.4f} as {into.hrms.adduct}" + (
+        f", calculated {calc:.4f}" if calc else ""
     )
     last = max(masses[-1].end(), label.end() if label else 0)
     into.took(start, last, words + (f", {into.formula}" if into.formula else ""))
