@@ -75,3 +75,8 @@ def cut(text: str, most: int = 88) -> str:
     """A text on one line, cut when long."""
     line = " ".join(text.split())
     return line if len(line) <= most else f"{line[: most - 3]}..."
+
+
+def unsaturations(degree: float | None) -> str:
+    """ "5 unsaturations", "1 unsaturation", nothing where it is unknown."""
+    return "" if degree is None else f"{degree:g} unsaturation{'' if degree == 1 else 's'}"

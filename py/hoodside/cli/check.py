@@ -6,25 +6,26 @@ import argparse
 from collections.abc import Iterator
 from typing import Any
 
-from hoodside.cli.answer import answer_all, columns
+from hoodside.cli.answer import answer_all, columns, unsaturations
+from hoodside.cli.case_document import check_object
 from hoodside.cli.files import read_json
 
 _MOST_FINDINGS = 12
 
 
 def run(options: argparse.Namespace) -> int:
-    """Weigh every case of the input."""
+    """Weigh every case of the input: check objects, or cases saved by the app."""
     cases, several = read_json(options.file)
-    return answer_all("check", cases, several, options.json, _lines)
+    return answer_all("check", [check_object(case) for case in cases], several, options.json, _lines)
 
 
 def _lines(answer: dict[str, Any]) -> Iterator[str]:
-    degree = answer.get("dbe")
-    facts = [answer["id"], answer["formula"], "" if degree is None else f"{degree:g} unsaturations"]
+    facts = [answer["id"], answer["formula"], unsaturations(answer.get("dbe"))]
     yield "  ".join(part for part in facts if part)
     yield from (f"! {warning}" for warning in answer["warnings"])
     candidates = _named(answer["candidates"])
-    yield from columns(_ranking(candidates), right=(2, 3))
+    if candidates:
+        yield from columns(_ranking(candidates), right=(2, 3))
     for candidate in candidates:
         yield from _reasons(candidate)
     yield from _next(answer["next"])

@@ -68,11 +68,34 @@ def _parser() -> argparse.ArgumentParser:
     parser.add_argument("--version", action="version", version=f"hoodside {hoodside.__version__}")
     commands = parser.add_subparsers(title="commands", metavar="COMMAND", required=True)
     for name, told, run, add in _COMMANDS:
-        command = commands.add_parser(name, help=told, description=told)
+        command = commands.add_parser(
+            name,
+            help=told,
+            description=told,
+            epilog=_FORMS.get(name),
+            formatter_class=argparse.RawDescriptionHelpFormatter,
+        )
         add(command)
         command.add_argument("--json", action="store_true", help="answer in JSON, one line per case")
         command.set_defaults(run=run)
     return parser
+
+
+#: What FILE may hold, shown below the help of a command.
+_FORMS = {
+    "check": """FILE is a case saved by the app, or an object such as
+  {"text": "1H NMR (400 MHz, CDCl3) δ 7.38 (m, 5H), 5.11 (s, 2H), 2.10 (s, 3H). IR (film) 1741 cm-1",
+   "formula": "C9H10O2", "candidates": ["CC(=O)OCc1ccccc1", "COC(=O)Cc1ccccc1"], "intended": 0, "rivals": 3}
+with the readings as a report under "text", or one by one:
+  "solvent": "CDCl3", "mhz": 400, "h1": [{"ppm": 5.11, "mult": "s", "j": [], "n": 2}], "c13": [66.3, 128.5],
+  "ir": [1741], "ir_clear": [[3200, 3600]], "ms": [{"mz": 150, "rel": 40}]
+An array of cases, or one case a line, is answered case by case.""",
+    "spins": """FILE is an object such as
+  {"nuclei": [{"ppm": 7.2}, {"ppm": 6.9}], "j": [[0, 1, 8.6]], "mhz": 60}""",
+    "amounts": """FILE is an object with its kind (ratio, conversion, yield, purity, solvent), such as
+  {"kind": "ratio", "species": [{"name": "ester", "signals": [{"integral": 2.0, "protons": 2}]},
+                                {"name": "alcohol", "signals": [{"integral": 0.7, "protons": 2}]}]}""",
+}
 
 
 def _file(command: argparse.ArgumentParser) -> None:

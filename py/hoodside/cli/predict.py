@@ -6,8 +6,9 @@ import argparse
 from collections.abc import Callable, Iterator
 from typing import Any
 
-from hoodside.cli.answer import answer_one, columns
+from hoodside.cli.answer import answer_one, columns, unsaturations
 from hoodside.cli.files import read_text
+from hoodside.weigh.words import carbon_words
 
 _MOST_IONS = 12
 
@@ -35,7 +36,7 @@ def _explained(answer: dict[str, Any]) -> Iterator[str]:
 
 
 def _lines(answer: dict[str, Any]) -> Iterator[str]:
-    degree = "" if answer["dbe"] is None else f"{answer['dbe']:g} unsaturations"
+    degree = unsaturations(answer["dbe"])
     yield f"{answer['smiles']}  {answer['formula']}  {answer['exact_mass']:.4f} u  {degree}".rstrip()
     yield ""
     yield f"1H, {answer['mhz']:g} MHz, {answer['solvent']}"
@@ -74,6 +75,5 @@ def _carbon(group: dict[str, Any]) -> list[object]:
         f"{group['ppm']:.1f}",
         f"± {group['sd']:.1f}",
         f"{group['n']} C",
-        group["kind"],
-        group["environment"],
+        carbon_words(group["kind"], group["environment"]),
     ]

@@ -7,6 +7,7 @@ from collections.abc import Iterator
 from typing import Any
 
 from hoodside.cli.answer import answer_one, columns
+from hoodside.cli.case_document import check_object
 from hoodside.cli.files import read_json
 from hoodside.cli.missing import needs
 
@@ -16,7 +17,7 @@ def run(options: argparse.Namespace) -> int:
     needs("rivals")
     asked: dict[str, Any] = {"smiles": options.smiles}
     if options.readings:
-        asked["readings"] = read_json(options.readings)[0][0]
+        asked["readings"] = check_object(read_json(options.readings)[0][0])
     if options.limit:
         asked["limit"] = options.limit
     return answer_one("rivals", asked, options.json, _lines)

@@ -68,18 +68,23 @@ _AROMATIC = {"benzene": "aromatic", "other": "heteroaromatic"}
 
 def carbon_name(group: CarbonGroup) -> str:
     """What a carbon is, such as "CH2 on O", "aromatic CH", "ester C"."""
-    words = group.environment.split()
+    return carbon_words(group.kind, group.environment)
+
+
+def carbon_words(kind: str, environment: str) -> str:
+    """A kind of carbon ("CH2") and the class its error is counted by ("sp3 chain O") in words."""
+    words = environment.split()
     if not words:
-        return group.kind
+        return kind
     if words[0] == "sp3" and len(words) == 3:
         beside = listed(_SYMBOL.findall(words[2]))
-        return f"{_RING_SIZES.get(words[1], '')}{group.kind} on {beside}"
+        return f"{_RING_SIZES.get(words[1], '')}{kind} on {beside}"
     if words[0] == "aromatic":
         ring = " ".join(words[1:])
-        return f"{_AROMATIC.get(ring, ring)} {group.kind}"
+        return f"{_AROMATIC.get(ring, ring)} {kind}"
     if words == ["alkene,", "hetero"]:
-        return f"alkene {group.kind} on a heteroatom"
-    return f"{group.environment} {group.kind}"
+        return f"alkene {kind} on a heteroatom"
+    return f"{environment} {kind}"
 
 
 def formula_text(formula: str) -> str:

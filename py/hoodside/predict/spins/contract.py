@@ -53,11 +53,32 @@ def spins_from_json(given: Mapping[str, Any]) -> dict[str, Any]:
     return answer
 
 
+#: Every key of a system, of a simulation and of a fit.
+_KEYS = frozenset(
+    {
+        *("mhz", "nuclei", "j", "linewidth_hz", "trace", "from_ppm", "to_ppm"),
+        *("lines", "free_shifts", "free_j", "id", "name", "note"),
+    }
+)
+
+
+def _known(given: Mapping[str, Any]) -> None:
+    """A key taken for another one would be a coupling left out without a word."""
+    for key in given:
+        if key not in _KEYS:
+            raise InvalidInputError(
+                f"A spin system has no {key!r}.",
+                hint='Couplings stand under "j" as [[0, 1, 8.6]], shifts under "nuclei" as [{"ppm": 7.2}].',
+                field=str(key),
+            )
+
+
 def system_from_json(given: Mapping[str, Any]) -> tuple[float, SpinSystem]:
     """Field (MHz) and spin system of the "mhz", "nuclei" and "j" of a JSON object.
 
     Raises: InvalidInputError naming the field, its value and the mend.
     """
+    _known(given)
     mhz = _number(given, "mhz", "")
     check_field(mhz)
     nuclei = _list(given.get("nuclei"), "nuclei")
