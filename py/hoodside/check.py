@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from typing import TYPE_CHECKING, Any
 
 from hoodside.advise.next import Standing, advise
@@ -13,9 +13,11 @@ from hoodside.predict.model import ProtonGroup
 from hoodside.readings import Readings
 from hoodside.readings.from_json import readings_from_json
 from hoodside.weigh.expectations import Expectations, expectations
+from hoodside.weigh.finding import Leftover
 from hoodside.weigh.sentence import name_of, sentence
 from hoodside.weigh.structure import Tally, weigh_structure
 from hoodside.weigh.verdict import CLASHES, Verdict, judge, shares
+from hoodside.weigh.words import capital, listed
 
 if TYPE_CHECKING:
     from hoodside.rivals import Rival
@@ -204,9 +206,31 @@ def _candidate(at: int, ranked: Sequence[Ranked]) -> dict[str, Any]:
         "findings": [f.to_dict() for f in tally.findings],
         "assignment": [link.to_dict() for link in tally.links],
         "missing": [left.to_dict() for left in tally.missing],
-        "unexplained": [left.to_dict() for left in tally.unexplained],
+        "unexplained": [_with_bearers(left, at, ranked).to_dict() for left in tally.unexplained],
         "expected": [_group(group) for group in tally.expected.h1],
     }
+
+
+#: A reading suits another structure when its place speaks for it by this much, decibans.
+_BEARS = 5.0
+
+
+def _with_bearers(left: Leftover, at: int, ranked: Sequence[Ranked]) -> Leftover:
+    """What a standing structure leaves unexplained, with the others that would show it: a mixture has two."""
+    if left.name or ranked[at].verdict.verdict == CLASHES:
+        return left
+    bearers = [r.name for i, r in enumerate(ranked) if i != at and _bears(r.tally, left.ref)]
+    if not bearers:
+        return left
+    verb = "has" if len(bearers) == 1 else "have"
+    return replace(
+        left, text=f"{left.text} {capital(listed(bearers))} {verb} a signal there: is it a mixture?"
+    )
+
+
+def _bears(tally: Tally, reading: str) -> bool:
+    places = (f for f in tally.findings if f.kind.endswith(".shift") and f.readings == (reading,))
+    return any(f.weight_db >= _BEARS for f in places)
 
 
 def _group(group: ProtonGroup) -> dict[str, Any]:

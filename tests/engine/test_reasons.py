@@ -111,3 +111,14 @@ def test_structure_beaten_by_one_that_only_the_formula_rules_out_does_not_fit():
     assert found[1]["verdict"] == "clashes"
     assert "-" not in found[0]["sentence"]
     assert "not C₉H₁₀O₂" in found[0]["sentence"]
+
+
+def test_what_is_left_over_points_to_the_starting_material_it_would_belong_to():
+    # Benzyl acetate with a third of the alcohol left: CH2O at 5.11 and 4.70 (common practice).
+    case = {
+        "text": "1H NMR (400 MHz, CDCl3) δ 7.4-7.2 (m, 5H), 5.11 (s, 1.3H), 4.7 (s, 0.7H), 2.1 (s, 1.9H)",
+        "candidates": ["CC(=O)OCc1ccccc1", "OCc1ccccc1"],
+    }
+    found = {c["index"]: c for c in check_case(case)["candidates"]}
+    assert found[0]["unexplained"][0]["text"].endswith("Structure B has a signal there: is it a mixture?")
+    assert "mixture" not in str(found[1]["unexplained"]) or found[1]["verdict"] != "clashes"

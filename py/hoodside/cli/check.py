@@ -51,6 +51,8 @@ def _reasons(candidate: dict[str, Any]) -> Iterator[str]:
     telling.sort(key=lambda f: f["weight_db"])
     rows = [[f"{f['weight_db']:+.1f}", f["kind"], f["text"]] for f in telling]
     yield from (f"   {line}" for line in columns(rows, right=(0,)))
+    said = {f["text"] for f in candidate["findings"]}
+    yield from (f"   {left['text']}" for left in candidate["unexplained"] if left["text"] not in said)
 
 
 def _next(measures: list[dict[str, Any]]) -> Iterator[str]:

@@ -17,7 +17,7 @@ export const verdictOf = (doc, found) => found.answer.candidates[subjectAt(doc, 
 
 /** The engine speaks of "structure B"; where the chemist gave it a name, that name is said.
  * @param {CaseDoc} doc @param {Checked} found @param {string} text */
-function named(doc, found, text) {
+export function named(doc, found, text) {
   return text.replace(/\b([Ss])tructure ([A-Z])\b/g, (whole, first, mark) => {
     const at = found.answer.candidates.findIndex(({ index }) => index !== null && letter(index) === mark);
     const name = at < 0 ? whole : structureName(doc, found, at);

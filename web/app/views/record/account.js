@@ -6,6 +6,13 @@ import { sentence } from '../../words/verdict.js';
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {import('../../state/check.js').Checked} Checked */
 
+/** "4.12 (q, J = 7.1 Hz, 2H)"; the bare shift while nothing else is known.
+ * @param {import('../../types').ProtonRow} row @param {boolean} raw */
+function signal(row, raw) {
+  const told = [row.mult, row.j && `J = ${row.j} Hz`, row.h && `${row.h}${raw ? ' steps' : 'H'}`].filter(Boolean).join(', ');
+  return dashed(row.shift) + (told && ` (${told})`);
+}
+
 /** The readings as a chemist would print them, one line per kind. @param {CaseDoc} doc @returns {string[]} */
 export function readingLines(doc) {
   const where = [doc.mhz && `${doc.mhz} MHz`, doc.solvent].filter(Boolean).join(', ');
@@ -17,7 +24,7 @@ export function readingLines(doc) {
   if (found.length) lines.push(`Combustion, found: ${found.map(([element, text]) => `${element} ${text}`).join(', ')}`);
   if (doc.ir.length) lines.push(`IR${doc.irMedium ? ` (${doc.irMedium})` : ''}: ${highFirst(doc.ir, (band) => band.cm1).map((band) => `${band.cm1}${band.strength || band.shape ? ` (${[band.shape, band.strength].filter(Boolean).join(', ')})` : ''}`).join(', ')} cm-1`);
   if (doc.irClear.length) lines.push(`IR clear: ${doc.irClear.map((row) => dashed(`${row.hi}-${row.lo}`)).join(', ')} cm-1`);
-  if (doc.h1.length) lines.push(`1H NMR${where ? ` (${where})` : ''}: ${highFirst(doc.h1, (row) => row.shift).map((row) => `${dashed(row.shift)} (${[row.mult, row.j && `J = ${row.j} Hz`, row.h && `${row.h}${doc.raw ? ' steps' : 'H'}`].filter(Boolean).join(', ')})`).join(', ')}`);
+  if (doc.h1.length) lines.push(`1H NMR${where ? ` (${where})` : ''}: ${highFirst(doc.h1, (row) => row.shift).map((row) => signal(row, doc.raw)).join(', ')}`);
   if (doc.c13.length) lines.push(`13C NMR${doc.solvent ? ` (${doc.solvent})` : ''}: ${highFirst(doc.c13, (row) => row.ppm).map((row) => row.ppm + (row.kind ? ` (${row.kind})` : '')).join(', ')}`);
   for (const row of doc.wet) lines.push(`${row.test}: ${row.result}`);
   return lines;

@@ -2,6 +2,7 @@ import { html } from 'htm/preact';
 import { Words } from '../../components/chem.js';
 import { Section } from '../../components/parts.js';
 import { signed } from '../../words/numbers.js';
+import { named } from '../../words/verdict.js';
 import { readingLabel } from './row-data.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
@@ -28,5 +29,5 @@ export function Leftovers({ doc, found, at }) {
     ${candidate.unexplained.length > 0 && html`<${Section} title="Seen but not explained" id="stray-head">
       <ul class="plain-list">${candidate.unexplained.map((left) => html`<li key=${left.ref}>
         <span><b><${Words} text=${readingLabel(doc, found, left.ref)} /></b><span class="source"><${Words}
-          text=${left.text} /></span></span></li>`)}</ul><//>`}`;
+          text=${named(doc, found, left.text)} /></span></span></li>`)}</ul><//>`}`;
 }
