@@ -76,13 +76,18 @@ def splittings(k: int, groups: Sequence[ProtonGroup], couplings: Sequence[Coupli
 
 
 def combined_pattern(
-    members: Sequence[int], groups: Sequence[ProtonGroup], couplings: Sequence[Coupling]
+    members: Sequence[int],
+    groups: Sequence[ProtonGroup],
+    couplings: Sequence[Coupling],
+    resolved: float = RESOLVED,
+    within: float = MERGED,
 ) -> tuple[str, tuple[float, ...]]:
-    """Name and J (Hz) of the one signal that several groups make when their shifts coincide.
+    """Name and J (Hz) of the one signal that some groups make when their shifts coincide.
 
-    Couplings within the signal do not show; those to others average over its members.
+    Couplings within the signal do not show; those to others average over its members. Splittings below
+    ``resolved`` Hz are not seen, those ``within`` so many Hz of each other read as one.
     """
-    parts = merged(_resolved(set(members), groups, couplings))
+    parts = merged([s for s in _splittings(set(members), groups, couplings) if s.hz >= resolved], within)
     return name_of(parts), tuple(round(s.hz, _DECIMALS) for s in parts)
 
 
