@@ -111,6 +111,7 @@ REFUSED = [
     ("C=C", "insert", {"bond": 0, "symbol": "O"}, "bond"),
     ("CC(C)(C)C(C)(C)C", "fuse_ring", {"bond": 3, "size": 5}, "atom"),
     ("CCC", "set_stereo", {"atom": 1, "label": "R"}, "atom"),
+    ("CCN1CC1C", "set_stereo", {"atom": 2, "label": "R"}, "atom"),  # inverts (Brois 1967; from memory)
     ("CC=C", "set_double_bond", {"bond": 1, "label": "E"}, "bond"),
     ("C", "remove", {"atom": 0}, "atom"),
     ("CC", "melt", {}, "step"),

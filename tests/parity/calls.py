@@ -119,29 +119,6 @@ def outcome_list(smiles: str, reagents: str) -> list[list[str]]:
     return [[o.smiles, o.role] for o in find_outcomes(read_structure(smiles), reagents).outcomes]
 
 
-def grown(source: str, picks: list[float]) -> list[list[str]]:
-    """(step, SMILES or code of the refusal) of a chain of offered steps.
-
-    Each two picks between 0 and 1 say which atom or bond is touched, and which of its options is taken.
-    """
-    from hoodside.molecule.edit import apply
-    from hoodside.molecule.edit_options import options_at
-
-    now, told = read_structure(source), []
-    for place, choice in zip(picks[::2], picks[1::2], strict=True):
-        at = int(place * (len(now.atoms) + len(now.bonds)))
-        atom = at < len(now.atoms)
-        offered = options_at(now, atom=at) if atom else options_at(now, bond=at - len(now.atoms))
-        option = offered[int(choice * len(offered))]
-        arguments = {**option.arguments, **({"b": 0} if option.needs_atom else {})}
-        try:
-            now = apply(now, option.step, arguments)
-            told.append([option.step, now.smiles])
-        except HoodsideError as err:
-            told.append([option.step, err.code])
-    return told
-
-
 def redrawn(source: str, step: str, arguments: dict[str, Any]) -> str:
     """One editing step as the door answers it, drawing and all."""
     from hoodside.engine import handle

@@ -7,12 +7,13 @@ from hoodside.molecule.edit_common import atom_at, bond_at, finished, refused
 from hoodside.molecule.kernel import kernel
 from hoodside.molecule.structure import Bond, Structure
 
+_THREE_RING = 3
 _BOTH_MARKS: tuple[Mark, Mark] = ("cw", "ccw")
 
 
 def is_stereocentre(structure: Structure, atom: int) -> bool:
     """Whether an atom can hold a configuration (set already or still open)."""
-    return atom in centre_labels(_marked(structure, atom, "cw"))
+    return not _inverts(structure, atom) and atom in centre_labels(_marked(structure, atom, "cw"))
 
 
 def is_stereobond(structure: Structure, bond: int) -> bool:
@@ -27,11 +28,18 @@ def set_stereo(structure: Structure, atom: int, label: str) -> Structure:
     """Give a stereocentre the CIP label "R" or "S" ("r" or "s" where those apply), or "" to leave it open."""
     if not label:
         return _marked(structure, atom, "")
-    for mark in _BOTH_MARKS:
+    for mark in () if _inverts(structure, atom) else _BOTH_MARKS:
         made = _marked(structure, atom, mark)
         if made.atoms[atom].stereo and centre_labels(made).get(atom, "").lower() == label.lower():
             return made
     raise _no_centre(atom, f"Atom {atom} cannot be {label}.")
+
+
+def _inverts(structure: Structure, atom: int) -> bool:
+    """Whether nitrogen of an aziridine, which turns inside out too fast to hold a configuration."""
+    found = atom_at(structure, atom)
+    ligands = len(structure.neighbours[atom]) + found.hydrogens
+    return found.symbol == "N" and ligands == _THREE_RING and _THREE_RING in structure.rings_of[atom]
 
 
 def flip_stereo(structure: Structure, atom: int) -> Structure:

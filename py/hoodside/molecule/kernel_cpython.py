@@ -140,7 +140,19 @@ def _parse(source: str) -> Any:
             log.append(str(err))
     if mol is None:
         raise parse_failure(source, "\n".join(log))
+    _clear_inverting_nitrogen(mol)
     return mol
+
+
+def _clear_inverting_nitrogen(mol: Any) -> None:
+    """Nitrogen of an aziridine holds no configuration; the wasm forgets marks there, so both do."""
+    unmarked = Chem.ChiralType.CHI_UNSPECIFIED
+    marked = [a for a in mol.GetAtoms() if a.GetAtomicNum() == 7 and a.GetChiralTag() != unmarked]
+    inverting = [a for a in marked if a.GetTotalDegree() == 3 and a.IsInRingSize(3)]
+    for atom in inverting:
+        atom.SetChiralTag(unmarked)
+    if inverting:
+        Chem.AssignStereochemistry(mol, cleanIt=True, force=True)
 
 
 def _from_graph(source: str) -> Any:
