@@ -47,7 +47,7 @@ def check_case(case: dict[str, Any]) -> dict[str, Any]:
     """
     readings = readings_from_json(case)
     candidates = candidates_of(case)
-    ranked = rank(readings, candidates, rivals_of(case, readings, candidates))
+    ranked = rank(readings, candidates, rivals_of(case, readings, candidates), stated_of(case))
     formula = _formula(readings, ranked)
     warnings = [*readings.warnings, *_doubts(readings, ranked)]
     return {
@@ -97,21 +97,38 @@ def _smiles(entry: object, field: str) -> str:
         raise StructureError(str(err), hint=err.hint, field=field, value=entry) from err
 
 
-def rank(readings: Readings, candidates: Sequence[str], rivals: Sequence[Rival] = ()) -> list[Ranked]:
-    """Candidates and rivals weighed and judged, best first. Raises: StructureError naming the candidate."""
+def rank(
+    readings: Readings,
+    candidates: Sequence[str],
+    rivals: Sequence[Rival] = (),
+    stated: Sequence[tuple[str, Rival]] = (),
+) -> list[Ranked]:
+    """Candidates and rivals weighed and judged, best first. Raises: StructureError naming the candidate.
+
+    Of ``rivals`` the best are kept; those that a step may have left, ``stated`` with their names, all stay.
+    """
     tallies = [_tally(source, readings, f"candidates[{i}]") for i, source in enumerate(candidates)]
     mine = {t.expected.structure.inchikey for t in tallies}
-    found = [(r, _tally(r.smiles, readings, "rivals")) for r in rivals]
-    found = [(r, t) for r, t in found if t.expected.structure.inchikey not in mine]
-    found = sorted(found, key=lambda entry: -entry[1].weight_db)[: len(rivals) // POOL]
-    tallies += [t for _, t in found]
+    left = _others([rival for _, rival in stated], readings, mine)
+    mine |= {tally.expected.structure.inchikey for _, tally in left}
+    found = sorted(_others(rivals, readings, mine), key=lambda entry: -entry[1].weight_db)
+    put_up = [*left, *found[: len(rivals) // POOL]]
+    tallies += [t for _, t in put_up]
+    called = {rival.smiles: name for name, rival in stated}
+    names = [called.get(r.smiles) or f"rival {i + 1 - len(left)}" for i, (r, _) in enumerate(put_up)]
     verdicts, parts = judge(tallies), shares(tallies)
     ranked = []
     for i, tally in enumerate(tallies):
         at = i - len(candidates)
-        name, how = (name_of(i), ()) if at < 0 else (f"rival {at + 1}", found[at][0].how)
+        name, how = (name_of(i), ()) if at < 0 else (names[at], put_up[at][0].how)
         ranked.append(Ranked(i if at < 0 else None, name, tally, verdicts[i], parts[i], how))
     return sorted(ranked, key=lambda r: -r.tally.weight_db)
+
+
+def _others(rivals: Sequence[Rival], readings: Readings, known: set[str]) -> list[tuple[Rival, Tally]]:
+    """Rivals weighed, without those whose InChIKey is known already."""
+    found = [(rival, _tally(rival.smiles, readings, "rivals")) for rival in rivals]
+    return [(rival, tally) for rival, tally in found if tally.expected.structure.inchikey not in known]
 
 
 #: So many rivals are weighed for each one asked for; the best are kept.
@@ -139,6 +156,16 @@ def rivals_of(case: dict[str, Any], readings: Readings, candidates: Sequence[str
     known = bool(readings.formula or readings.hrms or readings.analysis)
     found = find_rivals(structure, formula_known=known, readings=readings, limit=POOL * wanted)
     return found.rivals
+
+
+def stated_of(case: dict[str, Any]) -> tuple[tuple[str, Rival], ...]:
+    """What the step of a check object may have left, each with its name. Raises: as ``step_from_json``."""
+    if case.get("step") is None:
+        return ()
+    from hoodside.rivals.stated import stated_rivals, step_from_json
+
+    step = step_from_json(case["step"])
+    return stated_rivals(step) if step else ()
 
 
 def _tally(source: str, readings: Readings, field: str) -> Tally:

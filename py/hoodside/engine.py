@@ -40,6 +40,7 @@ METHODS: dict[str, str] = {
     "outcomes": "steps:outcomes",
     "reagents": "steps:reagents",
     "rivals": "rivals:rivals",
+    "hunt": "hunting:hunt",
     "proposals": "proposals:proposals",
     "changes": "changes:changes",
     "amounts": "quantities:amounts",

@@ -31,7 +31,7 @@ STEPS = (
     {"predict", "names"},
     {"weigh", "rivals", "amounts", "record"},
     {"advise"},
-    {"check"},
+    {"check", "hunt"},
     {"methods"},
     {"engine"},
     {"cli"},

@@ -81,6 +81,18 @@ GOOD: list[tuple[str, dict[str, Any]]] = [
     ("edit", {"structure": "CCCO", "step": "attach", "arguments": {"atom": 0, "group": "CO", "order": 1}}),
     ("outcomes", {"structure": "CCC=C", "reagents": "OsO4, NMO", "partner": "CCBr", "kind": ""}),
     ("reagents", {"query": "os"}),
+    (
+        "hunt",
+        {
+            "structure": "CCO",
+            "readings": {"formula": "C2H6O"},
+            "limit": 2,
+            "formula_known": True,
+            "allowed": True,
+            "step": {"start": "CC=O", "reagents": "NaBH4", "partner": "C"},
+            "slice_ms": 50,
+        },
+    ),
     ("rivals", {"structure": "CCO", "readings": {"formula": "C2H6O"}, "limit": 2, "formula_known": True}),
     ("proposals", {"readings": READINGS, "limit": 2}),
     ("changes", {"start": "CCCO", "product": "CCC=O", "solvent": "CDCl3", "mhz": 400}),

@@ -12,6 +12,7 @@ from hoodside.readings.fields import flag, refusal
 from hoodside.readings.from_json import readings_from_json
 from hoodside.readings.model import Readings
 from hoodside.rivals import Rival, find_rivals
+from hoodside.rivals.stated import stated_rivals, step_from_json
 
 USUAL_LIMIT = 50
 MOST = 1_000
@@ -23,14 +24,21 @@ def rivals(
     readings: dict[str, Any] | None = None,
     limit: int = USUAL_LIMIT,
     formula_known: bool = True,
+    step: dict[str, Any] | None = None,
 ) -> dict[str, Any]:
-    """Structures that might fit as well, most plausible first, each with how it was reached."""
+    """Structures that might fit as well, most plausible first, each with how it was reached.
+
+    Those that a stated step may have left come first and beside ``limit``.
+    """
     given = structure_of(short_text(structure or smiles or None, "structure"))
+    ran = step_from_json(step)
+    stated = [rival for _, rival in stated_rivals(ran)] if ran else []
     found = find_rivals(
         given,
         formula_known=flag(formula_known, "formula_known"),
         readings=_readings(readings),
         limit=integer(limit, "limit", 1, MOST),
+        stated=stated,
     )
     return {
         "rivals": [_rival(rival) for rival in found.rivals],

@@ -43,7 +43,8 @@ _KEYS = (
     "text",
 )
 #: Keys of a check that are no readings.
-_OTHER_KEYS = ("candidates", "intended", "rivals", "warnings", "name", "title", "note", "notes", "source")
+_OF_THE_CHECK = ("candidates", "intended", "rivals", "step")
+_OTHER_KEYS = (*_OF_THE_CHECK, "warnings", "name", "title", "note", "notes", "source")
 
 
 def readings_from_json(obj: dict[str, Any]) -> Readings:

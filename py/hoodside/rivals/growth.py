@@ -37,7 +37,8 @@ _LEAST = 0.6
 _MOST_MOVES = 3
 #: Structures less likely than this are no stepping stones.
 _STONE = 2.5
-_SLICE = 25
+#: What sets one rival that stands anyhow behind the one before it.
+_STATED = 1e-6
 #: Penalty from which an enumerated structure is no longer called sensible.
 SENSIBLE = 4.0
 
@@ -96,18 +97,19 @@ class Growth:
         #: (total cost, rival), in the order found
         self.found: list[tuple[float, Rival]] = []
 
-    def run(self) -> Iterator[list[Rival]]:
-        """Rivals in slices, roughly best first."""
+    def run(self) -> Iterator[None]:
+        """Works in small pieces; what they give stands in ``found``, roughly best first."""
         if not self._count:
             self._start()
-        told = len(self.found)
+            yield
         while self._heap and self.looked_at < self.budget and not self._settled():
             self._take(*heapq.heappop(self._heap))
-            if len(self.found) >= told + _SLICE:
-                yield [rival for _, rival in self.found[told:]]
-                told = len(self.found)
-        if told < len(self.found):
-            yield [rival for _, rival in self.found[told:]]
+            yield
+
+    @property
+    def frontier(self) -> float:
+        """What is found from here on costs no less."""
+        return self._heap[0][0] if self._heap else math.inf
 
     def best(self) -> list[Rival]:
         """The best so far, most plausible first."""
@@ -182,6 +184,15 @@ class Growth:
         heapq.heappush(self._dearest, -total)
         if len(self._dearest) > self._limit:
             heapq.heappop(self._dearest)
+
+    def put_up(self, rival: Rival) -> None:
+        """Put up a rival that stands whatever moves and readings say; never the structure itself."""
+        name = name_of(rival.smiles)
+        if name not in self._seen:
+            self._seen |= {name, tautomer_key(name)}
+            cost = _STATED * len(self.found)  # they stay in the order in which they were put up
+            self._limit += 1  # it takes no place from those that are searched
+            self._record(cost, Rival(name, rival.how, rival.distance, rival.plausibility))
 
     def add(self, smiles: str, cost: float, how: str) -> float | None:
         """Put up a structure from elsewhere unless it is known; what speaks against it, None when known."""

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import time
-from collections.abc import Callable, Iterator
+from collections.abc import Callable, Iterator, Sequence
 
 from hoodside.errors import FormulaError, StructureError
 from hoodside.molecule.structure import Structure, read_structure
@@ -41,6 +41,7 @@ def find_rivals(
     limit: int = 200,
     budget_s: float | None = None,
     steps: int | None = None,
+    stated: Sequence[Rival] = (),
     on_progress: Callable[[list[Rival]], bool | None] | None = None,
 ) -> RivalsFound:
     """Look-alikes of a structure, most plausible first.
@@ -51,15 +52,16 @@ def find_rivals(
         limit: how many to keep.
         budget_s: seconds after which the search stops with what it has (None: no limit in time).
         steps: how many structures to look at in all (None: by ``limit``).
+        stated: rivals that stand first whatever the search and the readings say, beside ``limit``.
         on_progress: called with every slice found; a true answer stops the search.
     """
-    search = _Search(structure, formula_known, readings, limit, steps)
+    search = Search(structure, formula_known, readings, limit, steps, stated)
     began = time.monotonic()
-    for batch in search.run():
+    for batch in search.slices():
         asked = bool(on_progress and on_progress(batch))
         if asked or (budget_s is not None and time.monotonic() - began > budget_s):
-            return RivalsFound(tuple(search.growth.best()), False, "Stopped early; there may be more.")
-    return RivalsFound(tuple(search.growth.best()), search.complete, search.note)
+            return RivalsFound(tuple(search.best()), False, "Stopped early; there may be more.")
+    return RivalsFound(tuple(search.best()), search.complete, search.note)
 
 
 def iterate_rivals(
@@ -71,11 +73,15 @@ def iterate_rivals(
     steps: int | None = None,
 ) -> Iterator[list[Rival]]:
     """Slices of rivals as they are found, for a caller that shows progress and may stop at any slice."""
-    yield from _Search(structure, formula_known, readings, limit, steps).run()
+    yield from Search(structure, formula_known, readings, limit, steps).slices()
 
 
-class _Search:
-    """Growth by moves, then, where the formula is small, whatever isomers are left."""
+class Search:
+    """Growth by moves, then, where the formula is small, whatever isomers are left.
+
+    Attributes:
+        complete: every sensible isomer was found; known when ``run`` has ended, as is ``note``.
+    """
 
     def __init__(
         self,
@@ -83,7 +89,8 @@ class _Search:
         formula_known: bool,
         readings: Readings | None,
         limit: int,
-        steps: int | None,
+        steps: int | None = None,
+        stated: Sequence[Rival] = (),
     ) -> None:
         self._structure, self._limit = structure, limit
         self._small = formula_known and _is_small(structure)
@@ -91,20 +98,54 @@ class _Search:
         budget = min(self._steps, _STEPS_WHEN_SMALL) if self._small else self._steps
         keep = early_test(readings) if readings else lambda smiles: True
         moves = steps_from if formula_known else moves_and_swaps
-        self.growth = Growth(structure, limit, budget, keep, moves)
+        self._growth = Growth(structure, limit, budget, keep, moves)
+        for rival in stated:
+            self._growth.put_up(rival)
+        mine = formula_of(structure)
+        self._others = sum(formula_of(read_structure(rival.smiles)) != mine for _, rival in self.found)
         self.complete = False
         self.note = ""
 
-    def run(self) -> Iterator[list[Rival]]:
-        """Rivals in slices."""
-        yield from self.growth.run()
+    @property
+    def found(self) -> list[tuple[float, Rival]]:
+        """What was found so far, each with its cost: the less, the more plausible."""
+        return self._growth.found
+
+    @property
+    def looked_at(self) -> int:
+        """How many structures were looked at so far."""
+        return self._growth.looked_at
+
+    def best(self) -> list[Rival]:
+        """The best so far, most plausible first."""
+        return self._growth.best()
+
+    def sure(self) -> list[Rival]:
+        """Those of the best so far that nothing found later can displace."""
+        frontier = self._growth.frontier
+        costs = {rival.smiles: cost for cost, rival in self.found}
+        return [rival for rival in self.best() if costs[rival.smiles] <= frontier]
+
+    def slices(self) -> Iterator[list[Rival]]:
+        """Rivals as they are found, a slice at a time."""
+        told = 0
+        for _ in self.run():
+            if len(self.found) >= told + _SLICE:
+                yield [rival for _, rival in self.found[told:]]
+                told = len(self.found)
+        if told < len(self.found):
+            yield [rival for _, rival in self.found[told:]]
+
+    def run(self) -> Iterator[None]:
+        """Works in small pieces, so that a caller may do other things between them or stop."""
+        yield from self._growth.run()
         if self._small:
             isomers = self._isomers()
             if isomers is not None:
                 yield from self._add_all(isomers)
             else:
-                self.growth.budget = self._steps
-                yield from self.growth.run()
+                self._growth.budget = self._steps
+                yield from self._growth.run()
 
     def _isomers(self) -> tuple[str, ...] | None:
         """All isomers, None when there are too many."""
@@ -114,30 +155,26 @@ class _Search:
             return None
         return found.smiles if found.complete and len(found.smiles) <= _SMALL_COUNT else None
 
-    def _add_all(self, isomers: tuple[str, ...]) -> Iterator[list[Rival]]:
+    def _add_all(self, isomers: tuple[str, ...]) -> Iterator[None]:
         formula = formula_of(self._structure).text
-        told = len(self.growth.found)
         for smiles in isomers:
             self._add(smiles, f"found among all isomers of {formula}")
-            if len(self.growth.found) >= told + _SLICE:
-                yield [rival for _, rival in self.growth.found[told:]]
-                told = len(self.growth.found)
-        yield [rival for _, rival in self.growth.found[told:]]
+            yield
         self._conclude(formula)
 
     def _add(self, smiles: str, how: str) -> None:
         flat = graph_of(read_structure(smiles))
         for cis, form in double_bond_forms(flat):
             try:
-                doubt = self.growth.add(write_smiles(form), _ENUMERATED + cis / 2, how)
+                doubt = self._growth.add(write_smiles(form), _ENUMERATED + cis / 2, how)
             except StructureError:
                 continue
             if doubt is not None and doubt >= SENSIBLE:
                 return
 
     def _conclude(self, formula: str) -> None:
-        sensible = len(self.growth.found)
-        self.complete = sensible <= self._limit
+        sensible = len(self.found) - self._others
+        self.complete = len(self.found) == len(self.best())
         if self.complete:
             self.note = (
                 f"Complete: every sensible isomer of {formula} of the usual valences is here, E and Z apart; "
