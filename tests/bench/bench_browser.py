@@ -1,4 +1,4 @@
-"""Start-up, warm check, size and memory of the app in Chromium, kept on the device, network off."""
+"""Start-up, warm work, size and memory of the app in Chromium, kept on the device, network off."""
 
 from __future__ import annotations
 
@@ -16,6 +16,7 @@ from typing import Any
 
 from playwright.sync_api import Page, Playwright, sync_playwright
 
+from bench.browser_work import warm_work
 from bench.tables import Figure, print_figures
 from bench.thread_time import worker_ms
 from browser.stand import (
@@ -111,6 +112,7 @@ def run() -> None:
         _install(device, _dist_with_stock(Path(scratch)))
         print_figures([_size(), *_starts(device)])
         print_figures(_checks(device))
+        print_figures(_work(device))
 
 
 @dataclass
@@ -215,6 +217,13 @@ def _checks(device: Device) -> list[Figure]:
         _median("the same on CPython, warm", _checks_on_cpython()),
         Figure("worker memory, peak of both wasm heaps", held, "MB", most=150, note=parts),
     ]
+
+
+def _work(device: Device) -> list[Figure]:
+    with device.opened() as page:
+        page.evaluate(START_ENGINE)
+        call(page, "about", {})
+        return warm_work(page, device.profile)
 
 
 def _checks_on_cpython() -> list[float]:
