@@ -51,6 +51,15 @@ def test_rows_are_read_as_typed_and_empty_ones_left_out() -> None:
     assert (found["candidates"], found["intended"], "hrms" in found) == (["CCO"], 0, False)
 
 
+def test_the_step_that_was_run_goes_along() -> None:
+    compound = {"smiles": "C=Cc1ccccc1", "name": "styrene"}
+    run = {"start": compound, "partner": None, "steps": [["O3"], ["Me2S"]]}
+    asked = check_object({"kind": "hoodside-case", "run": run, "structures": [{"source": "O=Cc1ccccc1"}]})
+    assert asked["step"] == {"start": "C=Cc1ccccc1", "reagents": "1) O3 2) Me2S"}
+    assert "the start" in {c["name"] for c in call("check", asked)["candidates"]}
+    assert "step" not in check_object({"kind": "hoodside-case", "run": {"start": None, "steps": []}})
+
+
 def test_what_is_no_number_is_named_by_the_check(capsys: pytest.CaptureFixture[str], tmp_path: Path) -> None:
     path = tmp_path / "case.json"
     path.write_text(

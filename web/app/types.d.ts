@@ -18,8 +18,16 @@ export interface Candidate { id: string; source: string; name: string; smiles: s
 /** What the case list shows without waking the chemistry. */
 export interface Summary { verdict: Verdict; text: string; lead: string }
 
-/** A look-alike the engine put up: how it was reached, a move each. */
-export interface Rival { smiles: string; how: string[]; distance: number; plausibility: number; formula: string }
+/** A look-alike the engine put up: how it was reached, a move each. Weight and verdict are null until it is weighed. */
+export interface Rival {
+  smiles: string; how: string[]; distance: number; plausibility: number; formula: string;
+  weight_db: number | null; verdict: Verdict | null; reason: string;
+}
+
+/** A compound put into a step: the start or its partner. */
+export interface Compound { smiles: string; name: string }
+/** What was run to make the sample. `steps` hold reagents by name, in the order they were added. */
+export interface Ran { start: Compound | null; partner: Compound | null; steps: string[][] }
 
 export type AmountKind = 'ratio' | 'conversion' | 'yield' | 'purity' | 'solvent';
 /** A signal that stands for a portion: a 1H row, its integral where it differs from the row's, and the H of the portion in it. */
@@ -65,6 +73,7 @@ export interface CaseDoc {
   amounts?: Amounts;
   /** SMILES of look-alikes waved away. */
   dismissed?: string[];
+  run?: Ran;
   last: Summary | null;
 }
 
@@ -79,9 +88,10 @@ export interface Finding {
 export interface Assigned { reading: string; predicted: string; atoms: number[] }
 /** A prediction without a reading, or a reading without a prediction; `name` is what it probably is. */
 export interface Leftover { ref: string; text: string; name: string; atoms: number[] }
-/** A candidate as weighed. `index` is its place among the candidates asked about, null for a rival. */
+/** A candidate as weighed. `index` is its place among the candidates asked about, null for a rival; `how` says how
+ * a rival was reached. */
 export interface Weighed {
-  smiles: string; origin: string; index: number | null; formula: string; ok_formula: boolean; verdict: Verdict;
+  smiles: string; origin: string; index: number | null; name: string; how: string[]; formula: string; ok_formula: boolean; verdict: Verdict;
   reason: string; sentence: string; weight_db: number; share: number; findings: Finding[]; assignment: Assigned[];
   missing: Leftover[]; unexplained: Leftover[]; expected: Omit<ProtonGroup, 'equivalence' | 'terms'>[];
 }

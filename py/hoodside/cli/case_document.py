@@ -47,6 +47,7 @@ def check_object(case: Any) -> Any:
         "hrms": _accurate(case.get("hrms")),
         "analysis": _picked(case.get("analysis") or {}, dict.fromkeys(case.get("analysis") or {}, _number)),
         "candidates": [_typed(s, "smiles") or _typed(s, "source") for s in structures],
+        "step": _step(case.get("run")),
         "intended": next((i for i, s in enumerate(structures) if s.get("id") == case.get("intended")), None),
     }
     return {
@@ -93,6 +94,21 @@ def _accurate(hrms: Any) -> Row:
     if not isinstance(hrms, dict) or not _typed(hrms, "found"):
         return {}
     return _picked(hrms, {"found": _number, "adduct": str, "ppm": _number})
+
+
+def _step(run: Any) -> Row:
+    """What was run: the start, reagents in turn ("1) O3 2) Me2S"), the partner."""
+    if not isinstance(run, dict) or not isinstance(run.get("start"), dict):
+        return {}
+    turns = [", ".join(map(str, turn)) for turn in run.get("steps") or [] if isinstance(turn, list) and turn]
+    reagents = turns[0] if len(turns) == 1 else " ".join(f"{i + 1}) {turn}" for i, turn in enumerate(turns))
+    partner = run["partner"] if isinstance(run.get("partner"), dict) else {}
+    found = {
+        "start": _typed(run["start"], "smiles"),
+        "reagents": reagents,
+        "partner": _typed(partner, "smiles"),
+    }
+    return {key: value for key, value in found.items() if value} if found["start"] else {}
 
 
 def _number(text: str) -> Any:

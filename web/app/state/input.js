@@ -1,5 +1,6 @@
 import { highFirst } from '../words/readings.js';
 import { toNumber, toNumbers, toRange } from '../words/numbers.js';
+import { textOf } from '../words/steps.js';
 
 /** @typedef {import('../types').CaseDoc} CaseDoc */
 /** @typedef {import('../types').ProtonRow} ProtonRow */
@@ -82,4 +83,10 @@ function addLoose(doc, { params, refs }) {
   if (found > 0) params.hrms = { adduct: doc.hrms.adduct, found, ppm: toNumber(doc.hrms.ppm) || 5 };
   const analysis = Object.entries(doc.analysis).filter(([, text]) => toNumber(text) > 0);
   if (analysis.length) params.analysis = Object.fromEntries(analysis.map(([el, text]) => [el, toNumber(text)]));
+}
+
+/** The step that was run, as the engine takes it; nothing while no start is named. @param {CaseDoc} doc */
+export function stepInput({ run }) {
+  if (!run?.start) return {};
+  return { step: { start: run.start.smiles, reagents: textOf(run.steps), ...(run.partner && { partner: run.partner.smiles }) } };
 }

@@ -15,9 +15,9 @@ export function nameOf(doc, id) {
   return found ? found.name || `structure ${letterOf(doc, id)}` : '';
 }
 
-/** Name of the weighed candidate at `at`; rivals are numbered as they stand.
+/** Name of the weighed candidate at `at`; a rival is called what the engine's sentences call it.
  * @param {CaseDoc} doc @param {import('../state/check.js').Checked} found @param {number} at */
 export function structureName(doc, found, at) {
   const id = found.order[at] ?? '';
-  return id ? nameOf(doc, id) : `rival ${found.order.slice(0, at + 1).filter((entry) => !entry).length}`;
+  return id ? nameOf(doc, id) : found.answer.candidates[at]?.name ?? '';
 }

@@ -9,7 +9,7 @@ import { Working } from '../../components/working.js';
 import { changeWithUndo } from '../../state/cases.js';
 import { newId } from '../../state/document.js';
 import { ask } from '../../state/engine.js';
-import { hunt, huntKey, hunts, stopHunt } from '../../state/rivals.js';
+import { hunt, huntQuestion, hunts, LIMIT, stopHunt } from '../../state/rivals.js';
 import { address } from '../../state/route.js';
 import { plural, signed } from '../../words/numbers.js';
 import { nameOf } from '../../words/structures.js';
@@ -24,62 +24,66 @@ import { CaseSign } from '../case/sign.js';
 const NEAR_DB = 10;
 const HOW = [{ value: 'allowed', text: 'the readings allow' }, { value: 'all', text: 'all look-alikes' }];
 
-/** Look-alikes of the structure of the verdict: searched, weighed, kept or dismissed. @param {{ doc: CaseDoc }} props */
+/** Look-alikes of the structure of the verdict: searched, weighed, kept or dismissed. Leaving the sheet stops the search;
+ * coming back goes on with it. @param {{ doc: CaseDoc }} props */
 export function RivalsSheet({ doc }) {
   const subject = doc.structures.find(({ id }) => id === doc.intended) ?? doc.structures[0];
   const smiles = subject?.smiles ?? '';
   const [which, setWhich] = useState('allowed');
-  const key = smiles ? huntKey(doc, smiles, which === 'allowed') : '';
+  const question = smiles ? huntQuestion(doc, smiles, which === 'allowed') : null;
+  const key = question ? JSON.stringify(question) : '';
   const found = hunts.value[doc.id];
   const current = found?.key === key ? found : null;
-  useEffect(() => { if (key && hunts.peek()[doc.id]?.key !== key) hunt(doc, smiles, which === 'allowed'); }, [key]);
+  const goOn = () => { if (question) hunt(doc.id, question); };
+  useEffect(() => {
+    const known = hunts.peek()[doc.id];
+    if (key && (known?.key !== key || !(known.done || known.stopped || known.fault))) goOn();
+    return () => stopHunt(doc.id, false);
+  }, [key]);
   const name = subject ? nameOf(doc, subject.id) : '';
   return html`<${Sheet} title="What else would fit?" back=${address('case', doc.id, 'structures')} sign=${html`<${CaseSign} doc=${doc} />`} class="rivals-sheet">
     ${!subject && html`<p class="hint">Put up a structure first; its look-alikes are sought from there.</p>`}
     ${subject && html`<${Chips} label="Which to show" class="chips-2" optional=${false} value=${which} options=${HOW} onPick=${setWhich} />`}
-    ${current && html`<${Working} since=${current.since} words=${progress(current)} stop=${stopHunt} />
+    ${current && html`<${Working} since=${current.since} words=${progress(current)} stop=${() => stopHunt(doc.id, true)} />
       <${Trouble} fault=${current.fault} />
-      ${current.stopped && html`<button type="button" class="button" onClick=${() => hunt(doc, smiles, which === 'allowed')}>Stopped. Search again</button>`}
-      <${Found} doc=${doc} name=${name} now=${current} />`}
+      ${!current.since && (current.stopped || current.fault) && html`<button type="button" class="button" onClick=${goOn}>${current.stopped ? `Stopped at ${current.weighed} weighed. Go on` : 'Try again'}</button>`}
+      <div class="rivals-found" aria-busy=${String(current.since > 0)}><${Found} doc=${doc} name=${name} now=${current} /></div>`}
   <//>`;
 }
 
 /** How far the search has come. @param {Hunt} now */
-function progress(now) {
-  if (!now.found.length) return 'looking for look-alikes';
-  return `${now.found.filter(({ smiles }) => now.weighed[smiles]).length} of ${now.found.length} weighed`;
-}
+const progress = ({ weighed, looked_at: looked }) => `${weighed} of up to ${LIMIT} weighed, ${looked} looked at`;
 
 /** @param {{ doc: CaseDoc, name: string, now: Hunt }} props */
 function Found({ doc, name, now }) {
   const gone = new Set([...doc.structures.map(({ smiles }) => smiles), ...(doc.dismissed ?? [])]);
-  const weight = (/** @type {Rival} */ rival) => now.weighed[rival.smiles]?.weight ?? -Infinity;
-  const shown = now.found.filter(({ smiles }) => !gone.has(smiles)).sort((a, b) => weight(b) - weight(a) || b.plausibility - a.plausibility);
-  const { own } = now;
-  const near = own ? shown.filter((rival) => weight(rival) >= own.weight - NEAR_DB).length : 0;
+  const shown = now.rivals.filter(({ smiles }) => !gone.has(smiles));
+  const own = now.structure;
+  const near = own ? shown.filter(({ weight_db: weight }) => weight !== null && weight >= own.weight_db - NEAR_DB).length : 0;
   const dismissed = doc.dismissed?.length ?? 0;
   const recall = () => changeWithUndo(doc.id, 'Dismissed ones brought back', (draft) => { draft.dismissed = []; });
-  if (!now.found.length) return now.since || now.fault || now.stopped ? null : html`<p class="lead">The readings leave no look-alike of ${name} standing that a few moves reach.</p>`;
-  return html`<p class="lead" aria-live="polite">${own ? `${nearWords(near)} within ${NEAR_DB} decibans of ${name} (${signed(own.weight)}), or ahead.` : `${plural(shown.length, 'look-alike')} of ${name}.`}</p>
+  if (!now.rivals.length) return now.done ? html`<p class="lead">The readings leave no look-alike of ${name} standing that a few moves reach.</p>` : null;
+  return html`<p class="lead" aria-live=${now.since ? 'off' : 'polite'}>${own ? `${nearWords(near)} within ${NEAR_DB} decibans of ${name} (${signed(own.weight_db)}), or ahead.` : `${plural(shown.length, 'look-alike')} of ${name}.`}</p>
     ${now.note && html`<p class="hint">${now.note}</p>`}
     <${Section} title="Look-alikes" aside=${shown.length}>
-      <ul class="rival-list">${shown.map((rival) => html`<${RivalRow} key=${rival.smiles} doc=${doc} rival=${rival} standing=${now.weighed[rival.smiles] ?? null} own=${own} />`)}</ul><//>
+      <ul class="rival-list">${shown.map((rival) => html`<${RivalRow} key=${rival.smiles} doc=${doc} rival=${rival} own=${own} />`)}</ul><//>
     ${dismissed > 0 && html`<button type="button" class="button" onClick=${recall}>Bring back ${plural(dismissed, 'dismissed one')}</button>`}`;
 }
 
 /** @param {number} near */
 const nearWords = (near) => (near > 1 ? `${near} look-alikes stand` : near ? 'One look-alike stands' : 'No look-alike stands');
 
-/** "7 behind" against the structure itself. @param {Standing} standing @param {Standing} own */
-function distance(standing, own) {
-  const by = Math.round(standing.weight - own.weight);
+/** "7 behind" against the structure itself. @param {number} weight @param {Standing} own */
+function distance(weight, own) {
+  const by = Math.round(weight - own.weight_db);
   return by === 0 ? 'level with it' : `${Math.abs(by)} ${by > 0 ? 'ahead' : 'behind'}`;
 }
 
-/** One look-alike, dashed: how it was reached, how it stands, keep or dismiss.
- * @param {{ doc: CaseDoc, rival: Rival, standing: Standing | null, own: Standing | null }} props */
-function RivalRow({ doc, rival, standing, own }) {
+/** One look-alike, dashed: how it was reached, how it stands and why, keep or dismiss.
+ * @param {{ doc: CaseDoc, rival: Rival, own: Standing | null }} props */
+function RivalRow({ doc, rival, own }) {
   const how = rival.how.join('; ');
+  const { weight_db: weight, verdict, reason } = rival;
   const keep = async () => {
     const entry = await ask('describe', { structure: rival.smiles });
     changeWithUndo(doc.id, 'Kept as a structure', (draft) => {
@@ -90,8 +94,8 @@ function RivalRow({ doc, rival, standing, own }) {
   const other = doc.formula.trim() && rival.formula !== doc.formula.trim();
   return html`<li class="rival">
     <${Drawing} structure=${rival.smiles} label="Look-alike: ${how}" width=${150} height=${100} class="drawing-rival" />
-    <div class="rival-words"><b>${standing ? html`<${Sign} verdict=${standing.verdict} size=${20} /> ${signed(standing.weight)}${own && `, ${distance(standing, own)}`}` : 'not weighed yet'}</b>
-      <span><${Words} text=${how} /></span>${other && html`<span><${Formula} text=${rival.formula} /></span>`}</div>
+    <div class="rival-words"><b>${weight === null ? 'not weighed' : html`<${Sign} verdict=${verdict} size=${20} /> ${signed(weight)}${own && `, ${distance(weight, own)}`}`}</b>
+      <span><${Words} text=${how} /></span>${verdict === 'clashes' && html`<span class="rival-why"><${Words} text=${reason} /></span>`}${other && html`<span><${Formula} text=${rival.formula} /></span>`}</div>
     <div class="two-up"><button type="button" class="button" onClick=${keep}>Keep</button><button type="button" class="button quiet" onClick=${dismiss}>Dismiss</button></div>
   </li>`;
 }

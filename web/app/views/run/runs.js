@@ -1,34 +1,42 @@
 import { signal } from '@preact/signals';
 import { readSetting, writeSetting } from '../../../store/settings.js';
+import { caseById, changeCase } from '../../state/cases.js';
+import { stepsOf, textOf } from '../../words/steps.js';
+
+export { said, stepsOf, textOf } from '../../words/steps.js';
 
 /** @typedef {import('./types').Run} Run */
 /** @typedef {import('./types').Compound} Compound */
 
-/** What was run, by case. @type {import('@preact/signals').Signal<Record<string, Run>>} */
-export const runs = signal({});
+/** @typedef {Run['ticks']} Ticks */
+
+/** What is to be taken over, by case. @type {import('@preact/signals').Signal<Record<string, Ticks>>} */
+const ticked = signal({});
 /** Conditions used before on this device, newest first. @type {import('@preact/signals').Signal<string[]>} */
 export const recent = signal([]);
 
 const RECENT_KEPT = 8;
 
-/** @returns {Run} */
-const empty = () => ({ start: null, partner: null, steps: [], ticks: {} });
+/** @returns {import('../../types').Ran} */
+const nothing = () => ({ start: null, partner: null, steps: [] });
 
-/** @param {string} id of the case @returns {Run} */
-export const runOf = (id) => runs.value[id] ?? empty();
+/** What was run stands with the case; the ticks are of this device. @param {string} id of the case @returns {Run} */
+export const runOf = (id) => ({ ...nothing(), ...caseById(id)?.run, ticks: ticked.value[id] ?? {} });
 
 /** @param {string} id @param {Partial<Run>} change */
-export function changeRun(id, change) {
-  const run = { ...runOf(id), ...change };
-  runs.value = { ...runs.value, [id]: run };
+export function changeRun(id, { ticks, ...ran }) {
+  if (Object.keys(ran).length) changeCase(id, (draft) => { draft.run = { ...nothing(), ...draft.run, ...ran }; });
+  if (!ticks) return;
+  ticked.value = { ...ticked.value, [id]: ticks };
   // Losing it on a full device is no reason to stop.
-  writeSetting(`run ${id}`, run).catch(() => {});
+  writeSetting(`run ${id}`, { ticks }).catch(() => {});
 }
 
-/** What was entered before the page was closed. @param {string} id */
+/** What was entered before the page was closed; earlier versions kept the step itself there too. @param {string} id */
 export async function recallRun(id) {
-  const [kept, used] = await Promise.all([readSetting(`run ${id}`), readSetting('recent conditions')]).catch(() => []);
-  if (kept && !runs.value[id]) runs.value = { ...runs.value, [id]: { ...empty(), .../** @type {any} */ (kept) } };
+  const [kept, used] = /** @type {any[]} */ (await Promise.all([readSetting(`run ${id}`), readSetting('recent conditions')]).catch(() => []));
+  if (kept?.start && !caseById(id)?.run) changeRun(id, { start: kept.start, partner: kept.partner ?? null, steps: kept.steps ?? [] });
+  if (kept?.ticks && !ticked.value[id]) ticked.value = { ...ticked.value, [id]: kept.ticks };
   if (Array.isArray(used) && !recent.value.length) recent.value = used;
 }
 
@@ -40,21 +48,6 @@ export function noteUsed(text) {
 
 /** Another compound or reagent: what was ticked belonged to other outcomes. @param {string} id @param {Partial<Run>} change */
 export const changeStep = (id, change) => changeRun(id, { ...change, ticks: {} });
-
-/** Steps as the engine reads them: "OsO4, NMO", or "1) O3 2) Me2S". @param {string[][]} steps */
-export function textOf(steps) {
-  const full = steps.filter((step) => step.length);
-  return full.length < 2 ? (full[0] ?? []).join(', ') : full.map((step, i) => `${i + 1}) ${step.join(', ')}`).join(' ');
-}
-
-/** Conditions as they are said: "O3, then Me2S". @param {string} text */
-export const said = (text) => stepsOf(text).map((step) => step.join(', ')).join(', then ');
-
-/** @param {string} text @returns {string[][]} */
-export function stepsOf(text) {
-  const parts = text.split(/(?:^|\s)\d\)\s*/).map((part) => part.trim()).filter(Boolean);
-  return parts.map((part) => part.split(/[,;]\s+/).map((name) => name.trim()).filter(Boolean));
-}
 
 /** Put a reagent into the last step, or take it out where it stands. @param {string} id @param {string} name */
 export function toggleReagent(id, name) {

@@ -1,8 +1,8 @@
-/** A compound put into a step: the start or its partner. */
-export interface Compound { smiles: string; name: string }
-/** What was run. `steps` hold reagents by name, in the order they were added; `ticks` what is to be taken over,
- * by SMILES, where it differs from what is proposed. */
-export interface Run { start: Compound | null; partner: Compound | null; steps: string[][]; ticks: Record<string, boolean> }
+import type { Ran } from '../../types';
+
+export type { Compound } from '../../types';
+/** What was run, and in `ticks` what is to be taken over, by SMILES, where it differs from what is proposed. */
+export interface Run extends Ran { ticks: Record<string, boolean> }
 export interface Outcome {
   smiles: string; role: 'product' | 'by-product' | 'over-reaction' | 'no reaction'; rule: string; name: string;
   note: string; stereo: string; cautions: string[]; source: string; formula: string;
