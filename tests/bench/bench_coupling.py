@@ -2,9 +2,9 @@
 
 Groups are given to signals as the check gives them. Reports differ in the smallest splitting they print and
 in how near two J may lie before they are printed as one; that resolution is a habit of the report, not a
-property of the compound. Hence three counts: the name ``predict`` gives; the name at the resolution that suits
-the *other* signals of the same report best (never the signal itself); and any name between the finest and the
-coarsest reading.
+property of the compound. Hence three counts: the name ``predict`` gives; the name at the resolution that
+suits the *other* signals of the same report best (never the signal itself); and any name between the finest
+and the coarsest reading.
 """
 
 from __future__ import annotations

@@ -25,6 +25,7 @@ from scipy.optimize import linear_sum_assignment  # noqa: E402
 from scipy.stats import t as student  # noqa: E402
 
 from bench.ridge import fit_weights  # noqa: E402
+from bench.training import read_rows, recalled  # noqa: E402
 from hoodside.facts import load_table  # noqa: E402
 from hoodside.molecule import read_structure  # noqa: E402
 from hoodside.molecule.symmetry import atom_classes  # noqa: E402
@@ -34,7 +35,6 @@ from hoodside.predict.features import atom_features  # noqa: E402
 from hoodside.predict.learned import LearnedTable  # noqa: E402
 
 ROOT = HERE.parents[2]
-ASSIGNED = ("carbon_rings", "carbon_heteroaromatic", "carbon_substituent_self")
 PRIORS = {
     "e0": 10.0, "e1": 60.0, "e2": 15.0, "e3": 4.0, "e4": 1.0, "e5": 0.3,
     "s1": 1.0, "s2": 0.6, "s3": 0.25, "s4": 0.05, "p": 0.8, "q": 0.4, "o": 0.4, "n": 10.0, "u": 4.0,
@@ -59,6 +59,8 @@ class Compound:
     """One compound: per carbon class the scheme value, features and number of atoms; its observed lines."""
 
     id: str
+    key: str  # connectivity, so that stereoisomers and repeats stay together
+    examined: bool  # whether errors count: not for recalled spectra
     atoms: list[int]
     scheme: np.ndarray
     features: list[dict[str, float]]
@@ -69,13 +71,14 @@ class Compound:
 
 
 def load_compounds() -> list[Compound]:
-    """Published compounds and reaction products with printed 13C lines, each structure once."""
-    cases = [(c["id"], c["smiles"], c.get("c13")) for c in _json("published")]
-    cases += [(c["id"], c["product_smiles"], c.get("product_c13")) for c in _json("reactions")]
-    return [compound(i, s, lines) for i, s, lines in cases if lines]
+    """Published compounds, reaction products and recalled spectra with 13C lines."""
+    cases = [(c["id"], c["smiles"], c.get("c13"), True) for c in _json("published")]
+    cases += [(c["id"], c["product_smiles"], c.get("product_c13"), True) for c in _json("reactions")]
+    cases += [(r.name, r.smiles, list(r.c13), False) for r in recalled()]
+    return [compound(i, s, lines, examined) for i, s, lines, examined in cases if lines]
 
 
-def compound(name: str, smiles: str, lines: Sequence[object]) -> Compound:
+def compound(name: str, smiles: str, lines: Sequence[object], examined: bool) -> Compound:
     structure = read_structure(smiles)
     estimates = scheme_estimates(structure)
     alike = atom_classes(structure)
@@ -85,6 +88,8 @@ def compound(name: str, smiles: str, lines: Sequence[object]) -> Compound:
     firsts = [members[0] for members in classes.values()]
     return Compound(
         name,
+        structure.inchikey.split("-")[0],
+        examined,
         firsts,
         np.array([estimates[a].ppm for a in firsts]),
         [atom_features(structure, a) for a in firsts],
@@ -97,16 +102,13 @@ def compound(name: str, smiles: str, lines: Sequence[object]) -> Compound:
 def assigned_rows() -> list[tuple[dict[str, float], float]]:
     """Atom-mapped table rows: features and residual of the scheme."""
     found = []
-    for table in ASSIGNED:
-        for row in load_table(table):
-            smiles = row["smiles_with_atom_map"]
-            structure = read_structure(smiles)
-            if row["atom_map"] not in atom_maps(smiles):
-                print("no such atom map:", table, smiles, row["atom_map"])
-                continue
-            atom = atom_maps(smiles).index(row["atom_map"])
-            estimate = scheme_estimates(structure)[atom]
-            found.append((atom_features(structure, atom), float(row["ppm"]) - estimate.ppm))
+    apart = [*read_rows("carbon_rings"), *read_rows("carbon_substituent_self")]
+    for row in [*load_table("carbon_heteroaromatic"), *apart]:
+        smiles = row["smiles_with_atom_map"]
+        structure = read_structure(smiles)
+        atom = atom_maps(smiles).index(row["atom_map"])
+        estimate = scheme_estimates(structure)[atom]
+        found.append((atom_features(structure, atom), float(row["ppm"]) - estimate.ppm))
     return found
 
 
@@ -148,22 +150,13 @@ def cross_validate(
     compounds: Sequence[Compound], fixed: Sequence[tuple[dict[str, float], float]], folds: int = FOLDS
 ):  # type: ignore[no-untyped-def]
     """Errors with each compound's own spectrum left out: [(compound id, environment, error, sd)]."""
-    order = list(range(len(compounds)))
-    random.Random(20261201).shuffle(order)
+    keys = sorted({c.key for c in compounds if c.examined})
+    random.Random(20261201).shuffle(keys)
     found = []
     for fold in range(folds):
-        held = {order[i] for i in range(fold, len(order), folds)}
-        keys = {tuple(sorted(compounds[i].features[0])) for i in held}
-        table = train(
-            [
-                c
-                for i, c in enumerate(compounds)
-                if i not in held and tuple(sorted(c.features[0])) not in keys
-            ],
-            fixed,
-        )
-        for i in sorted(held):
-            item = compounds[i]
+        held = set(keys[fold::folds])
+        table = train([c for c in compounds if c.key not in held], fixed)
+        for item in (c for c in compounds if c.key in held and c.examined):
             guess = predict(table, item)
             sds = [table.correct(f).variance ** 0.5 for f in item.features]
             given = match(item, guess)

@@ -31,11 +31,10 @@ def folds(cases: list[dict[str, Any]]) -> Iterator[Fold]:
     random.Random(_SEED).shuffle(order)
     carbons, carbon_rows = fit_carbon.load_compounds(), fit_carbon.assigned_rows()
     protons, proton_rows = proton_cases.load_compounds(), proton_cases.assigned_rows()
-    names = _names()
     for fold in range(FOLDS):
         held = [cases[i] for i in order[fold::FOLDS]]
         keys = {_connectivity(case["smiles"]) for case in held}
-        carbon = fit_carbon.train([c for c in carbons if names.get(c.id) not in keys], carbon_rows)
+        carbon = fit_carbon.train([c for c in carbons if c.key not in keys], carbon_rows)
         proton = fit_proton.train([c for c in protons if c.key not in keys], proton_rows)
         tables = {"carbon_learned": carbon, "proton_learned": proton.mean, "proton_splits": proton.split}
         yield Fold(held, tables)
@@ -48,13 +47,6 @@ def predicting(fold: Fold) -> Iterator[None]:
     with in_place_of(fold.tables):
         yield
     whole._predict.cache_clear()
-
-
-def _names() -> dict[str, str]:
-    """Case id -> connectivity, over published.json and reactions.json."""
-    found = {c["id"]: c["smiles"] for c in fit_carbon._json("published")}
-    found |= {c["id"]: c["product_smiles"] for c in fit_carbon._json("reactions")}
-    return {name: _connectivity(smiles) for name, smiles in found.items()}
 
 
 def _connectivity(smiles: str) -> str:

@@ -1,6 +1,7 @@
 """Turns the atom-mapped ring tables into patterns with open hydrogens and writes facts/proton_parents.csv.
 
-Run it after any change to facts/proton_rings.csv or facts/proton_heteroaromatic.csv, before fit_proton.py.
+Run it before fit_proton.py, after any change to facts/proton_rings.csv or to
+tests/cases/training/proton_heteroaromatic.csv.
 The patterns are made beforehand because reading two hundred rings would delay the first answer in a browser.
 """
 
@@ -14,6 +15,7 @@ from pathlib import Path
 HERE = Path(__file__).resolve()
 sys.path[:0] = [str(HERE.parents[2] / "py")]
 
+from bench.training import read_rows  # noqa: E402
 from hoodside.facts import Row, load_table  # noqa: E402
 from hoodside.molecule import Atom, Structure, read_structure  # noqa: E402
 from hoodside.predict.atom_maps import atom_maps  # noqa: E402
@@ -27,7 +29,7 @@ _AMINE = "[NX3;!$(N[CX3]=[O,S]);!$(N-c);!$(NS=O)]"
 def parent_rows() -> list[Row]:
     """One row per tabulated parent, largest first."""
     grouped: dict[tuple[str, str], list[Row]] = {}
-    for row in load_table("proton_heteroaromatic"):
+    for row in read_rows("proton_heteroaromatic"):
         if row["row_type"] == "parent":
             grouped.setdefault((row["ring"], row["smiles_with_atom_map"]), []).append(row)
     for row in load_table("proton_rings"):

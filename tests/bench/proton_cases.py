@@ -9,6 +9,7 @@ from pathlib import Path
 import numpy as np
 
 from bench.proton_matching import Expected, Signal, read_signals
+from bench.training import read_rows, recalled
 from hoodside.facts import load_table
 from hoodside.molecule import read_structure
 from hoodside.molecule.symmetry import hydrogen_sets
@@ -72,14 +73,8 @@ def load_compounds() -> list[Compound]:
 
 
 def recalled_compounds() -> list[Compound]:
-    """Simple compounds of facts/proton_spectra.csv."""
-    found = []
-    for row in load_table("proton_spectra"):
-        printed = [
-            dict(zip(("ppm", "n"), map(float, s.split("x")), strict=True)) for s in row["signals"].split()
-        ]
-        found.append(compound(row["name"], row["smiles"], row["solvent"], printed, "recalled"))
-    return found
+    """Compounds of tests/cases/training that no reference test checks."""
+    return [compound(r.name, r.smiles, r.solvent, list(r.h1), "recalled") for r in recalled() if r.h1]
 
 
 def solvent_compounds() -> list[Compound]:
@@ -109,9 +104,9 @@ def compound(name: str, smiles: str, solvent: str, printed: list, origin: str) -
 def assigned_rows() -> list[Row]:
     """Atom-mapped rows of the ring tables."""
     found = []
-    for table in ("proton_rings", "proton_heteroaromatic"):
+    for table in (load_table("proton_rings"), read_rows("proton_heteroaromatic")):
         by_smiles: dict[str, list[dict[str, str]]] = {}
-        for row in load_table(table):
+        for row in table:
             if not row.get("conformer"):
                 by_smiles.setdefault(row["smiles_with_atom_map"], []).append(row)
         for smiles, rows in by_smiles.items():

@@ -1,7 +1,7 @@
 """Hydrogens on aromatic carbon: the parent ring's value + benzene increments by position.
 
 Beeby, Sternhell, Hoffmann-Ostenhof, Pretsch and Simon, Anal. Chem. 1973, 45, 1571, and a second set from
-monosubstituted benzenes in CDCl3 (facts/proton_benzene.csv); parents from facts/proton_heteroaromatic.csv.
+monosubstituted benzenes in CDCl3 (facts/proton_benzene.csv); parents from facts/proton_parents.csv.
 In a five-membered ring a group beyond the heteroatom acts as from para, one across carbon as from meta.
 """
 
