@@ -184,3 +184,16 @@ def test_predict_explains_every_shift(capsys: pytest.CaptureFixture[str]) -> Non
         total = sum(float(term.split()[0]) for term in terms)
         assert total == pytest.approx(float(first.split()[1]), abs=0.06)
         assert all("[" in term for term in terms)
+
+
+def test_proposals_say_fragments_structures_and_what_was_done(
+    capsys: pytest.CaptureFixture[str], tmp_path: Path
+) -> None:
+    h1 = [{"ppm": 4.0, "mult": "sept", "n": 1}, {"ppm": 1.2, "mult": "d", "n": 6}]
+    readings = tmp_path / "readings.json"
+    readings.write_text(json.dumps({"formula": "C3H8O", "h1": h1, "candidates": ["CCCO"]}), "utf-8")
+    assert main(["proposals", str(readings)]) == 0
+    told = capsys.readouterr().out.splitlines()
+    assert told[:2] == ["No fragment is forced by these readings.", "Structures"]
+    assert any(line.strip().startswith("+") and line.endswith("CC(C)O") for line in told)
+    assert "weighed" in told[-1]

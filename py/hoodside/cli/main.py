@@ -117,6 +117,11 @@ def _rivals(command: argparse.ArgumentParser) -> None:
     command.add_argument("--limit", default="", help="how many rivals")
 
 
+def _proposals(command: argparse.ArgumentParser) -> None:
+    _file(command)
+    command.add_argument("--limit", default="", help="how many structures")
+
+
 def _outcomes(command: argparse.ArgumentParser) -> None:
     command.add_argument("smiles", metavar="SMILES", help="the starting structure")
     command.add_argument("--with", dest="reagents", default="", metavar="REAGENT", help="what was added")
@@ -130,6 +135,7 @@ _COMMANDS: tuple[tuple[str, str, str, Callable[[argparse.ArgumentParser], None]]
     ("parse", "Read report lines as chemists write them.", "parse:run", _file),
     ("spins", "Simulate the spectrum of a spin system.", "spins:run", _file),
     ("rivals", "Put up structures that might fit as well.", "rivals:run", _rivals),
+    ("proposals", "Say what readings suggest by themselves.", "proposals:run", _proposals),
     ("outcomes", "Say what a reaction may have given.", "outcomes:run", _outcomes),
     ("amounts", "Work out ratio, conversion, yield or purity.", "amounts:run", _file),
 )

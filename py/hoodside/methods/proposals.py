@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from dataclasses import asdict
 from typing import Any
 
 from hoodside.advise.proposals import Fragment, propose
@@ -20,7 +21,7 @@ def proposals(readings: dict[str, Any] | None = None, limit: int = USUAL_LIMIT) 
     found = propose(readings_from_json(readings), integer(limit, "limit", 1, MOST))
     return {
         "fragments": [_fragment(fragment) for fragment in found.fragments],
-        "structures": [{"smiles": s.smiles, "weight_db": s.weight_db} for s in found.structures],
+        "structures": [asdict(structure) for structure in found.structures],
         "complete": found.complete,
         "note": found.note,
     }

@@ -22,7 +22,8 @@ from hoodside.rivals.held_back import doubts, penalty
 from hoodside.rivals.names import name_of
 from hoodside.rivals.writer import write_smiles
 from hoodside.weigh.expectations import expectations
-from hoodside.weigh.structure import weigh_structure
+from hoodside.weigh.structure import Tally, weigh_structure
+from hoodside.weigh.verdict import judge
 
 #: A fragment is built in when the sign is this weighty and this often right on published spectra.
 _FORCING_DB = 10.0
@@ -37,10 +38,12 @@ _GIVEN_UP = 3
 
 @dataclass(frozen=True, slots=True)
 class Proposal:
-    """A structure put together from readings, with the weight of all of them."""
+    """A structure put together from readings, with the weight of them all and the verdict among its like."""
 
     smiles: str
     weight_db: float
+    verdict: str
+    reason: str
 
 
 @dataclass(frozen=True, slots=True)
@@ -79,7 +82,7 @@ class _Plan:
     @property
     def words(self) -> str:
         held = [fragment.sign.fragment for fragment in self.fragments]
-        return ", ".join(dict.fromkeys(held)) or "no fragment"
+        return ", ".join(dict.fromkeys(held))
 
 
 def propose(readings: Readings, limit: int = 20) -> Proposals:
@@ -200,24 +203,34 @@ def _misfit(structure: Structure, readings: Readings) -> int:
 
 
 def _weighed(found: list[str], readings: Readings) -> list[Proposal]:
-    proposals = []
-    for smiles in found[:_WEIGHED]:
-        try:
-            tally = weigh_structure(expectations(smiles, readings), readings)
-        except StructureError:
-            continue
-        proposals.append(Proposal(smiles, round(tally.weight_db, 1)))
+    """Raises nothing: what the predictors do not take is left out."""
+    tallies = [tally for smiles in found[:_WEIGHED] if (tally := _tally(smiles, readings))]
+    proposals = [
+        Proposal(tally.expected.structure.source, round(tally.weight_db, 1), verdict.verdict, verdict.reason)
+        for tally, verdict in zip(tallies, judge(tallies), strict=True)
+    ]
     return sorted(proposals, key=lambda p: (-p.weight_db, p.smiles))
 
 
+def _tally(smiles: str, readings: Readings) -> Tally | None:
+    try:
+        return weigh_structure(expectations(smiles, readings), readings)
+    except StructureError:
+        return None
+
+
 def _note(count: int, plan: _Plan) -> str:
-    rings = " and an aromatic ring" if plan.rings else ""
+    verb = "structure holds" if count == 1 else "structures hold"
     if count > _WEIGHED:
         weighed = f"the {_WEIGHED} closest by number of signals were weighed."
     else:
-        weighed = "all were weighed."
-    return f"{count} structures hold {plan.words}{rings}; {weighed}"
+        weighed = "it was weighed." if count == 1 else "all were weighed."
+    held = " and ".join(part for part in (plan.words, "an aromatic ring" if plan.rings else "") if part)
+    if not held:
+        return f"{count} sensible structure{' has' if count == 1 else 's have'} this formula; {weighed}"
+    return f"{count} {verb} {held}; {weighed}"
 
 
 def _too_many(plan: _Plan) -> str:
-    return f"Too many structures hold {plan.words}; put one up to start from, or take more readings."
+    what = f"hold {plan.words}" if plan.words else "have this formula"
+    return f"Too many structures {what}; put one up to start from, or take more readings."

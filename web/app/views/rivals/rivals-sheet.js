@@ -42,7 +42,8 @@ export function RivalsSheet({ doc }) {
   }, [key]);
   const name = subject ? nameOf(doc, subject.id) : '';
   return html`<${Sheet} title="What else would fit?" back=${address('case', doc.id, 'structures')} sign=${html`<${CaseSign} doc=${doc} />`} class="rivals-sheet">
-    ${!subject && html`<p class="hint">Put up a structure first; its look-alikes are sought from there.</p>`}
+    ${!subject && html`<p class="hint">Put up a structure first; its look-alikes are sought from there.</p>
+      <a class="button" href=${address('case', doc.id, 'structures', 'proposals')}>What do the readings themselves say?</a>`}
     ${subject && html`<${Chips} label="Which to show" class="chips-2" optional=${false} value=${which} options=${HOW} onPick=${setWhich} />`}
     ${current && html`<${Working} since=${current.since} words=${progress(current)} stop=${() => stopHunt(doc.id, true)} />
       <${Trouble} fault=${current.fault} />

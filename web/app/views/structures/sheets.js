@@ -1,5 +1,6 @@
 import { html } from 'htm/preact';
 import { Grow } from '../grow/grow.js';
+import { ProposalsSheet } from '../rivals/proposals-sheet.js';
 import { RivalsSheet } from '../rivals/rivals-sheet.js';
 import { Run } from '../run/run.js';
 import { NameSheet } from './name-sheet.js';
@@ -13,6 +14,7 @@ const SHEETS = {
   grow: (doc) => html`<${Grow} doc=${doc} />`,
   run: (doc, arg) => html`<${Run} doc=${doc} sheet=${arg} />`,
   rivals: (doc) => html`<${RivalsSheet} doc=${doc} />`,
+  proposals: (doc) => html`<${ProposalsSheet} doc=${doc} />`,
   paste: (doc) => html`<${PasteStructure} doc=${doc} />`,
   name: (doc) => html`<${NameSheet} doc=${doc} />`,
   one: (doc, arg) => html`<${OneStructure} doc=${doc} id=${arg} />`,

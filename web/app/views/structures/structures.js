@@ -3,6 +3,7 @@ import { address } from '../../state/route.js';
 import { Section } from '../../components/parts.js';
 import { currentCheck } from '../../state/check.js';
 import { CheckTrouble } from '../readings/check-trouble.js';
+import { hasReadings } from '../rivals/proposals-sheet.js';
 import { RivalCard, StructureCard } from './card.js';
 
 /** The second station: what it could be. @param {{ doc: import('../../types').CaseDoc }} props */
@@ -13,6 +14,8 @@ export function Structures({ doc }) {
     ${doc.structures.length === 0 && html`<p
       class="empty">Put up the structure you mean to have made, and what else it could be.
       A structure that fits says little until its look-alikes are ruled out.</p>`}
+    ${doc.structures.length === 0 && hasReadings(doc) && html`<a class="button"
+      href=${address('case', doc.id, 'structures', 'proposals')}>What do the readings themselves say?</a>`}
     <ul class="grid">
       ${doc.structures.map((entry) => html`<${StructureCard} key=${entry.id} doc=${doc} structure=${entry} />`)}
       ${rivals.map(({ candidate, at }) => html`<${RivalCard} key=${candidate.smiles} doc=${doc} candidate=${candidate}
@@ -27,6 +30,8 @@ export function Structures({ doc }) {
         <a class="button" href=${address('case', doc.id, 'structures', 'paste')}>Paste SMILES or CTfile</a>
         <a class="button" href=${address('case', doc.id, 'structures', 'name')}>By name</a>
       </div>
+      ${doc.structures.length > 0 && hasReadings(doc) && html`<a class="button"
+        href=${address('case', doc.id, 'structures', 'proposals')}>What the readings themselves say</a>`}
     <//>
   </div>`;
 }
