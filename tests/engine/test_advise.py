@@ -108,3 +108,29 @@ def test_kinds_of_stereoisomers(one, other, mirrored, in_space):
 def test_one_structure_alone_needs_nothing_to_tell_it_apart():
     case = {"candidates": ["CCO"], "formula": "C2H6O", "h1": [{"ppm": 1.2, "mult": "t", "n": 3}]}
     assert check_case(case)["next"] == []
+
+
+def expected_of(key, *structures, **case):
+    return next((a.expected_db for a in advice(*structures, **case) if a.key == key), 0.0)
+
+
+def test_a_shake_tells_more_the_more_exchangeable_h_differ():
+    h1 = [{"ppm": 3.6, "n": 1}]
+    none_or_two = expected_of("d2o", "COCCOC", "OCCCCO", h1=h1)
+    none_or_one = expected_of("d2o", "COCCOC", "COCCCO", h1=h1)
+    one_or_two = expected_of("d2o", "COCCCO", "OCCCCO", h1=h1)
+    assert none_or_two > none_or_one > one_or_two >= 0
+
+
+def test_bromine_shows_in_the_isotope_pattern_more_than_chlorine():
+    # M+2 over M: Br 97 %, Cl 32 %, IUPAC isotopic abundances.
+    h1 = [{"ppm": 7.3, "n": 4}]
+    bromine = expected_of("isotopes", "Cc1ccc(Br)cc1", "Cc1ccc(F)cc1", h1=h1)
+    chlorine = expected_of("isotopes", "Cc1ccc(Cl)cc1", "Cc1ccc(F)cc1", h1=h1)
+    assert bromine > chlorine > 3
+
+
+def test_an_noe_is_worth_less_than_certainty():
+    # NOEs between close H are now and then missed, and false ones come from exchange: common practice.
+    apart = expected_of("noe", r"C/C=C(/C)c1ccccc1", r"C/C=C(\C)c1ccccc1", h1=[{"ppm": 5.9, "n": 1}])
+    assert 3 < apart < 10

@@ -5,7 +5,7 @@ from __future__ import annotations
 from hoodside.advise.imagined import by_peaks, gap, imagined_peaks, only
 from hoodside.advise.model import NOTHING, Gain, Measurement, Pair, efforts
 from hoodside.predict.formula import Formula, adduct_mz, exact_mass, isotope_pattern, mass_percent
-from hoodside.readings import Analysis, HighResMass, Readings
+from hoodside.readings import Analysis, HighResMass, MassPeak, Readings
 from hoodside.weigh.expectations import Expectations
 from hoodside.weigh.finding import Weighed
 from hoodside.weigh.formulas import weigh_formula
@@ -86,7 +86,17 @@ def _isotopes(pair: Pair) -> Gain:
         return NOTHING
     a, b = pair.names
     told = [f"M+2 about {100 * r:.0f} % of M: {name}." for r, name in zip(ratios, (a, b), strict=True)]
-    return Gain(15.0, "Chlorine, bromine and sulfur show in the isotope pattern.", tuple(told))
+    return Gain(
+        gap(pair.first, pair.second, _imagined_pattern, by_peaks),
+        "Chlorine, bromine and sulfur show in the isotope pattern.",
+        tuple(told),
+    )
+
+
+def _imagined_pattern(expected: Expectations) -> Readings:
+    """M and M+2 as they stand in a spectrum."""
+    mass = float(round(exact_mass(Formula(expected.formula.parts))))
+    return Readings(ms=(MassPeak(mass, 100.0), MassPeak(mass + 2, 100 * _ratio(expected.formula))))
 
 
 def _ratio(formula: Formula) -> float:

@@ -2,13 +2,14 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable, Iterable
+from collections.abc import Callable, Iterable, Sequence
 from dataclasses import replace
 from math import fsum
 
 from hoodside.predict.infrared import band_reliability
 from hoodside.readings import CarbonLine, IrBand, MassPeak, ProtonSignal, Readings
 from hoodside.weigh.carbons import weigh_carbons
+from hoodside.weigh.decibans import decibans
 from hoodside.weigh.expectations import Expectations
 from hoodside.weigh.finding import Weighed
 from hoodside.weigh.infrared import weigh_infrared
@@ -20,24 +21,36 @@ _SEEN = 0.4
 #: Groups of H this near would be printed as one signal, ppm.
 _TOGETHER = 0.02
 
+#: Where imagined shifts fall about predicted ones, in stated deviations: even quantiles of Student t with
+#: three degrees of freedom, in turn. Without scatter every measurement would promise more than it gives.
+_SCATTER = (0.35, -1.42, 1.42, -0.35)
+
 Weigher = Callable[[Expectations, Readings], Weighed]
 
 
 def imagined_protons(expected: Expectations) -> tuple[ProtonSignal, ...]:
-    """The 1H signals of a structure, groups at one place joined."""
+    """The 1H signals of a structure, as far off the prediction as real ones, groups at one place joined."""
     signals: list[ProtonSignal] = []
-    for group in sorted(expected.h1, key=lambda g: g.ppm):
+    groups = sorted(expected.h1, key=lambda g: g.ppm)
+    places = [g.ppm if g.exchangeable else g.ppm + _off(i, g.sd) for i, g in enumerate(groups)]
+    for ppm, group in sorted(zip(places, groups, strict=True), key=lambda entry: entry[0]):
         last = signals[-1] if signals else None
-        if last is not None and group.ppm - last.hi < _TOGETHER and not group.exchangeable:
-            signals[-1] = ProtonSignal(last.lo, group.ppm, "m", (), (last.n or 0) + group.n)
+        if last is not None and ppm - last.hi < _TOGETHER and not group.exchangeable:
+            signals[-1] = ProtonSignal(last.lo, ppm, "m", (), (last.n or 0) + group.n)
         else:
-            signals.append(ProtonSignal(group.ppm, group.ppm, group.mult, group.j, float(group.n)))
+            signals.append(ProtonSignal(ppm, ppm, group.mult, group.j, float(group.n)))
     return tuple(signals)
+
+
+def _off(place: int, sd: float) -> float:
+    return sd * _SCATTER[place % len(_SCATTER)]
 
 
 def imagined_carbons(expected: Expectations, kinds: bool = False) -> tuple[CarbonLine, ...]:
     """The 13C lines of a structure, with their kinds if a DEPT is imagined."""
-    return tuple(CarbonLine(g.ppm, g.kind if kinds else "") for g in expected.c13)
+    return tuple(
+        CarbonLine(g.ppm + _off(i, g.sd), g.kind if kinds else "") for i, g in enumerate(expected.c13)
+    )
 
 
 def imagined_bands(expected: Expectations) -> tuple[IrBand, ...]:
@@ -97,11 +110,12 @@ def only(readings: Readings, **kinds: object) -> Readings:
 
 def bernoulli(pairs: Iterable[tuple[float, float]]) -> float:
     """Expected weight of yes-or-no outcomes with the chances (first, second), decibans."""
-    from hoodside.weigh.decibans import decibans
+    return fsum(divergence((p, 1 - p), (q, 1 - q)) for p, q in pairs)
 
-    summed = 0.0
-    for p, q in pairs:
-        forth = p * decibans(p / q) + (1 - p) * decibans((1 - p) / (1 - q))
-        back = q * decibans(q / p) + (1 - q) * decibans((1 - q) / (1 - p))
-        summed += (forth + back) / 2
-    return summed
+
+def divergence(first: Sequence[float], second: Sequence[float]) -> float:
+    """Expected weight of one observation, mean over which of two structures is right, decibans.
+
+    Args: the chance of every outcome, none of them 0, under the first structure and under the second.
+    """
+    return fsum((p - q) * decibans(p / q) for p, q in zip(first, second, strict=True)) / 2

@@ -3,16 +3,30 @@
 from __future__ import annotations
 
 from collections import Counter
+from math import comb
 
-from hoodside.advise.imagined import by_carbons, by_protons, gap, imagined_carbons, imagined_protons, only
+from hoodside.advise.imagined import (
+    bernoulli,
+    by_carbons,
+    by_protons,
+    divergence,
+    gap,
+    imagined_carbons,
+    imagined_protons,
+    only,
+)
 from hoodside.advise.model import NOTHING, Gain, Measurement, Pair, efforts
 from hoodside.advise.stereo import contact, differ_in_space_only
 from hoodside.readings import Readings
 from hoodside.weigh.expectations import Expectations, expectations
 from hoodside.weigh.words import listed
 
-#: What a shake with D2O, or an NOE, tells when the structures differ there (common practice).
-_SHAKE_NONE, _SHAKE_FEWER, _NOE = 10.0, 6.0, 10.0
+#: Shares of OH and NH that are seen at all before a D2O shake, and of integrals misread (common practice).
+_VISIBLE, _MISCOUNTED = 0.8, 0.1
+#: Chance of an NOE between H that are close, and of a false one by exchange or overlap (common practice).
+_NOE_SEEN, _NOE_FALSE = 0.85, 0.1
+#: Signals nearer than this, ppm, can hardly be irradiated one by one; the chance of a useful result then.
+_SELECTIVE, _NOE_CROWDED = 0.15, 0.5
 _DMSO, _HIGH_FIELD = "DMSO-d6", 600.0
 _LOW_FIELD = 450.0
 #: Differences in shift named in words, ppm.
@@ -85,12 +99,21 @@ def _shake(pair: Pair) -> Gain:
     if one == other:
         return NOTHING
     a, b = pair.names
-    weight = _SHAKE_NONE if 0 in (one, other) else _SHAKE_FEWER
+    most = max(one, other)
     return Gain(
-        weight,
+        divergence(_lost_in_shake(one, most), _lost_in_shake(other, most)),
         f"{a} has {one} exchangeable H, {b} {other}.",
         (f"{one} H gone after the shake: {a}.", f"{other} H gone: {b}."),
     )
+
+
+def _lost_in_shake(exchangeable: int, most: int) -> list[float]:
+    """Chance that 0, 1, ... H go in a shake with D2O, for a structure with so many exchangeable H."""
+    chances = [
+        comb(exchangeable, k) * _VISIBLE**k * (1 - _VISIBLE) ** (exchangeable - k) for k in range(most + 1)
+    ]
+    even = _MISCOUNTED / (most + 1)
+    return [(1 - _MISCOUNTED) * chance + even for chance in chances]
 
 
 def _solvent(pair: Pair, readings: Readings) -> Gain:
@@ -144,7 +167,10 @@ def _noe(pair: Pair) -> Gain:
         found = contact(mine)
         if found is not None:
             near = f"the H near δ {found[0]:.2f} and δ {found[1]:.2f} are close in {name}"
+            seen = _NOE_SEEN if abs(found[0] - found[1]) > _SELECTIVE else _NOE_CROWDED
             return Gain(
-                _NOE, f"They differ in space only: {near}.", (f"NOE between them: {name}. None: {other}.",)
+                bernoulli([(seen, _NOE_FALSE)]),
+                f"They differ in space only: {near}.",
+                (f"NOE between them: {name}. None: {other}.",),
             )
     return NOTHING

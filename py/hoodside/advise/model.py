@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import cache
 
 from hoodside.facts import load_table
@@ -19,6 +19,9 @@ class Effort:
     minutes: int
     needs: str
     cautions: tuple[str, ...]
+    #: Share of the weight worked out from predictions that published spectra really gave, on average: reports
+    #: print coarser patterns than predicted, and fewer bands (measured by ``bench advice``).
+    realised: float
 
 
 @dataclass(frozen=True, slots=True)
@@ -51,6 +54,11 @@ class Measurement:
     gain: Callable[[Pair], Gain]
     cautions: tuple[str, ...] = ()
     test: str = ""
+
+    def between(self, pair: Pair) -> Gain:
+        """What it would tell about two structures, as far as such measurements keep what they promise."""
+        gain = self.gain(pair)
+        return replace(gain, expected_db=gain.expected_db * efforts()[self.key].realised)
 
 
 @dataclass(frozen=True, slots=True)
@@ -99,6 +107,7 @@ def efforts() -> dict[str, Effort]:
             int(row["minutes"]),
             row["needs"],
             (row["cautions"],) if row["cautions"] else (),
+            float(row["realised"]),
         )
         for row in load_table("measurements")
     }

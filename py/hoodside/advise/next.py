@@ -80,7 +80,7 @@ def _distinct(standing: Sequence[Standing]) -> list[Standing]:
 
 
 def _advice(offer: Measurement, pairs: Sequence[tuple[Standing, Standing]]) -> Advice | None:
-    gains = [(offer.gain(Pair(a.expected, b.expected, (a.name, b.name))), a, b) for a, b in pairs]
+    gains = [(offer.between(Pair(a.expected, b.expected, (a.name, b.name))), a, b) for a, b in pairs]
     told = [(gain, a, b) for gain, a, b in gains if gain.expected_db >= _LEAST_DB]
     if not told:
         return None
