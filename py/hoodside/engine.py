@@ -14,6 +14,7 @@ from hoodside.errors import HoodsideError, InvalidInputError
 #: Method -> "module:function". Modules are loaded at the first call, so that the engine starts fast.
 METHODS: dict[str, str] = {
     "about": "about:about",
+    "warm": "warming:warm",
     "describe": "structures:describe",
     "draw": "structures:draw",
     "formula": "formulas:formula",

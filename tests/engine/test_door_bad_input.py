@@ -56,6 +56,7 @@ AMOUNTS: list[dict[str, Any]] = [
 ]
 GOOD: list[tuple[str, dict[str, Any]]] = [
     ("about", {}),
+    ("warm", {"slice_ms": 5}),
     ("describe", {"structure": "CCCO"}),
     ("draw", {"structure": "CCCO", "width": 300, "height": 200, "atoms": [0], "bonds": [0]}),
     ("formula", {"text": "C3H8O"}),

@@ -1,5 +1,6 @@
 import { signal } from '@preact/signals';
 import { createEngine } from '../../worker/client.js';
+import { Warming } from './warming.js';
 
 /** @typedef {import('../types').Fault} Fault */
 
@@ -12,12 +13,16 @@ export const wakingSince = signal(Date.now());
 /** @type {ReturnType<typeof createEngine> | null} */
 let engine = null;
 
+const warming = new Warming((method, params) => /** @type {any} */ (engine).call(method, params));
+
 export function startEngine() {
   engine = createEngine({
     onState: (/** @type {any} */ state, /** @type {any} */ detail) => {
       if (state === 'waking') wakingSince.value = Date.now();
       engineTrouble.value = state === 'failed' ? asFault(detail).message : '';
       engineState.value = state;
+      if (state === 'ready') warming.begin();
+      else warming.end();
     },
   });
 }
@@ -33,7 +38,7 @@ export function asFault(error) {
  * @returns {Promise<any>} */
 export function call(method, params, options) {
   if (!engine) return Promise.reject(asFault('The chemistry has not been started.'));
-  return engine.call(method, params, options);
+  return warming.giveWay(engine.call(method, params, options));
 }
 
 /** @typedef {{ promise: Promise<any>, value: any, fault: Fault | null }} Remembered */
