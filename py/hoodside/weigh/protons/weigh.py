@@ -19,6 +19,8 @@ _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
 _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
 #: Sets of H named one by one in a sentence.
 _NAMED = 3
+#: Further than this many deviations from a signal its sets of H are off it rather than in it.
+_OFF = 1.5
 #: From this many H on a signal is no trace of a solvent.
 _MUCH = 0.75
 
@@ -82,8 +84,11 @@ def _place_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
         return (
             f"δ {printed(signal)}: {group_name(group)} expected at {group.ppm:.2f} ± {group.sd:.2f}; {how}."
         )
-    named = ", ".join(f"{plural_h(g.n)} expected at {g.ppm:.2f} ± {g.sd:.2f}" for g in held)
-    return f"δ {printed(signal)}: {len(held)} sets of H would overlap here: {named}."
+    named = listed([f"{group_name(g)} at {g.ppm:.2f} ± {g.sd:.2f}" for g in held[:_NAMED]])
+    more = f", {len(held) - _NAMED} more sets of H" if len(held) > _NAMED else ""
+    if all(min(abs(signal.lo - g.ppm), abs(signal.hi - g.ppm)) > _OFF * g.sd for g in held):
+        return f"δ {printed(signal)}: no H is expected just here; nearest are {named}{more}."
+    return f"δ {printed(signal)}: {len(held)} sets of H would overlap here: {named}{more}."
 
 
 def _against_range(ppm: float, lo: float, hi: float) -> str:
