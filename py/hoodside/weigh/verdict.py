@@ -37,6 +37,8 @@ STRAINED, BROKEN = 0.42, 1.0
 _FORGIVEN = 6.0
 #: Findings below this say next to nothing, decibans.
 _SPEAKS = 1.0
+#: Findings on one reading this near to each other are about as bad, decibans.
+_ABOUT_AS_BAD = 3.0
 #: With fewer readings than this strain is an accident.
 _FEW = 4
 
@@ -152,6 +154,9 @@ def _by_reading(findings: Sequence[Finding]) -> list[Finding]:
 
 
 def _joined(members: list[Finding]) -> Finding:
-    worst = min(members, key=lambda f: f.weight_db)
+    least = min(f.weight_db for f in members)
+    # Of findings about as bad, a wrong place says more to a chemist than a wrong number of H.
+    nearly = [f for f in members if f.weight_db <= min(least + _ABOUT_AS_BAD, 0.0)] or members
+    worst = min(nearly, key=lambda f: (not f.kind.endswith(".shift"), f.weight_db))
     total = fsum(f.weight_db for f in members)
     return Finding(worst.kind, total, worst.text, worst.readings, worst.atoms, worst.source)
