@@ -52,9 +52,16 @@ def find_names(query: str, limit: int = 20) -> list[NamedStructure]:
 
 def exact_name(text: str) -> NamedStructure | None:
     """The structure that bears exactly this name (capitals, hyphens and spaces aside), or None."""
-    best = find_names(text, 1)
-    names = [n for entry in _entries() if best and entry.named.smiles == best[0].smiles for n in entry.keys]
-    return best[0] if best and _key(text) in names else None
+    return _by_key().get(_key(text))
+
+
+@cache
+def _by_key() -> dict[str, NamedStructure]:
+    found: dict[str, NamedStructure] = {}
+    for entry in _entries():
+        for at, key in enumerate(entry.keys):
+            found.setdefault(key, _shown(entry, at))
+    return found
 
 
 def _fit(entry: _Entry, wanted: str) -> tuple[int, int]:

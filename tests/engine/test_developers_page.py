@@ -27,8 +27,8 @@ def test_files_the_page_names_are_there() -> None:
 STEPS = (
     {"errors"},
     {"facts"},
-    {"molecule", "readings", "numerics", "numerics_browser", "numerics_cpython"},
-    {"predict", "names"},
+    {"molecule", "names", "readings", "numerics", "numerics_browser", "numerics_cpython"},
+    {"predict", "reagent_names"},
     {"weigh", "rivals", "amounts", "record"},
     {"advise"},
     {"check", "hunt"},

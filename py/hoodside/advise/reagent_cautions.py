@@ -8,6 +8,7 @@ from dataclasses import dataclass
 from functools import cache
 
 from hoodside.facts import load_table
+from hoodside.reagent_names import caution_of
 
 _CODES = r"(?:EUH|H)\d{3}[A-Za-z]*"
 _CODE = re.compile(rf"\b{_CODES}\b")
@@ -57,21 +58,19 @@ def cautions_for(understood: Iterable[str], of_step: Iterable[str] = ()) -> tupl
     """Cautions for reagents by the names they were understood by, then those of the step itself.
 
     Args:
-        understood: names from facts/reagents.csv, in the order they are to be shown.
+        understood: names as ``reagent_names`` tells them, in the order they are to be shown.
         of_step: names from facts/reagent_cautions.csv that the reactions carried out call for (ozonides,
             organic azides ...). One that belongs to a reagent not among ``understood`` is left out.
     """
-    by_name = _caution_of_reagent()
-    own = [by_name[name] for name in understood if by_name.get(name)]
-    extra = [name for name in of_step if name not in by_name.values()]
+    own = [caution for name in understood if (caution := caution_of(name))]
+    extra = [name for name in of_step if name not in _of_some_reagent()]
     table = _cautions()
     return tuple(table[name] for name in dict.fromkeys((*own, *extra)) if name in table)
 
 
 def without_caution(understood: Iterable[str]) -> tuple[str, ...]:
     """Reagents for which the table holds none: silence is not safety."""
-    by_name = _caution_of_reagent()
-    return tuple(name for name in dict.fromkeys(understood) if not by_name.get(name))
+    return tuple(name for name in dict.fromkeys(understood) if not caution_of(name))
 
 
 def in_words(hazards: str) -> str:
@@ -152,8 +151,9 @@ def _statements() -> dict[str, tuple[str, int]]:
 
 
 @cache
-def _caution_of_reagent() -> dict[str, str]:
-    return {name: row["caution"] for row in load_table("reagents") for name in row["names"].split("; ")}
+def _of_some_reagent() -> frozenset[str]:
+    rows = (*load_table("reagents"), *load_table("reagent_heads"))
+    return frozenset(row["caution"] for row in rows if row["caution"])
 
 
 @cache

@@ -12,6 +12,7 @@ from hoodside.facts import load_table
 from hoodside.methods.arguments import short_text
 from hoodside.methods.structures import structure_of
 from hoodside.predict.formula import formula_of
+from hoodside.reagent_names import headed_names
 from hoodside.rivals.outcomes import Outcome, find_outcomes
 
 
@@ -29,6 +30,7 @@ def outcomes(
         "outcomes": [_outcome(outcome) for outcome in found.outcomes],
         "understood": understood,
         "unknown": list(found.unknown),
+        "no_step": found.no_step,
         "cautions": [asdict(caution) for caution in cautions_for(understood, of_step)],
         "no_caution": list(without_caution(understood)),
     }
@@ -37,14 +39,12 @@ def outcomes(
 def reagents(query: str = "") -> dict[str, Any]:
     """Reagents by the trade's names and abbreviations that hold the query, and conditions met most often."""
     wanted = _words(query, "query").lower()
-    found = [row for row in load_table("reagents") if wanted in row["names"].lower()]
+    rows = [(row["names"].split("; "), row["roles"]) for row in load_table("reagents")]
+    rows += [([made.name], " ".join(sorted(made.roles))) for made in headed_names()]
+    found = [(names, roles) for names, roles in rows if any(wanted in name.lower() for name in names)]
     usual = [row for row in load_table("usual_conditions") if wanted in row["label"].lower()]
     return {
-        "reagents": [
-            {"name": names[0], "names": names, "shelf": _shelf(row["roles"])}
-            for row in found
-            for names in [row["names"].split("; ")]
-        ],
+        "reagents": [{"name": names[0], "names": names, "shelf": _shelf(roles)} for names, roles in found],
         "usual": [{key: row[key] for key in ("label", "reagents", "partner")} for row in usual],
     }
 

@@ -20,13 +20,13 @@ def add_across(structure: Structure, a: int, b: int, x: str, y: str, mode: str) 
 
     ``x`` and ``y`` are element symbols ("H", "O", "Br" ...). One enantiomer is drawn of a racemic product.
     """
-    cis = _cis_pair(structure, a, b)
+    cis = cis_pair(structure, a, b)
     draft = Draft(structure)
     before = {end: [n for n in structure.neighbours[end] if n != far] for end, far in ((a, b), (b, a))}
     draft.set_order(a, b, 1)
     added = {a: _attach(draft, a, x), b: _attach(draft, b, y)}
     if mode != "none" and cis is not None:
-        _mark_pair(draft, (a, b), before, added, cis, mode == "syn")
+        mark_pair(draft, (a, b), before, added, cis, mode == "syn")
     return draft.keep_order()
 
 
@@ -49,22 +49,29 @@ def with_fused_ring_cis(structure: Structure, a: int, b: int, oxygen: int) -> St
             draft = Draft(structure)
             before = {e: [n for n in structure.neighbours[e] if n not in (a, b, oxygen)] for e in (a, b)}
             cis = (next(n for n in before[a] if n in ring), next(n for n in before[b] if n in ring))
-            _mark_pair(draft, (a, b), before, {a: oxygen, b: oxygen}, cis, syn=True)
+            mark_pair(draft, (a, b), before, {a: oxygen, b: oxygen}, cis, syn=True)
             return draft.keep_order()
     return structure
 
 
-def epoxidise(structure: Structure, a: int, b: int) -> Structure:
-    """Bridge a double bond by oxygen on one face."""
-    cis = _cis_pair(structure, a, b)
+#: What bridges a double bond: the new atom, its hydrogens, and what else it carries.
+_BRIDGES = {"O": ("O", 2, ()), "CH2": ("C", 4, ()), "CCl2": ("C", 4, ("Cl", "Cl"))}
+
+
+def bridge(structure: Structure, a: int, b: int, by: str = "O") -> Structure:
+    """Bridge a double bond by one atom on one face: "O" (epoxide), "CH2" or "CCl2" (cyclopropane)."""
+    cis = cis_pair(structure, a, b)
     draft = Draft(structure)
     before = {end: [n for n in structure.neighbours[end] if n != far] for end, far in ((a, b), (b, a))}
     draft.set_order(a, b, 1)
-    oxygen = draft.add_atom("O", hydrogens=2)
-    draft.add_bond(a, oxygen)
-    draft.add_bond(b, oxygen)
+    symbol, hydrogens, carried = _BRIDGES[by]
+    new = draft.add_atom(symbol, hydrogens=hydrogens)
+    draft.add_bond(a, new)
+    draft.add_bond(b, new)
+    for ligand in carried:
+        draft.add_bond(new, draft.add_atom(ligand, hydrogens=1))
     if cis is not None:
-        _mark_pair(draft, (a, b), before, {a: oxygen, b: oxygen}, cis, syn=True)
+        mark_pair(draft, (a, b), before, {a: new, b: new}, cis, syn=True)
     return draft.keep_order()
 
 
@@ -77,7 +84,7 @@ def _attach(draft: Draft, atom: int, symbol: str) -> int | None:
     return new
 
 
-def _cis_pair(structure: Structure, a: int, b: int) -> tuple[int, int] | None:
+def cis_pair(structure: Structure, a: int, b: int) -> tuple[int, int] | None:
     """Substituents (one on each end) that are cis, or None where the bond's geometry is open or none."""
     bond = structure.bond_between(a, b)
     if bond is None:
@@ -97,7 +104,7 @@ def _cis_pair(structure: Structure, a: int, b: int) -> tuple[int, int] | None:
     return (first, other[0]) if other else (first, -1)
 
 
-def _mark_pair(
+def mark_pair(
     draft: Draft,
     ends: tuple[int, int],
     before: dict[int, list[int]],
@@ -114,11 +121,11 @@ def _mark_pair(
     for end in ends:
         if len(set(orders[end])) < 4:
             return  # two hydrogens on one end: no centre there
-    _set_turn(draft, a, orders[a], clockwise=True)
-    _set_turn(draft, b, orders[b], clockwise=not syn)
+    set_turn(draft, a, orders[a], clockwise=True)
+    set_turn(draft, b, orders[b], clockwise=not syn)
 
 
-def _set_turn(draft: Draft, atom: int, order: list[int | None], clockwise: bool) -> None:
+def set_turn(draft: Draft, atom: int, order: list[int | None], clockwise: bool) -> None:
     """Mark an atom so that, seen from the first ligand, the others turn clockwise (None: hydrogen)."""
     listed: list[int | None] = [*draft.ligands(atom)]
     if None in order:

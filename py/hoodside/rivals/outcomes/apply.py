@@ -14,12 +14,14 @@ from hoodside.molecule.structure import read_marked
 from hoodside.molecule.symmetry import constitutional_classes
 from hoodside.rivals.outcomes.addition import (
     add_across,
-    epoxidise,
+    bridge,
     open_epoxide,
     with_fused_ring_cis,
 )
+from hoodside.rivals.outcomes.cycloaddition import cycloadducts
 from hoodside.rivals.outcomes.faces import both_faces
 from hoodside.rivals.outcomes.nucleophiles import nucleophile_of
+from hoodside.rivals.outcomes.reagents import Reagents
 from hoodside.rivals.outcomes.rules import Rule
 from hoodside.rivals.outcomes.selectivity import SCORES, positive
 
@@ -35,7 +37,7 @@ class Step:
 
     partner: Structure | None
     roles: frozenset[str]
-    names: tuple[str, ...]
+    read: Reagents
 
 
 def best_first(rule: Rule, structure: Structure, step: Step) -> list[list[Structure]]:
@@ -101,28 +103,56 @@ def _first_component(pattern: str) -> str:
 
 
 def _react(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> list[list[Structure]]:
-    flat = [site[int(n)] for n in rule.args.get("flat", "").split(",") if n]
-    sources = [_labelled(structure, site, flat)]
+    if _ring_size(structure, site) < int(rule.args.get("least_ring", 0)):
+        return []
+    sources = [_labelled(structure, site, [site[n] for n in _numbers(rule, "flat")])]
     if rule.two_component:
-        if (partner := _partner_for(rule, step)) is None:
+        if (partner := _partner_for(rule, structure, step)) is None:
             return []
-        sources.append(partner.source)
+        sources.append(_attacked_from_behind(rule, partner).source)
     found = []
     for products in kernel().react(_site_specific(rule.pattern, site), sources):
         parts = [part for p in products for part in p.split(".")]
         if (keep := rule.args.get("keep")) is not None:
             parts = [part for part in parts if f"[{_LABEL + int(keep)}" in part]
-        made = [clean for part in parts if (clean := _unlabelled(part)) is not None]
+        turned = [_LABEL + n for n in _numbers(rule, "invert")]
+        made = [clean for part in parts if (clean := _unlabelled(part, turned)) is not None]
         if made:
             found.append(sorted(made, key=lambda p: -len(p.atoms)))
     return found
 
 
-def _partner_for(rule: Rule, step: Step) -> Structure | None:
-    """The organic partner, else an alcohol named among the reagents where the rule takes one."""
+def _numbers(rule: Rule, key: str) -> list[int]:
+    """Map numbers that an argument of the rule lists."""
+    return [int(n) for n in rule.args.get(key, "").split(",") if n]
+
+
+def _ring_size(structure: Structure, site: dict[int, int]) -> int:
+    """Atoms of the ring that a bond between the first two mapped atoms closes."""
+    return structure.distances_from(site[1])[site[2]] + 1 if {1, 2} <= site.keys() else 0
+
+
+def _attacked_from_behind(rule: Rule, partner: Structure) -> Structure:
+    """The partner with the centre inverted at which the start will replace a ligand."""
+    turned = _numbers(rule, "invert_partner")
+    if not turned or not any(atom.stereo for atom in partner.atoms):
+        return partner
+    right = rule.pattern.split(">>")[0].removeprefix(_first_component(rule.pattern)).removeprefix(".")
+    draft = Draft(partner)
+    for match in partner.matches(right)[:1]:
+        for number, atom in zip(_map_numbers(right), match, strict=False):
+            if number in turned:
+                draft.turn_over(atom)
+    return draft.keep_order()
+
+
+def _partner_for(rule: Rule, structure: Structure, step: Step) -> Structure | None:
+    """The organic partner, another molecule of the start, or an alcohol among the reagents."""
+    if rule.with_itself:
+        return structure
     if step.partner is not None:
         return step.partner
-    named = nucleophile_of(rule.args.get("partner", ""), None, step.names, step.roles)
+    named = nucleophile_of(rule.args.get("partner", ""), None, step.read, step.roles)
     return named[0] if named else None
 
 
@@ -147,11 +177,14 @@ def _labelled(structure: Structure, site: dict[int, int], flat: Sequence[int]) -
     return kernel().molblock(draft.source())
 
 
-def _unlabelled(smiles: str) -> Structure | None:
+def _unlabelled(smiles: str, turned: Sequence[int] = ()) -> Structure | None:
+    """A product without its labels, centres with a label in ``turned`` inverted."""
     try:
         made = read_marked(smiles)
         draft = Draft(made)
         for atom in made.atoms:
+            if atom.isotope in turned:
+                draft.turn_over(atom.index)
             if atom.isotope > _LABEL:
                 draft.set_isotope(atom.index, 0)
         return draft.finish()
@@ -171,7 +204,7 @@ def _add(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> 
 
 
 def _open(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> list[list[Structure]]:
-    entering = nucleophile_of(rule.args["nu"], step.partner, step.names, step.roles)
+    entering = nucleophile_of(rule.args["nu"], step.partner, step.read, step.roles)
     if entering is None:
         return []
     nucleophile, at = entering
@@ -188,9 +221,16 @@ def _openness(structure: Structure, atom: int) -> float:
     return -float(len(structure.neighbours[atom]))
 
 
-def _epoxidise(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> list[list[Structure]]:
-    made = epoxidise(structure, site[1], site[2])
+def _bridge(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> list[list[Structure]]:
+    made = bridge(structure, site[1], site[2], rule.args.get("bridge", "O"))
     return [[face] for face in both_faces(structure, made, site[1], site[2])]
+
+
+def _cycloadd(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> list[list[Structure]]:
+    if step.partner is None:
+        return []
+    pair = (structure, step.partner) if rule.args["start"] == "diene" else (step.partner, structure)
+    return [[made] for made in cycloadducts(*pair)]
 
 
 def _lactone(rule: Rule, structure: Structure, site: dict[int, int], step: Step) -> list[list[Structure]]:
@@ -213,6 +253,7 @@ _OPS: dict[str, Callable[[Rule, Structure, dict[int, int], Step], list[list[Stru
     "rxn": _react,
     "add": _add,
     "open": _open,
-    "epoxidise": _epoxidise,
+    "epoxidise": _bridge,
+    "cycloadd": _cycloadd,
     "lactone": _lactone,
 }

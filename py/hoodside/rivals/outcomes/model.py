@@ -29,3 +29,4 @@ class Outcomes:
     outcomes: tuple[Outcome, ...]
     understood: tuple[str, ...]  # reagent names recognised in the text
     unknown: tuple[str, ...]  # pieces of the text that no table row knows
+    no_step: str = ""  # why no product is among the outcomes, and what the table knows of the reagents

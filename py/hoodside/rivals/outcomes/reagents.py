@@ -4,61 +4,59 @@ from __future__ import annotations
 
 import re
 from dataclasses import dataclass
-from functools import cache
 
-from hoodside.facts import load_table
+from hoodside.reagent_names import ReagentName, read_names
 
-_STAGE = re.compile(r"(?:^|[;,]?\s)\d\)\s*")
+_STAGE = re.compile(r"(?:^|[;,]?\s)\d\)\s*|[;,]?\s+then\s+")
+_PARTNER, _WEAK = "partner", "weak"
 
 
 @dataclass(frozen=True, slots=True)
 class Reagents:
-    """What a text of reagents means: roles, the names found, their cautions, pieces not known."""
+    """What a text of reagents means.
+
+    Attributes:
+        roles: what the reagents can act as.
+        names: the names found.
+        cautions: rows of facts/reagent_cautions.csv they call for.
+        unknown: pieces of the text that name nothing known.
+        found: every name with what it means.
+    """
 
     roles: frozenset[str]
     names: tuple[str, ...]
     cautions: tuple[str, ...]
     unknown: tuple[str, ...]
+    found: tuple[ReagentName, ...]
+
+    def partners(self) -> tuple[ReagentName, ...]:
+        """Reagents that carry an organic partner, those that may be there as base or solvent last."""
+        carried = [f for f in self.found if _PARTNER in f.roles and f.brings]
+        return tuple(sorted(carried, key=is_weak))
+
+    def brought_as(self, role: str) -> str:
+        """SMILES of what the first reagent with that role carries, "" where none does."""
+        return next((f.brings for f in self.found if role in f.roles and f.brings), "")
+
+
+def is_weak(found: ReagentName) -> bool:
+    """Whether a reagent that carries a partner is rather there as base or solvent."""
+    return _WEAK in found.roles
 
 
 def stages(text: str) -> list[str]:
-    """Split "1) TsCl, pyridine; 2) NaN3, DMF" into its steps."""
+    """Split "1) TsCl, pyridine; 2) NaN3, DMF" or "O3, then Me2S" into its steps."""
     parts = [part.strip(" ;,.") for part in _STAGE.split(text)]
     return [part for part in parts if part]
 
 
 def read_reagents(text: str) -> Reagents:
     """Find every known reagent name in a text, longest names first."""
-    plain = _plain(text)
-    roles: set[str] = set()
-    names: list[str] = []
-    cautions: list[str] = []
-    for name, pattern, row_roles, caution in _names():
-        if pattern.search(plain):
-            plain = pattern.sub(" \0 ", plain)
-            names.append(name)
-            roles.update(row_roles)
-            cautions += [caution] if caution else []
-    unknown = [piece.strip() for piece in re.split(r"[,;/\0]", plain)]
+    found, unknown = read_names(text)
     return Reagents(
-        frozenset(roles),
-        tuple(names),
-        tuple(dict.fromkeys(cautions)),
-        tuple(piece for piece in unknown if re.search(r"[a-z]{2}", piece)),
+        frozenset(role for one in found for role in one.roles),
+        tuple(dict.fromkeys(one.name for one in found)),
+        tuple(dict.fromkeys(one.caution for one in found if one.caution)),
+        tuple(unknown),
+        tuple(found),
     )
-
-
-def _plain(text: str) -> str:
-    """Lower case, one kind of hyphen, subscripts as digits, spaces folded."""
-    folded = text.translate(str.maketrans("₀₁₂₃₄₅₆₇₈₉‐‑–−·•", "0123456789----.."))
-    return " ".join(folded.lower().split())
-
-
-@cache
-def _names() -> tuple[tuple[str, re.Pattern[str], frozenset[str], str], ...]:
-    found = []
-    for row in load_table("reagents"):
-        for name in row["names"].split("; "):
-            pattern = re.compile(rf"(?<![a-z0-9]){re.escape(_plain(name))}(?![a-z0-9])")
-            found.append((name, pattern, frozenset(row["roles"].split()), row["caution"]))
-    return tuple(sorted(found, key=lambda entry: -len(entry[0])))

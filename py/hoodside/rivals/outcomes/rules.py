@@ -12,18 +12,28 @@ from hoodside.molecule import Structure
 
 #: What an organic partner can be, by SMARTS ("|" parts alternatives); a rule asks for one as "partner:<key>".
 PARTNERS = {
-    "alkyl_halide": "[CX4][Cl,Br,I]",
+    "alkyl_halide": "[CX4][Cl,Br,I]|[CX4]OS(=O)(=O)[#6]",
     "alkyl_sulfonate": "[CX4]OS(=O)(=O)[#6]",
-    "aryl_halide": "[c,$([CX3]=C)][F,Cl,Br,I]",
+    "aryl_halide": "[c,$([CX3]=C)][F,Cl,Br,I]|[c,$([CX3]=C)]OS(=O)(=O)C(F)(F)F",
     "acyl_halide": "[CX3](=O)[Cl,Br]",
     "anhydride": "[CX3](=O)[OX2][CX3]=O",
+    "anhydride_open": "[CX3;!R](=O)[OX2;!R][CX3]=O",
+    "anhydride_ring": "[CX3;R](=O)[OX2;R][CX3;R]=O",
+    "carboxylic": "[CX3](=O)[OX2H]",
     "alcohol": "[CX4][OX2H]",
     "phenol": "c[OX2H]",
     "diol": "[OX2H][CX4][CX4][OX2H]|[OX2H][CX4][CX4][CX4][OX2H]",
     "thiol": "[#6][SX2H]",
+    "dithiol": "[SX2H][CX4]~[CX4][SX2H]|[SX2H][CX4]~[CX4]~[CX4][SX2H]",
     "thione": "[#7]C(=S)[#7]|[#7]c(=S)[#7]",
     "amine": "[NX3;H1,H2,H3;!$(N[CX3]=[OX1]);!$(NS(=O)=O);!$(N[CX2]#N)]",
-    "boronic": "[#6][BX3]",
+    "aryl_amine": "c[NX3;!$(N[CX3]=[OX1]);!$(N=O)]",
+    "arylhydrazine": "c[NX3;H1][NX3;H2]",
+    "imide": "[CX3](=O)[NX3;H1][CX3]=O",
+    "isocyanate": "[#6]N=C=O",
+    "isothiocyanate": "[#6]N=C=S",
+    "organic_azide": "[#6]N=[N+]=[N-]",
+    "boronic": "[#6][BX3]|[#6][B-](F)(F)F",
     "stannane": "[#6][Sn]",
     "alkyne": "[CX2H]#[CX2]",
     "alkene": "[CH2X3]=[CHX3]",
@@ -31,11 +41,22 @@ PARTNERS = {
     "ketone": "[CX3](=O)([#6])[#6]",
     "carbonyl": "[CX3;H1,$(C([#6])[#6])]=[OX1]",
     "ketal_donor": "[CX4](O[CH3])(O[CH3])",
+    "formaldehyde": "[CX3H2]=[OX1]",
     "enone": "[CX3]=[CX3][CX3]=[OX1]",
+    "michael_acceptor": "[CX3]=[CX3][$([CX3]=[OX1]),$(C#N),$([N+](=O)[O-])]",
+    "diene": "[C;!a]=[C;!a][C;!a]=[C;!a]",
+    "dienophile": "[C;!a]=[C;!a][$([CX3]=[OX1]),$(C#N),$([N+](=O)[O-])]|C#C[CX3]=[OX1]",
+    "nitroalkane": "[CX4;!H0][N+](=O)[O-]",
     "organometal": "[#6][Mg,Li,Zn]",
+    "grignard": "[#6][Mg]",
+    "lithium": "[#6][Li]",
+    "zinc": "[#6][Zn]",
+    "cuprate": "[#6][Cu]",
     "phosphonium": "[PX4+][CX4]",
+    "phosphonium_plain": "[PX4+][CX4;H2][CX4]",
+    "phosphonium_held": "[PX4+][CX4;H2][!$([CX4])]",
     "phosphonate": "[PX4](=O)[CX4;!H0][CX3]",
-    "active_methylene": "[CX4;H2,H1]([CX3,$(C#N)])[CX3]=O",
+    "active_methylene": "[CX4;H2,H1]([$([CX3]=O),$(C#N)])[$([CX3]=O),$(C#N)]",
     "acyl_donor": "[CX3](=O)([OX2,$(C#N),Cl])[OX2]",
     "oxalate": "[OX2][CX3](=O)[CX3](=O)[OX2]",
     "sulfonyl_chloride": "[SX4](=O)(=O)Cl",
@@ -64,8 +85,19 @@ class Rule:
 
     @property
     def two_component(self) -> bool:
-        """Whether the pattern takes an organic partner."""
+        """Whether the pattern takes a second molecule."""
         return "." in _left(self.pattern) and not self.args.get("lactone")
+
+    @property
+    def with_itself(self) -> bool:
+        """Whether the second molecule is another one of the start."""
+        return "self" in self.args
+
+    @property
+    def asks_partner(self) -> bool:
+        """Whether another organic partner gives another answer."""
+        named = any(choice.startswith("partner:") for choices in self.needs for choice in choices)
+        return named or self.op == "open" or (self.two_component and not self.with_itself)
 
 
 def called_for(roles: Collection[str]) -> list[tuple[Rule, int]]:

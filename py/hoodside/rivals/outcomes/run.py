@@ -3,15 +3,17 @@
 from __future__ import annotations
 
 from collections.abc import Iterable, Iterator
+from dataclasses import dataclass
+from functools import cache
 
 from hoodside.errors import InvalidInputError, StructureError
 from hoodside.molecule import Structure, read_structure
-from hoodside.names import exact_name
 from hoodside.rivals.outcomes.apply import Step, best_first, everywhere
 from hoodside.rivals.outcomes.model import Outcome, Outcomes, Role
-from hoodside.rivals.outcomes.reagents import Reagents, read_reagents, stages
+from hoodside.rivals.outcomes.nothing import why_nothing
+from hoodside.rivals.outcomes.reagents import Reagents, is_weak, read_reagents, stages
 from hoodside.rivals.outcomes.rules import Rule, called_for, of_kind, partner_roles, rules
-from hoodside.rivals.outcomes.stereo import settled, stereo_words
+from hoodside.rivals.outcomes.stereo import mirror_smiles, settled, stereo_words
 
 _BY_PRODUCT_RANK = 40
 _OVER_RANK = 60
@@ -24,8 +26,16 @@ _ROLES: dict[str, Role] = {
 _NEED_BONUS = 3
 _PARTNER_BONUS = 15
 _MOST = 24
-#: Kinds of named compounds that stand by rather than react.
-_NO_PARTNERS = ("solvent",)
+#: Roles of what is poured in to quench, and of what is quenched by it.
+_WORKUP = frozenset(
+    {"acid", "hcl", "water", "quench", "solvent", "alcohol", "methanol", "ethanol", "cold", "drying"}
+)
+_QUENCHED = frozenset(
+    {"organometal", "cuprate", "magnesium", "strong_base", "strong_hydride", "bulky_hydride"}
+    | {"mild_hydride", "borohydride", "dibal"}
+)
+#: Steps of a partner that may be there as base or solvent only come so much later.
+_WEAK_PENALTY = 20
 
 
 def find_outcomes(
@@ -45,12 +55,49 @@ def find_outcomes(
         raise InvalidInputError(
             "No reagent was given.", hint="Name what was added, or the kind of reaction.", field="with"
         )
-    by_name = None if partner else _named_partner(reagents)
-    if by_name:
-        partner = read_structure(by_name[1])
-    read = _in_turn(reagents, partner)
+    texts = stages(reagents)
+    told = read_reagents(", ".join(texts))
+    texts = _without_workup(texts)
+    whole = read_reagents(", ".join(texts))
     now = settled(start)
-    found: list[Outcome] = []
+    steps = [read_reagents(text) for text in texts]
+    found = _of_step(now, whole, partner, kind)
+    if len(steps) > 1 and not _spans(found, steps, partner):
+        found = _in_turn(now, steps, partner, kind)
+    made = any(outcome.role == "product" for outcome in found)
+    return Outcomes(
+        (*found[:_MOST], _unchanged(start)),
+        told.names,
+        told.unknown,
+        "" if made else why_nothing(told, partner),
+    )
+
+
+def _without_workup(texts: list[str]) -> list[str]:
+    """The steps that are more than the quench of an organometal or a hydride (H3O+, NH4Cl, dilute HCl)."""
+    roles = [read_reagents(text).roles for text in texts]
+    kept = [texts[0]] if texts else []
+    for before, now, text in zip(roles, roles[1:], texts[1:], strict=False):
+        if not (now and now <= _WORKUP and before & _QUENCHED):
+            kept.append(text)
+    return kept
+
+
+def _spans(found: list[Outcome], steps: list[Reagents], partner: Structure | None) -> bool:
+    """Whether the likeliest product needs reagents of several steps (borane, then peroxide)."""
+    products = [outcome.rule for outcome in found if outcome.role == "product"]
+    single = {
+        rule.id
+        for read in steps
+        for mate in _mates(read, partner)
+        for rule, _ in called_for(read.roles | partner_roles(mate.structure))
+    }
+    return bool(products) and products[0] not in single
+
+
+def _in_turn(start: Structure, read: list[Reagents], partner: Structure | None, kind: str) -> list[Outcome]:
+    """One step after the other, each upon the likeliest product of the one before."""
+    now, found = start, list[Outcome]()
     for place, one in enumerate(read):
         last = place == len(read) - 1
         # A work-up that calls for nothing leaves what the step before gave.
@@ -58,44 +105,47 @@ def find_outcomes(
         products = [o for o in found if o.role == "product"]
         if not last and products:
             now = read_structure(products[0].smiles)
-    return Outcomes(
-        (*found[:_MOST], _unchanged(start)),
-        tuple(name for one in read for name in one.names),
-        tuple(piece for one in read for piece in one.unknown if not by_name or piece != by_name[0]),
-    )
+    return found
 
 
-def _named_partner(reagents: str) -> tuple[str, str] | None:
-    """Name and SMILES of an organic partner named among the reagents, where the reagent table has none."""
-    for piece in read_reagents(" ".join(stages(reagents))).unknown:
-        named = exact_name(piece)
-        if named is not None and named.kind not in _NO_PARTNERS:
-            return piece, named.smiles
-    return None
+@dataclass(frozen=True, slots=True)
+class _Mate:
+    """An organic partner, and how much later its steps come for being perhaps only base or solvent."""
+
+    structure: Structure | None
+    penalty: float = 0.0
 
 
-def _in_turn(reagents: str, partner: Structure | None) -> list[Reagents]:
-    """The reagents step by step; steps that one rule needs together (borane, then peroxide) are one."""
-    whole = read_reagents(" ".join(stages(reagents)))
-    steps = [read_reagents(text) for text in stages(reagents)]
-    if len(steps) < 2:
-        return [whole]
-    roles = partner_roles(partner)
-    single = {rule.id for one in steps for rule, _ in called_for(one.roles | roles)}
-    spanning = any(
-        rule.id not in single and rule.role == "product" for rule, _ in called_for(whole.roles | roles)
-    )
-    return [whole] if spanning else steps
+def _mates(read: Reagents, partner: Structure | None) -> list[_Mate]:
+    """The partner given, else those the reagents carry; none at all is one too."""
+    if partner is not None:
+        return [_Mate(partner)]
+    carried = [_Mate(_carried(f.brings), _WEAK_PENALTY * is_weak(f)) for f in read.partners()]
+    return carried or [_Mate(None)]
+
+
+@cache
+def _carried(smiles: str) -> Structure:
+    return read_structure(smiles)
 
 
 def _of_step(start: Structure, read: Reagents, partner: Structure | None, kind: str) -> list[Outcome]:
-    roles = frozenset(read.roles | partner_roles(partner))
-    step = Step(partner, roles, read.names)
-    ranked = [(_rank(rule, needs), rule) for rule, needs in called_for(roles)]
-    found = _carry_out(ranked, start, step, read)
-    if not any(o.role == "product" for _, o in found) and kind:
-        found = _carry_out([(rule.rank, rule) for rule in of_kind(kind)], start, step, read)
-    found += _together(found, ranked, start, step, read)
+    found: list[tuple[float, Outcome]] = []
+    done: set[str] = set()
+    mates = _mates(read, partner)
+    for mate in mates:
+        step = Step(mate.structure, read.roles | partner_roles(mate.structure), read)
+        ranked = [
+            (_rank(rule, needs) + mate.penalty * rule.asks_partner, rule)
+            for rule, needs in called_for(step.roles)
+            if rule.id not in done
+        ]
+        here = _carry_out(ranked, start, step, read)
+        found += here + _together(here, ranked, start, step, read)
+        done |= {rule.id for _, rule in ranked if not rule.asks_partner}
+    if kind and not any(o.role == "product" for _, o in found):
+        step = Step(mates[0].structure, read.roles | partner_roles(mates[0].structure), read)
+        found += _carry_out([(rule.rank, rule) for rule in of_kind(kind)], start, step, read)
     found.sort(key=lambda pair: pair[0])
     return _distinct((o for _, o in found), start)
 
@@ -103,7 +153,8 @@ def _of_step(start: Structure, read: Reagents, partner: Structure | None, kind: 
 def _rank(rule: Rule, needs: int) -> float:
     """Rules that ask for more, and for the partner at hand, come first."""
     asks_partner = any(choice.startswith("partner:") for choices in rule.needs for choice in choices)
-    return rule.rank - _NEED_BONUS * needs - _PARTNER_BONUS * (asks_partner or rule.two_component)
+    takes_one = rule.two_component and not rule.with_itself
+    return rule.rank - _NEED_BONUS * needs - _PARTNER_BONUS * (asks_partner or takes_one)
 
 
 def _carry_out(
@@ -186,7 +237,7 @@ def _finished(rule: Rule, products: list[Structure]) -> list[Structure]:
     """Carry aldehydes on to acids where the rule says so; formaldehyde is lost."""
     if rule.args.get("oxidise") != "yes":
         return products
-    step = Step(None, frozenset(), ())
+    step = Step(None, frozenset(), read_reagents(""))
     kept = [p for p in products if len(p.atoms) > 2]
     return [(everywhere(_by_id("ald-acid"), p, step) or [p])[0] for p in kept]
 
@@ -203,7 +254,7 @@ def _outcome(rule: Rule, product: Structure, role: Role, start: Structure, read:
         rule.id,
         rule.name,
         rule.note,
-        stereo_words(product, start),
+        stereo_words(product, start, inverted="invert" in rule.args),
         cautions,
         rule.source,
     )
@@ -223,8 +274,13 @@ def _unchanged(start: Structure) -> Outcome:
 
 
 def _distinct(outcomes: Iterable[Outcome], start: Structure) -> list[Outcome]:
+    """Each compound once; mirror images are one compound where the start has none of its own."""
+    achiral = not any(atom.stereo for atom in start.atoms)
     kept: dict[str, Outcome] = {}
     for outcome in outcomes:
-        if outcome.smiles != start.smiles:
+        if outcome.smiles == start.smiles:
+            continue
+        mirrored = achiral and "@" in outcome.smiles and outcome.smiles not in kept
+        if not (mirrored and mirror_smiles(read_structure(outcome.smiles)) in kept):
             kept.setdefault(outcome.smiles, outcome)
     return list(kept.values())

@@ -11,6 +11,7 @@ from hoodside.molecule import Structure
 Score = Callable[[Structure, dict[int, int]], float]  # structure, map number in the pattern -> atom
 
 _PULLING = "[CX3]=[OX1],[CX2]#[NX1],[N+](=O)[O-],S(=O)=O,C(F)(F)F"
+_BEST_RING = 6
 _HALIDE_ORDER = {"I": 3.0, "Br": 2.0, "Cl": 1.0, "F": 0.0}
 
 
@@ -171,7 +172,13 @@ def diol_six(structure: Structure, site: dict[int, int]) -> float:
     return float(gap) if 0 < gap <= 2 else -10.0
 
 
+def ring(structure: Structure, site: dict[int, int]) -> float:
+    """Rings near six close best; ``site`` holds the atoms that become bonded as 1 and 2."""
+    return -abs(structure.distances_from(site[1])[site[2]] + 1 - _BEST_RING)
+
+
 SCORES: dict[str, Score] = {
+    "ring": ring,
     "cation": cation,
     "diol": diol,
     "diol6": diol_six,

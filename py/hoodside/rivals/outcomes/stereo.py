@@ -37,8 +37,11 @@ def _open_centres(structure: Structure) -> list[int]:
     return found
 
 
-def stereo_words(product: Structure, start: Structure) -> str:
-    """ "racemic", "meso" or "" for a product of an achiral start; "one diastereomer" otherwise."""
+def stereo_words(product: Structure, start: Structure, inverted: bool = False) -> str:
+    """ "racemic", "meso" or "" for a product of an achiral start; what became of its centres otherwise.
+
+    ``inverted``: the step attacks a carbon from behind.
+    """
     marked = sum(bool(atom.cip) for atom in product.atoms)
     if not marked:
         return _unmarked_words(product, start)
@@ -48,6 +51,8 @@ def stereo_words(product: Structure, start: Structure) -> str:
     achiral_start = mirror_smiles(start) == start.smiles
     if achiral_start:
         return "racemic" if marked < 2 else "one diastereomer, racemic"
+    if inverted and any(atom.stereo for atom in start.atoms):
+        return "inverted at the carbon attacked, kept elsewhere"
     return "configuration kept; new centres by the mechanism"
 
 
