@@ -11,6 +11,7 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
+from bench.spin_families import FAMILIES, worst_line
 from engine.dense_spins import dense_lines, expanded
 from hoodside.errors import InvalidInputError
 from hoodside.molecule import read_structure
@@ -27,7 +28,10 @@ from hoodside.predict.spins import (
     spins_from_json,
 )
 from hoodside.predict.spins.basis import blocks, combinations, total_spins
-from hoodside.predict.spins.clusters import displacement
+from hoodside.predict.spins.cluster_choice import choose_clusters
+from hoodside.predict.spins.comparing import displacement
+from hoodside.predict.spins.exact import add_cluster
+from hoodside.predict.spins.model import Heap
 
 Pairs = Sequence[tuple[int, int, float]]
 
@@ -164,36 +168,62 @@ def test_composite_spins_count_every_state() -> None:
 # -- clusters ----------------------------------------------------------------------------------------------
 
 
-def chain(n: int, mhz: float, seed: int) -> SpinSystem:
-    """A chain of spins as along a molecule: neighbours couple, shifts 0.15 to 0.8 ppm apart."""
-    rng = random.Random(seed)
-    shift, shifts = 1.0, []
-    for _ in range(n):
-        shifts.append(mhz * shift)
-        shift += rng.uniform(0.15, 0.8)
-    pairs = [(k, k + 1, rng.uniform(4, 9)) for k in range(n - 1)]
-    return system(shifts, pairs)
+@pytest.mark.parametrize("mhz", [40.0, 60.0, 80.0, 100.0])
+@pytest.mark.parametrize("family", FAMILIES)
+def test_clusters_agree_with_exact_lines_on_a_benchtop_instrument(family: str, mhz: float) -> None:
+    """Lines within 0.05 widths of 1 Hz, and within the error stated."""
+    for seed in range(100, 102):
+        whole = FAMILIES[family](mhz, seed)
+        exact, reduced = exact_lines(whole), cluster_lines(whole)
+        away = worst_line(exact, reduced)
+        assert reduced.method == "clusters"
+        assert away < 0.05
+        assert away <= reduced.error_hz + 0.01
+        assert sum(reduced.intensity) == pytest.approx(sum(exact.intensity), rel=1e-3)
 
 
-@pytest.mark.parametrize("seed", range(3))
-def test_clusters_agree_with_exact_lines(seed: int) -> None:
-    whole = chain(9, 300.0, seed)
-    exact, reduced = exact_lines(whole), cluster_lines(whole, states=36)
-    assert reduced.method == "clusters"
-    peaks = [envelope(x, 200, 2500).peaks(0.02) for x in (exact, reduced)]
-    worst = max(min(abs(a - b) for b, _ in peaks[1]) for a, _ in peaks[0])
-    assert worst < 0.05
-    assert displacement(exact, reduced) < 0.05
+def test_clusters_of_a_weakly_coupled_system_are_small() -> None:
+    """At 400 MHz a chain needs no cluster near the size of the whole (252 states)."""
+    whole = FAMILIES["chain"](400.0, 1)
+    chosen = choose_clusters(whole, list(range(10)))
+    assert max(c.cluster.states for c in chosen) <= 35
+    assert sorted(g for c in chosen for g in c.losses) == list(range(10))
 
 
-def test_error_estimate_covers_the_true_error() -> None:
-    whole = chain(9, 100.0, 5)
-    reduced = cluster_lines(whole, states=72)
-    assert displacement(exact_lines(whole), reduced) <= reduced.error_hz + 0.005
+def test_outer_spins_act_in_second_order() -> None:
+    """Pople, Schneider and Bernstein 1959, section 6-4: the A lines of AB lie at nu - (C - D +- J)/2."""
+    difference, j = 100.0, 8.0
+    heap = Heap()
+    add_cluster(heap, system([0.0, difference], [(0, 1, j)]), [0], [0], [1])
+    c = math.hypot(difference, j)
+    lines = heap.sorted(1e-9, 0.0)
+    assert list(lines.hz) == pytest.approx([-(c - difference + j) / 2, -(c - difference - j) / 2], abs=1e-9)
+    assert list(lines.intensity) == pytest.approx([(1 - j / c) / 2, (1 + j / c) / 2], abs=0.002)
+
+
+@pytest.mark.parametrize("difference", [50.0, 100.0, 200.0])
+def test_second_order_leaves_errors_of_third_order(difference: float) -> None:
+    """ABX with X outside: what is left falls with the square of the distance of X, J^3/D^2."""
+    whole = system([0.0, 6.0, difference], [(0, 1, 8.0), (0, 2, 7.0), (1, 2, 4.0)])
+    heap = Heap()
+    add_cluster(heap, whole, [0, 1], [0, 1], [2])
+    found = heap.sorted(1e-9, 1e-3)
+    exact = [hz for hz, i in resolved(exact_lines(whole)) if hz < difference / 2]
+    assert list(found.hz) == pytest.approx(exact, abs=0.3 * 8.0**3 / difference**2)
+
+
+@pytest.mark.parametrize("family", FAMILIES)
+def test_error_estimate_covers_the_true_error_of_clusters_too_small(family: str) -> None:
+    """Where clusters may not grow, the movement of the lines with their size stands for the error."""
+    for seed in range(4):
+        whole = FAMILIES[family](60.0, seed)
+        reduced = cluster_lines(whole, states=20, most_states=20)
+        assert displacement(exact_lines(whole), reduced) <= 1.5 * reduced.error_hz
 
 
 def test_large_systems_are_answered_by_clusters() -> None:
-    lines = simulate(chain(14, 400.0, 1))
+    whole = system([400.0 + 160 * k for k in range(14)], [(k, k + 1, 5 + k % 4) for k in range(13)])
+    lines = simulate(whole)
     assert lines.method == "clusters"
     assert sum(lines.intensity) == pytest.approx(14, rel=0.01)
     assert lines.error_hz < 0.05

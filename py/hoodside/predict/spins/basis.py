@@ -17,7 +17,7 @@ from math import comb, sqrt
 from hoodside.numerics import zeros
 
 #: Blocks whose structure is kept for the next system of the same kind.
-_KEPT = 256
+_KEPT = 1024
 
 
 @cache
@@ -99,20 +99,34 @@ def largest_block(counts: Sequence[int]) -> int:
 
 
 @lru_cache(maxsize=_KEPT)
-def lowering_matrix(twice: tuple[int, ...], level: int, groups: tuple[int, ...]) -> array[float]:
-    """Sum of F- over some groups, from block ``level`` to the one below: rows below, columns here.
-
-    The array is shared: do not write into it.
-    """
+def _lowerings(twice: tuple[int, ...], level: int) -> tuple[tuple[tuple[int, float], ...], ...]:
+    """F- of every group from block ``level`` to the one below: (element, coefficient) of those it fills."""
     basis = blocks(twice)
-    here, below = basis.codes[level], basis.codes[level - 1]
-    matrix, width, places = zeros(len(here) * len(below)), len(here), basis.places
+    here, places = basis.codes[level], basis.places
+    width, found = len(here), []
+    for g, stride in enumerate(basis.strides):
+        size, coefficients = twice[g] + 1, lowering(twice[g])
+        found.append(
+            tuple(
+                (places[code - stride] * width + column, coefficients[k])
+                for column, code in enumerate(here)
+                if (k := code // stride % size)
+            )
+        )
+    return tuple(found)
+
+
+def lowering_matrix(
+    twice: tuple[int, ...], level: int, groups: Sequence[int], weights: Sequence[float]
+) -> array[float]:
+    """Weighted sum of F- over groups, from block ``level`` to the one below: rows below, columns here."""
+    basis = blocks(twice)
+    matrix = zeros(len(basis.codes[level]) * len(basis.codes[level - 1]))
+    terms = _lowerings(twice, level)
     for g in groups:
-        stride, size, coefficients = basis.strides[g], twice[g] + 1, lowering(twice[g])
-        for column, code in enumerate(here):
-            k = code // stride % size
-            if k:
-                matrix[places[code - stride] * width + column] += coefficients[k]
+        weight = weights[g]
+        for element, coefficient in terms[g]:
+            matrix[element] += weight * coefficient
     return matrix
 
 

@@ -1,43 +1,41 @@
 """Line lists of large systems from overlapping clusters of spins.
 
-Each group is detected inside a cluster of the groups that shape its lines; what is left outside acts on the
-cluster only through J Iz Iz, or not at all. The signal of a set of spins D within a cluster is
-<f|D-|i><f|F-|i>, so that clusters add up to the whole spectrum. After Castillo, Patiny and Wist, J. Magn.
-Reson. 2011, 209, 123. How far lines move when smaller clusters grow to this size is taken as the error.
+Each group is detected inside a cluster of those that shape its lines (see ``cluster_choice``). The signal of
+a set of spins D within a cluster is <f|D-|i><f|F-|i>, so that clusters add up to the whole spectrum. After
+Castillo, Patiny and Wist, J. Magn. Reson. 2011, 209, 123. The error is what perturbation theory says is lost;
+where that is much, how far the lines move as the clusters grow.
 """
 
 from __future__ import annotations
 
-from collections.abc import Sequence
-from dataclasses import dataclass
-from itertools import pairwise
-from math import hypot
+from array import array
+from collections.abc import Iterable
+from dataclasses import replace
 
-from hoodside.predict.spins.basis import largest_block
-from hoodside.predict.spins.exact import add_part, exact_lines, independent_parts
-from hoodside.predict.spins.model import Heap, LineList, Nuclei, SpinSystem
+from hoodside.numerics import merge_lines
+from hoodside.predict.spins.cluster_choice import (
+    CLUSTER_STATES,
+    MOST_STATES,
+    TOLERANCE,
+    Assigned,
+    Cluster,
+    block_size,
+    choose_clusters,
+)
+from hoodside.predict.spins.comparing import displacement
+from hoodside.predict.spins.exact import add_cluster, add_part, exact_lines, independent_parts
+from hoodside.predict.spins.model import Heap, LineList, SpinSystem
 
 #: States in the largest block that are still solved exactly (ten different spins of 1/2).
 EXACT_STATES = 260
-#: The same for one cluster (eight different spins): six times faster than nine.
-CLUSTER_STATES = 72
-#: By how much clusters are made smaller (in states, about two spins) to see how far lines move.
-_SHRINK = 3
+#: Error in Hz for an estimated loss: factor and least value, from tests/bench/bench_spins.py.
+_PER_LOSS, _LEAST_ERROR = 4.0, 0.02
+#: Error in Hz for the mean movement of the lines when the groups added last are taken away: factor.
+_PER_MOVE = 8.0
+#: Groups taken away from a cluster to see how far its lines move.
+_TAKEN_AWAY = 2
 #: Lines of clusters: Hz within which they are one, share of the strongest below which they are left out.
 _COARSE, _FAINT = 2e-3, 1e-5
-#: Hz: an outer group whose influence is smaller is left out altogether.
-_NO_INFLUENCE = 0.02
-#: Mixing above which two groups are detected together.
-_TOGETHER = 0.1
-#: Number of states of the outer groups summed over for one cluster.
-_OUTER_STATES = 8
-
-
-@dataclass(frozen=True, slots=True)
-class _Cluster:
-    inside: tuple[int, ...]
-    detected: tuple[int, ...]
-    outer: tuple[int, ...]
 
 
 def simulate(system: SpinSystem, exact_states: int = EXACT_STATES) -> LineList:
@@ -48,139 +46,62 @@ def simulate(system: SpinSystem, exact_states: int = EXACT_STATES) -> LineList:
         exact_states: largest block, in states, solved exactly.
     """
     parts = independent_parts(system)
-    if all(_states(system, part) <= exact_states for part in parts):
+    if all(block_size(system, part) <= exact_states for part in parts):
         return exact_lines(system)
     return cluster_lines(system, CLUSTER_STATES, exact_states)
 
 
 def cluster_lines(
-    system: SpinSystem, states: int = CLUSTER_STATES, exact_states: int = 0, estimate: bool = True
+    system: SpinSystem,
+    states: int = CLUSTER_STATES,
+    exact_states: int = 0,
+    most_states: int = MOST_STATES,
 ) -> LineList:
-    """The line list by clusters whose largest block has at most ``states`` states.
+    """The line list by clusters.
 
-    ``estimate``: whether to find ``error_hz`` by a second run with smaller clusters.
+    Args:
+        system: at most a few dozen groups.
+        states: largest block of a cluster.
+        exact_states: parts whose largest block is no larger are solved exactly.
+        most_states: largest block where a cluster has to grow further for its lines to be right.
+    Returns: lines whose ``error_hz`` says how far a line may be off.
     """
-    heap = Heap()
+    heap, smaller, loss = Heap(), Heap(), 0.0
     for part in independent_parts(system):
-        if _states(system, part) <= max(exact_states, states):
-            add_part(heap, system, part)
-        else:
-            _add_clusters(heap, system, part, states)
-    found = heap.sorted(_COARSE, _FAINT, "clusters")
-    if not estimate:
-        return found
-    smaller = cluster_lines(system, states // _SHRINK, exact_states, estimate=False)
-    return LineList(found.hz, found.intensity, "clusters", displacement(found, smaller))
+        if block_size(system, part) <= max(exact_states, states):
+            for kept in (heap, smaller):
+                add_part(kept, system, part)
+            continue
+        for assigned in choose_clusters(system, part, states, most_states):
+            found = _signal(system, assigned.cluster, tuple(assigned.losses))
+            heap.add(found)
+            smaller.add(found if assigned.loss <= TOLERANCE else _with_less(system, assigned))
+            loss = max(loss, assigned.loss)
+    lines = heap.sorted(_COARSE, _FAINT, "clusters", _LEAST_ERROR + _PER_LOSS * loss)
+    if loss <= TOLERANCE:
+        return lines
+    moved = displacement(lines, smaller.sorted(_COARSE, _FAINT))
+    return replace(lines, error_hz=min(lines.error_hz, _PER_LOSS * TOLERANCE + _PER_MOVE * moved))
 
 
-def _states(system: SpinSystem, part: Sequence[int]) -> int:
-    return largest_block([system.groups[g].count for g in part])
+def _signal(
+    system: SpinSystem, cluster: Cluster, detected: Iterable[int]
+) -> tuple[array[float], array[float]]:
+    """The lines of the detected groups."""
+    heap = Heap()
+    add_cluster(heap, system, cluster.inside, tuple(detected), cluster.outer)
+    return merge_lines(heap.hz, heap.intensity, _COARSE, _FAINT)
 
 
-def _add_clusters(heap: Heap, system: SpinSystem, part: list[int], states: int) -> None:
-    j = system.matrix()
-    for cluster in _clusters(system, part, j, states):
-        reduced = _with_outer(system, cluster)
-        inside = list(range(len(cluster.inside)))
-        lines = Heap()
-        add_part(lines, reduced, inside, [cluster.inside.index(g) for g in cluster.detected])
-        thinned = lines.sorted(_COARSE, _FAINT)
-        heap.add((thinned.hz, thinned.intensity))
-
-
-def _with_outer(system: SpinSystem, cluster: _Cluster) -> SpinSystem:
-    """The cluster as a system of its own; outer groups become like heteronuclei (J Iz Sz only)."""
-    hetero = [h for h, n in enumerate(system.groups) if not n.observed]
-    kept = [*cluster.inside, *cluster.outer, *hetero]
-    place = {g: k for k, g in enumerate(kept)}
-    groups = tuple(Nuclei(system.groups[g].hz, system.groups[g].count, g in cluster.inside) for g in kept)
-    pairs = tuple((place[a], place[b], hz) for a, b, hz in system.couplings if a in place and b in place)
-    return SpinSystem(groups, pairs)
-
-
-def _clusters(system: SpinSystem, part: list[int], j: list[list[float]], states: int) -> list[_Cluster]:
-    mixing = {(a, b): _mixing(system, j, a, b) for a in part for b in part if j[a][b]}
-    found: dict[tuple[tuple[int, ...], tuple[int, ...]], list[int]] = {}
-    for detected in _detected_together(system, part, mixing, states):
-        influence = _influence(part, detected, j, mixing)
-        inside: list[int] = list(detected)
-        outer: list[int] = []
-        for g in sorted(influence, key=lambda g: -influence[g]):
-            if influence[g] < _NO_INFLUENCE:
-                break
-            if _states(system, [*inside, g]) <= states:
-                inside.append(g)
-            elif _outer_states(system, [*outer, g]) <= _OUTER_STATES:
-                outer.append(g)
-        key = tuple(sorted(inside)), tuple(sorted(outer))
-        found[key] = sorted([*found.get(key, []), *detected])
-    return [_Cluster(inside, tuple(detected), outer) for (inside, outer), detected in found.items()]
-
-
-def _outer_states(system: SpinSystem, outer: Sequence[int]) -> int:
-    total = 1
-    for g in outer:
-        total *= system.groups[g].count + 1
-    return total
-
-
-def _mixing(system: SpinSystem, j: list[list[float]], a: int, b: int) -> float:
-    """How much J mixes the states of two groups: J over the root of J squared + difference squared."""
-    return abs(j[a][b]) / hypot(j[a][b], system.groups[a].hz - system.groups[b].hz)
-
-
-def _detected_together(
-    system: SpinSystem, part: list[int], mixing: dict[tuple[int, int], float], states: int
-) -> list[list[int]]:
-    """Sets of strongly mixed groups, as long as they leave room in the cluster for their neighbours."""
-    sets = [[g] for g in part]
-    for (a, b), value in sorted(mixing.items(), key=lambda item: -item[1]):
-        if value < _TOGETHER:
-            break
-        first = next(s for s in sets if a in s)
-        second = next(s for s in sets if b in s)
-        if first is not second and _states(system, [*first, *second]) * 8 <= states:
-            first += second
-            sets.remove(second)
-    return sets
-
-
-def _influence(
-    part: list[int],
-    detected: Sequence[int],
-    j: list[list[float]],
-    mixing: dict[tuple[int, int], float],
-) -> dict[int, float]:
-    """Effect in Hz of every other group on the lines of the detected ones.
-
-    Along a path it is the last coupling times the mixing of every pair before it.
-    """
-    reach = dict.fromkeys(detected, 1.0)
-    effect: dict[int, float] = {}
-    queue = list(detected)
-    for g in queue:
-        for h in part:
-            if not j[g][h] or h in detected:
-                continue
-            effect[h] = max(effect.get(h, 0.0), reach[g] * abs(j[g][h]))
-            further = reach[g] * mixing[g, h]
-            if further > reach.get(h, 0.0):
-                reach[h] = further
-                queue.append(h)
-    return effect
-
-
-def displacement(a: LineList, b: LineList) -> float:
-    """How far apart two spectra of equal total intensity are: mean distance in Hz that intensity must move.
-
-    The sum of absolute differences of the integrals, per unit of intensity (the Wasserstein distance).
-    """
-    steps = sorted(
-        [(hz, i) for hz, i in zip(a.hz, a.intensity, strict=True)]
-        + [(hz, -i) for hz, i in zip(b.hz, b.intensity, strict=True)]
-    )
-    total, moved, balance = sum(a.intensity), 0.0, 0.0
-    for (hz, i), (following, _) in pairwise(steps):
-        balance += i
-        moved += abs(balance) * (following - hz)
-    return moved / total if total else 0.0
+def _with_less(system: SpinSystem, assigned: Assigned) -> tuple[array[float], array[float]]:
+    """The same lines, those of groups that lose much from the cluster without the groups added last."""
+    cluster = assigned.cluster
+    certain = [g for g, hz in assigned.losses.items() if hz <= TOLERANCE]
+    doubtful = [g for g in assigned.losses if g not in certain]
+    spare = [g for g in cluster.inside if g not in doubtful][-_TAKEN_AWAY:]
+    kept = tuple(g for g in cluster.inside if g not in spare)
+    heap = Heap()
+    if certain:
+        heap.add(_signal(system, cluster, certain))
+    heap.add(_signal(system, replace(cluster, inside=kept), doubtful))
+    return heap.hz, heap.intensity

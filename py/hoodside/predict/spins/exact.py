@@ -8,13 +8,13 @@ Corio, Structure of High-Resolution NMR Spectra, 1966.
 from __future__ import annotations
 
 from array import array
-from collections.abc import Iterator, Sequence
-from itertools import product as choices
-from math import comb, sqrt
+from collections.abc import Sequence
+from math import sqrt
 
 from hoodside.numerics import eigh, product, transitions, zeros
 from hoodside.predict.spins.basis import Blocks, blocks, combinations, flip_flops, lowering_matrix
 from hoodside.predict.spins.model import Heap, LineList, SpinSystem
+from hoodside.predict.spins.surroundings import Hamiltonian, second_order, surrounded
 
 #: Hz within which lines are one.
 COINCIDENT = 1e-7
@@ -61,85 +61,89 @@ def add_part(
         part: observed groups that enter the Hamiltonian.
         detected: those of ``part`` whose signal is wanted (all when None).
     """
-    j = system.matrix()
-    counts = [system.groups[g].count for g in part]
-    inner = [[j[a][b] for b in part] for a in part]
-    seen = None if detected is None else [part.index(g) for g in detected]
-    for offsets, share in _heteronuclear(system, part, j):
-        shifts = [system.groups[g].hz + offset for g, offset in zip(part, offsets, strict=True)]
+    add_cluster(heap, system, part, part if detected is None else detected, ())
+
+
+def add_cluster(
+    heap: Heap, system: SpinSystem, inside: Sequence[int], detected: Sequence[int], outer: Sequence[int]
+) -> None:
+    """Add the signal of some groups of a cluster.
+
+    Args:
+        heap: where the lines go.
+        system: all groups.
+        inside: observed groups that enter the Hamiltonian.
+        detected: those of ``inside`` whose signal is wanted.
+        outer: groups that act on those inside in second order (see ``surroundings``).
+    """
+    counts = [system.groups[g].count for g in inside]
+    seen = None if len(detected) == len(inside) else [inside.index(g) for g in detected]
+    for around in surrounded(system, system.matrix(), inside, outer):
         for twice, weight in combinations(counts):
-            scale = share * weight / 2 ** (sum(counts) - 1)
-            _add_composite(heap, twice, shifts, inner, scale, seen)
-
-
-def _heteronuclear(
-    system: SpinSystem, part: Sequence[int], j: list[list[float]]
-) -> Iterator[tuple[list[float], float]]:
-    """(shift of each group of ``part`` in Hz, share) for every state of the heteronuclei coupled to it."""
-    others = [h for h, n in enumerate(system.groups) if not n.observed and any(j[g][h] for g in part)]
-    sizes = [system.groups[h].count for h in others]
-    for levels in choices(*(range(n + 1) for n in sizes)):
-        share = 1.0
-        for k, n in zip(levels, sizes, strict=True):
-            share *= comb(n, k) / 2**n
-        yield (
-            [sum(j[g][h] * (k - n / 2) for h, k, n in zip(others, levels, sizes, strict=True)) for g in part],
-            share,
-        )
+            scale = around.share * weight / 2 ** (sum(counts) - 1)
+            _add_composite(heap, twice, around, scale, seen)
 
 
 def _add_composite(
-    heap: Heap,
-    twice: tuple[int, ...],
-    shifts: Sequence[float],
-    j: list[list[float]],
-    scale: float,
-    detected: Sequence[int] | None,
+    heap: Heap, twice: tuple[int, ...], around: Hamiltonian, scale: float, detected: Sequence[int] | None
 ) -> None:
     """Add the lines of composite spins of the given 2 F, intensities times ``scale``."""
     basis = blocks(twice)
-    diagonal = _diagonal(basis, shifts, j)
+    diagonal = _diagonal(basis, around)
     least = sqrt(_NO_INTENSITY / scale)
+    every = range(len(twice))
     below: tuple[array[float], array[float]] | None = None
     for level, codes in enumerate(basis.codes):
-        here = eigh(len(codes), _block(basis, level, diagonal, j))
+        here = eigh(len(codes), _block(basis, level, diagonal, around.flips))
         if below is not None:
-            total = _transition(basis, level, below[1], here[1], range(len(twice)))
-            own = total if detected is None else _transition(basis, level, below[1], here[1], detected)
+            total = _transition(basis, level, below[1], here[1], every, around.weights)
+            own = total
+            if detected is not None:
+                own = _transition(basis, level, below[1], here[1], detected, around.weights)
             heap.add(transitions((below[0], here[0]), (total, own), scale, least))
         below = here
 
 
 def _transition(
-    basis: Blocks, level: int, below: array[float], here: array[float], groups: Sequence[int]
+    basis: Blocks,
+    level: int,
+    below: array[float],
+    here: array[float],
+    groups: Sequence[int],
+    weights: Sequence[float],
 ) -> array[float]:
     """Amplitudes between eigenstates of two neighbouring blocks: rows below, columns here."""
     n, m = len(basis.codes[level - 1]), len(basis.codes[level])
-    lowered = product(n, m, m, lowering_matrix(basis.twice, level, tuple(groups)), here)
+    lowered = product(n, m, m, lowering_matrix(basis.twice, level, groups, weights), here)
     return product(n, n, m, below, lowered, turned=True)
 
 
-def _diagonal(basis: Blocks, shifts: Sequence[float], j: list[list[float]]) -> list[float]:
-    """Diagonal element of every state, by code: sum nu m + sum J m m'."""
+def _diagonal(basis: Blocks, around: Hamiltonian) -> list[float]:
+    """Diagonal element of every state, by code: sum nu m + sum J m m', and what outer spins do to it."""
     energies, levels = [0.0], [()]  # type: tuple[list[float], list[tuple[float, ...]]]
     for g, twice in enumerate(basis.twice):
-        row, shift = j[g], shifts[g]
+        row, shift = around.along[g], around.shifts[g]
         fields = [shift + sum(hz * m for hz, m in zip(row, state, strict=False) if hz) for state in levels]
         ms = [k - twice / 2 for k in range(twice + 1)]
         energies = [e + f * m for m in ms for e, f in zip(energies, fields, strict=True)]
         levels = [(*state, m) for m in ms for state in levels]
+    squares = [t / 2 * (t / 2 + 1) for t in basis.twice]
+    for outer in around.outer:
+        energies = [
+            e + second_order(outer, around, squares, ms) for e, ms in zip(energies, levels, strict=True)
+        ]
     return energies
 
 
-def _block(basis: Blocks, level: int, diagonal: list[float], j: list[list[float]]) -> array[float]:
+def _block(basis: Blocks, level: int, diagonal: list[float], flips: list[list[float]]) -> array[float]:
     """The Hamiltonian of one block, row-major."""
     codes = basis.codes[level]
     n = len(codes)
     matrix = zeros(n * n)
     for at, code in enumerate(codes):
         matrix[at * (n + 1)] = diagonal[code]
-    for (a, b), flips in flip_flops(basis.twice, level).items():
-        hz = j[a][b]
-        for above, below, coefficient in flips if hz else ():
+    for (a, b), elements in flip_flops(basis.twice, level).items():
+        hz = flips[a][b]
+        for above, below, coefficient in elements if hz else ():
             matrix[above] = matrix[below] = hz * coefficient
     return matrix

@@ -68,7 +68,7 @@ class LineList:
         hz: frequencies in Hz, rising.
         intensity: one per line.
         method: "exact", or "clusters" where a system was too large.
-        error_hz: how far lines move when the clusters grow, estimated in Hz (0 for exact).
+        error_hz: how far a line may be off, estimated in Hz (0 for exact).
     """
 
     hz: array[float]
