@@ -22,6 +22,7 @@ sys.path[:0] = [str(HERE.parents[2] / "py"), str(HERE.parents[1])]
 
 from bench.spin_families import FAMILIES, worst_line  # noqa: E402
 from bench.spin_timing import seconds, timed_system  # noqa: E402
+from bench.spins_on_page import on_page  # noqa: E402
 from bench.synthetic_multiplets import synthetic  # noqa: E402
 from bench.tables import Figure, print_figures  # noqa: E402
 from engine.dense_spins import dense_lines, tuned_dense_lines  # noqa: E402
@@ -47,7 +48,7 @@ MULTIPLETS = 300
 
 def run() -> None:
     """Print all figures."""
-    print_figures([*agreement(), *speed(), *in_browser(), *clusters(), *reading()])
+    print_figures([*agreement(), *speed(), *in_pyodide(), *on_page(LARGE), *clusters(), *reading()])
     cost_curve()
 
 
@@ -103,8 +104,8 @@ def _dense_seconds(system: SpinSystem, method: Callable[..., Any]) -> float:
     return best
 
 
-def in_browser() -> list[Figure]:
-    """Seconds in Pyodide under Node, where the packages are there."""
+def in_pyodide() -> list[Figure]:
+    """Seconds in Pyodide under Node, where the packages are there: the solver alone, without the door."""
     node = shutil.which("node")
     folders = (
         HERE.parents[2] / "web/node_modules",

@@ -20,6 +20,18 @@ def test_trace_of_a_para_pair_at_two_fields() -> None:
     assert total == pytest.approx(14, abs=0.3)
 
 
+@pytest.mark.parametrize("points", [50, 400, 1600, 20_000])
+def test_trace_runs_on_between_its_points(points: int) -> None:
+    """However many points are asked for: a line of 1 Hz over a window of 24 Hz never falls to nothing."""
+    found = call("trace", {"smiles": "CC(C)=O", "mhz": 60, "from_ppm": 2.0, "to_ppm": 2.4, "points": points})
+    heights = found["heights"]
+    assert len(heights) == points
+    assert min(heights) > 0
+    top = heights.index(max(heights))
+    assert heights[: top + 1] == sorted(heights[: top + 1])
+    assert heights[top:] == sorted(heights[top:], reverse=True)
+
+
 def test_trace_window_holds_its_line() -> None:
     found = call("trace", {"smiles": "CC(C)=O", "from_ppm": 2.0, "to_ppm": 2.4, "points": 400})
     top = found["heights"].index(1)

@@ -6,7 +6,7 @@ from typing import Any
 
 from hoodside.methods.arguments import integer
 from hoodside.methods.structures import structure_of
-from hoodside.predict.spins import envelope
+from hoodside.predict.spins import Trace, envelope
 from hoodside.predict.spins.contract import fit_from_json, lines_to_json, spins_from_json
 from hoodside.predict.spins.model import LineList
 from hoodside.predict.spins.molecule import FIELDS, simulate_groups
@@ -138,14 +138,29 @@ def _ends(shifts: list[float], from_ppm: float | None, to_ppm: float | None) -> 
 
 
 def _add(heights: list[float], lines: LineList, lo_hz: float, hi_hz: float, width: float) -> None:
-    """Add a system's envelope, the highest point within each step so that no narrow line is lost."""
+    """Add a system's envelope: between its points where the trace has more, else the highest of each step."""
     drawn = envelope(lines, lo_hz, hi_hz, max(width, (hi_hz - lo_hz) / 20_000))
     step = (hi_hz - lo_hz) / (len(heights) - 1)
-    highest: dict[int, float] = {}
+    between = _between if step < drawn.step_hz else _highest
+    for place, height in enumerate(between(drawn, step, len(heights))):
+        heights[place] += height
+
+
+def _between(drawn: Trace, step: float, points: int) -> list[float]:
+    """Heights at finer steps than those of the envelope, on straight lines between its points."""
+    last = len(drawn.heights) - 1
+    found = []
+    for place in range(points):
+        at = place * step / drawn.step_hz
+        k = min(int(at), last - 1)
+        found.append(drawn.heights[k] + (drawn.heights[k + 1] - drawn.heights[k]) * min(at - k, 1.0))
+    return found
+
+
+def _highest(drawn: Trace, step: float, points: int) -> list[float]:
+    """The highest point of the envelope within each step, so that no narrow line is lost."""
+    found = [0.0] * points
     for k, height in enumerate(drawn.heights):
-        place = round(k * drawn.step_hz / step)
-        if height > highest.get(place, 0.0):
-            highest[place] = height
-    for place, height in highest.items():
-        if 0 <= place < len(heights):
-            heights[place] += height
+        place = min(round(k * drawn.step_hz / step), points - 1)
+        found[place] = max(found[place], height)
+    return found
