@@ -4,15 +4,16 @@ from __future__ import annotations
 
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
+from itertools import count
 from typing import TYPE_CHECKING, Any
 
 from hoodside.advise.next import Standing, advise
-from hoodside.errors import FormulaError, InvalidInputError, StructureError
+from hoodside.errors import FormulaError
 from hoodside.predict.formula import parse_formula, unsaturation
 from hoodside.predict.model import ProtonGroup
+from hoodside.put_up import POOL, candidates_of, expected_of, put_up_of, rivals_of, stated_of
 from hoodside.readings import Readings
 from hoodside.readings.from_json import readings_from_json
-from hoodside.weigh.expectations import Expectations, expectations
 from hoodside.weigh.finding import Leftover
 from hoodside.weigh.sentence import name_of, sentence
 from hoodside.weigh.structure import Tally, weigh_structure
@@ -21,9 +22,6 @@ from hoodside.weigh.words import capital, listed
 
 if TYPE_CHECKING:
     from hoodside.rivals import Rival
-
-#: More candidates than this are not weighed at once.
-MOST_CANDIDATES = 200
 
 
 @dataclass(frozen=True, slots=True)
@@ -47,7 +45,8 @@ def check_case(case: dict[str, Any]) -> dict[str, Any]:
     """
     readings = readings_from_json(case)
     candidates = candidates_of(case)
-    ranked = rank(readings, candidates, rivals_of(case, readings, candidates), stated_of(case))
+    stay = (*stated_of(case), *put_up_of(case))
+    ranked = rank(readings, candidates, rivals_of(case, readings, candidates), stay)
     formula = _formula(readings, ranked)
     warnings = [*readings.warnings, *_doubts(readings, ranked)]
     return {
@@ -68,35 +67,6 @@ def _standing(ranked: Sequence[Ranked]) -> list[Standing]:
     ]
 
 
-def candidates_of(case: dict[str, Any]) -> list[str]:
-    """The candidates of a check object as SMILES. Raises: InvalidInputError, StructureError."""
-    given = case.get("candidates") or []
-    if not isinstance(given, list | tuple):
-        raise InvalidInputError(
-            "candidates is no list.", hint="Give a list of SMILES.", field="candidates", value=given
-        )
-    if len(given) > MOST_CANDIDATES:
-        raise InvalidInputError(
-            f"{len(given)} candidates are too many.",
-            hint=f"Give at most {MOST_CANDIDATES}.",
-            field="candidates",
-            value=len(given),
-        )
-    return [_smiles(entry, f"candidates[{i}]") for i, entry in enumerate(given)]
-
-
-def _smiles(entry: object, field: str) -> str:
-    if not isinstance(entry, str) or not entry.strip():
-        raise InvalidInputError("A candidate is no text.", hint="Give a SMILES.", field=field, value=entry)
-    text = entry.strip("\r") if "\n" in entry.strip() else entry.strip()
-    if "\n" not in text:
-        return text
-    try:  # atoms are numbered by what the answer shows
-        return expectations(text, Readings()).structure.smiles
-    except StructureError as err:
-        raise StructureError(str(err), hint=err.hint, field=field, value=entry) from err
-
-
 def rank(
     readings: Readings,
     candidates: Sequence[str],
@@ -105,7 +75,7 @@ def rank(
 ) -> list[Ranked]:
     """Candidates and rivals weighed and judged, best first. Raises: StructureError naming the candidate.
 
-    Of ``rivals`` the best are kept; those that a step may have left, ``stated`` with their names, all stay.
+    Of ``rivals`` the best are kept; those with what they are called, ``stated`` ("" for no name), all stay.
     """
     tallies = [_tally(source, readings, f"candidates[{i}]") for i, source in enumerate(candidates)]
     mine = {t.expected.structure.inchikey for t in tallies}
@@ -115,7 +85,8 @@ def rank(
     put_up = [*left, *found[: len(rivals) // POOL]]
     tallies += [t for _, t in put_up]
     called = {rival.smiles: name for name, rival in stated}
-    names = [called.get(r.smiles) or f"rival {i + 1 - len(left)}" for i, (r, _) in enumerate(put_up)]
+    numbers = count(1)
+    names = [called.get(r.smiles) or f"rival {next(numbers)}" for r, _ in put_up]
     verdicts, parts = judge(tallies), shares(tallies)
     ranked = []
     for i, tally in enumerate(tallies):
@@ -131,52 +102,8 @@ def _others(rivals: Sequence[Rival], readings: Readings, known: set[str]) -> lis
     return [(rival, tally) for rival, tally in found if tally.expected.structure.inchikey not in known]
 
 
-#: So many rivals are weighed for each one asked for; the best are kept.
-POOL = 2
-MOST_RIVALS = 200
-
-
-def rivals_of(case: dict[str, Any], readings: Readings, candidates: Sequence[str]) -> tuple[Rival, ...]:
-    """Look-alikes of the intended structure, ``POOL`` times as many as the check object asks for.
-
-    Raises: InvalidInputError for a number that is none or too large.
-    """
-    wanted = case.get("rivals") or 0
-    if not isinstance(wanted, int) or isinstance(wanted, bool) or not 0 <= wanted <= MOST_RIVALS:
-        raise InvalidInputError(
-            f"rivals is {wanted!r}.", hint=f"Ask for 0 to {MOST_RIVALS}.", field="rivals", value=wanted
-        )
-    if not wanted or not candidates:
-        return ()
-    from hoodside.rivals import find_rivals  # only who asks for rivals pays for loading the search
-
-    intended = case.get("intended")
-    at = intended if isinstance(intended, int) and 0 <= intended < len(candidates) else 0
-    structure = _expected(candidates[at], readings, f"candidates[{at}]").structure
-    known = bool(readings.formula or readings.hrms or readings.analysis)
-    found = find_rivals(structure, formula_known=known, readings=readings, limit=POOL * wanted)
-    return found.rivals
-
-
-def stated_of(case: dict[str, Any]) -> tuple[tuple[str, Rival], ...]:
-    """What the step of a check object may have left, each with its name. Raises: as ``step_from_json``."""
-    if case.get("step") is None:
-        return ()
-    from hoodside.rivals.stated import stated_rivals, step_from_json
-
-    step = step_from_json(case["step"])
-    return stated_rivals(step) if step else ()
-
-
 def _tally(source: str, readings: Readings, field: str) -> Tally:
-    return weigh_structure(_expected(source, readings, field), readings)
-
-
-def _expected(source: str, readings: Readings, field: str) -> Expectations:
-    try:
-        return expectations(source, readings)
-    except StructureError as err:
-        raise StructureError(str(err), hint=err.hint, field=field, value=source) from err
+    return weigh_structure(expected_of(source, readings, field), readings)
 
 
 def _formula(readings: Readings, ranked: Sequence[Ranked]) -> tuple[str, float | None]:

@@ -31,6 +31,7 @@ STEPS = (
     {"predict", "reagent_names"},
     {"weigh", "rivals", "amounts", "record"},
     {"advise"},
+    {"put_up"},
     {"check", "hunt"},
     {"methods"},
     {"engine"},

@@ -143,3 +143,30 @@ def test_a_bad_step_is_named(step: Any, field: str, error: type[Exception]) -> N
 def test_a_bad_slice_is_named() -> None:
     with pytest.raises(InvalidInputError, match="slice_ms"):
         hunt(STRUCTURE, slice_ms=0)
+
+
+def test_rivals_found_before_stand_in_a_check_and_take_part_in_its_verdict() -> None:
+    """Ring position left open by readings without the aromatic signals: ortho, meta and para fit alike."""
+    readings = {"formula": "C10H12O2", "h1": [{"ppm": 4.10, "mult": "q", "j": [7.0], "n": 2}]}
+    alone = call("check", {**readings, "candidates": [STRUCTURE]})["candidates"]
+    put_up = [{"smiles": "CCOc1cccc(C(C)=O)c1", "how": ["at another position of the ring"]}]
+    together = call("check", {**readings, "candidates": [STRUCTURE], "put_up": put_up})["candidates"]
+    (rival,) = (c for c in together if c["index"] is None)
+    assert (rival["name"], rival["how"]) == ("rival 1", put_up[0]["how"])
+    assert len(alone) == 1
+    assert {c["verdict"] for c in together} == {"undecided"}
+
+
+def test_a_rival_put_up_that_is_a_candidate_already_stands_once() -> None:
+    answer = call("check", {"candidates": ["CCO"], "put_up": [{"smiles": "OCC"}]})
+    assert len(answer["candidates"]) == 1
+
+
+@pytest.mark.parametrize(
+    ("put_up", "field"),
+    [(3, "put_up"), (["CCO"], "put_up[0]"), ([{"how": []}], "put_up[0].smiles"), ([{}] * 30, "put_up")],
+)
+def test_bad_rivals_put_up_are_named(put_up: Any, field: str) -> None:
+    with pytest.raises(InvalidInputError) as caught:
+        call("check", {"candidates": ["CCO"], "put_up": put_up})
+    assert (caught.value.field or "").startswith(field)

@@ -43,7 +43,7 @@ _KEYS = (
     "text",
 )
 #: Keys of a check that are no readings.
-_OF_THE_CHECK = ("candidates", "intended", "rivals", "step")
+_OF_THE_CHECK = ("candidates", "intended", "rivals", "step", "put_up")
 _OTHER_KEYS = (*_OF_THE_CHECK, "warnings", "name", "title", "note", "notes", "source")
 
 
