@@ -23,7 +23,7 @@ sys.path[:0] = [str(HERE.parents[2] / "py"), str(HERE.parents[1])]
 from bench.spin_families import FAMILIES, worst_line  # noqa: E402
 from bench.spin_timing import seconds, timed_system  # noqa: E402
 from bench.spins_on_page import on_page  # noqa: E402
-from bench.synthetic_multiplets import synthetic  # noqa: E402
+from bench.synthetic_multiplets import mixture  # noqa: E402
 from bench.tables import Figure, print_figures  # noqa: E402
 from engine.dense_spins import dense_lines, tuned_dense_lines  # noqa: E402
 from hoodside.molecule import read_structure  # noqa: E402
@@ -157,8 +157,7 @@ def reading() -> list[Figure]:
     """Made-up multiplets whose pattern and J (within 0.4 Hz) come back."""
     rng, right = random.Random(1), 0
     began = time.perf_counter()
-    for _ in range(MULTIPLETS):
-        made = synthetic(rng)
+    for made in mixture(rng, MULTIPLETS):
         found = read_multiplet(made.hz, made.heights).readings
         right += bool(found) and found[0].pattern == made.pattern and _near(found[0].j, made.j)
     each = (time.perf_counter() - began) / MULTIPLETS

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import random
 from dataclasses import dataclass
-from itertools import pairwise
+from itertools import pairwise, product
 
 from hoodside.predict.multiplet import Splitting, lines, name_of
 
@@ -26,18 +26,24 @@ class Synthetic:
     overlaps: int
 
 
-def synthetic(rng: random.Random) -> Synthetic:
-    """A first-order multiplet of 2 to 4 couplings with at most two overlapped lines."""
+def synthetic(rng: random.Random, letters: int | None = None, overlaps: int | None = None) -> Synthetic:
+    """A first-order multiplet of 2 to 4 couplings with at most two overlapped lines, or as many as asked."""
     while True:
-        counts = [rng.choices([1, 2, 3], [6, 3, 1])[0] for _ in range(rng.randint(2, 4))]
+        counts = [rng.choices([1, 2, 3], [6, 3, 1])[0] for _ in range(letters or rng.randint(2, 4))]
         j = sorted((rng.uniform(*J_RANGE) for _ in counts), reverse=True)
         if sum(counts) > MOST_PARTNERS or any(a - b < APART for a, b in pairwise(j)):
             continue
         name = name_of([Splitting(hz, n) for hz, n in zip(j, counts, strict=True)])
         printed = _overlapped(lines(name, j))
-        overlaps = len(lines(name, j)) - len(printed)
-        if overlaps <= MOST_OVERLAPS:
-            return _noisy(rng, name, j, printed, overlaps)
+        hidden = len(lines(name, j)) - len(printed)
+        if hidden == overlaps if overlaps is not None else hidden <= MOST_OVERLAPS:
+            return _noisy(rng, name, j, printed, hidden)
+
+
+def mixture(rng: random.Random, size: int) -> list[Synthetic]:
+    """As many of 2 as of 3 and 4 couplings, and as many without as with one and two overlapped lines."""
+    kinds = list(product((2, 3, 4), range(MOST_OVERLAPS + 1)))
+    return [synthetic(rng, *kinds[k % len(kinds)]) for k in range(size)]
 
 
 def _overlapped(sharp: list[tuple[float, float]]) -> list[tuple[float, float]]:
