@@ -38,6 +38,7 @@ class Step:
     partner: Structure | None
     roles: frozenset[str]
     read: Reagents
+    racemic: bool = False  # the start stands for both of its enantiomers
 
 
 def best_first(rule: Rule, structure: Structure, step: Step) -> list[list[Structure]]:
@@ -53,7 +54,8 @@ def best_first(rule: Rule, structure: Structure, step: Step) -> list[list[Struct
 def everywhere(rule: Rule, structure: Structure, step: Step) -> list[Structure]:
     """The products when every site has reacted."""
     now, rest = structure, []
-    for _ in range(int(rule.args.get("times", _MOST_ROUNDS))):
+    rounds = 1 if rule.with_itself else int(rule.args.get("times", _MOST_ROUNDS))
+    for _ in range(rounds):
         turns = best_first(rule, now, step)
         if not turns or turns[0][0].smiles == now.smiles:
             break

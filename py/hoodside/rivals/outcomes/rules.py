@@ -86,12 +86,17 @@ class Rule:
     @property
     def two_component(self) -> bool:
         """Whether the pattern takes a second molecule."""
-        return "." in _left(self.pattern) and not self.args.get("lactone")
+        return "." in _left(self.pattern)
 
     @property
     def with_itself(self) -> bool:
         """Whether the second molecule is another one of the start."""
         return "self" in self.args
+
+    @property
+    def inverts(self) -> bool:
+        """Whether a carbon is attacked from behind."""
+        return "invert" in self.args or "invert_partner" in self.args
 
     @property
     def asks_partner(self) -> bool:
@@ -146,7 +151,7 @@ def _overlap(asked: frozenset[str], offered: frozenset[str]) -> float:
 
 
 def _left(pattern: str) -> str:
-    return re.sub(r"^\([^>]*?\)(?=\.|>>)", "X", pattern.split(">>")[0])
+    return re.sub(r"^\([^>]*?\)(?=\.|$)", "X", pattern.split(">>")[0])
 
 
 @cache

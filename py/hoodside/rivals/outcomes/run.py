@@ -13,7 +13,7 @@ from hoodside.rivals.outcomes.model import Outcome, Outcomes, Role
 from hoodside.rivals.outcomes.nothing import why_nothing
 from hoodside.rivals.outcomes.reagents import Reagents, is_weak, read_reagents, stages
 from hoodside.rivals.outcomes.rules import Rule, called_for, of_kind, partner_roles, rules
-from hoodside.rivals.outcomes.stereo import mirror_smiles, settled, stereo_words
+from hoodside.rivals.outcomes.stereo import is_achiral, mirror_smiles, settled, stereo_words
 
 _BY_PRODUCT_RANK = 40
 _OVER_RANK = 60
@@ -61,9 +61,10 @@ def find_outcomes(
     whole = read_reagents(", ".join(texts))
     now = settled(start)
     steps = [read_reagents(text) for text in texts]
-    found = _of_step(now, whole, partner, kind)
+    racemic = is_achiral(start)
+    found = _of_step(now, whole, partner, kind, racemic)
     if len(steps) > 1 and not _spans(found, steps, partner):
-        found = _in_turn(now, steps, partner, kind)
+        found = _in_turn(now, steps, partner, kind, racemic)
     made = any(outcome.role == "product" for outcome in found)
     return Outcomes(
         (*found[:_MOST], _unchanged(start)),
@@ -95,13 +96,15 @@ def _spans(found: list[Outcome], steps: list[Reagents], partner: Structure | Non
     return bool(products) and products[0] not in single
 
 
-def _in_turn(start: Structure, read: list[Reagents], partner: Structure | None, kind: str) -> list[Outcome]:
+def _in_turn(
+    start: Structure, read: list[Reagents], partner: Structure | None, kind: str, racemic: bool
+) -> list[Outcome]:
     """One step after the other, each upon the likeliest product of the one before."""
     now, found = start, list[Outcome]()
     for place, one in enumerate(read):
         last = place == len(read) - 1
         # A work-up that calls for nothing leaves what the step before gave.
-        found = _of_step(now, one, partner, kind if last else "") or found
+        found = _of_step(now, one, partner, kind if last else "", racemic) or found
         products = [o for o in found if o.role == "product"]
         if not last and products:
             now = read_structure(products[0].smiles)
@@ -129,25 +132,32 @@ def _carried(smiles: str) -> Structure:
     return read_structure(smiles)
 
 
-def _of_step(start: Structure, read: Reagents, partner: Structure | None, kind: str) -> list[Outcome]:
+def _of_step(
+    start: Structure, read: Reagents, partner: Structure | None, kind: str, racemic: bool
+) -> list[Outcome]:
     found: list[tuple[float, Outcome]] = []
     done: set[str] = set()
     mates = _mates(read, partner)
     for mate in mates:
-        step = Step(mate.structure, read.roles | partner_roles(mate.structure), read)
+        step = _step(mate, read, racemic)
         ranked = [
             (_rank(rule, needs) + mate.penalty * rule.asks_partner, rule)
             for rule, needs in called_for(step.roles)
             if rule.id not in done
         ]
-        here = _carry_out(ranked, start, step, read)
-        found += here + _together(here, ranked, start, step, read)
+        here = _carry_out(ranked, start, step)
+        found += here + _together(here, ranked, start, step)
         done |= {rule.id for _, rule in ranked if not rule.asks_partner}
     if kind and not any(o.role == "product" for _, o in found):
-        step = Step(mates[0].structure, read.roles | partner_roles(mates[0].structure), read)
-        found += _carry_out([(rule.rank, rule) for rule in of_kind(kind)], start, step, read)
+        step = _step(mates[0], read, racemic)
+        found += _carry_out([(rule.rank, rule) for rule in of_kind(kind)], start, step)
     found.sort(key=lambda pair: pair[0])
-    return _distinct((o for _, o in found), start)
+    return _distinct((o for _, o in found), start, racemic and all(is_achiral(m.structure) for m in mates))
+
+
+def _step(mate: _Mate, read: Reagents, racemic: bool) -> Step:
+    roles = frozenset(read.roles | partner_roles(mate.structure))
+    return Step(mate.structure, roles, read, racemic and is_achiral(mate.structure))
 
 
 def _rank(rule: Rule, needs: int) -> float:
@@ -158,7 +168,7 @@ def _rank(rule: Rule, needs: int) -> float:
 
 
 def _carry_out(
-    ranked: Iterable[tuple[float, Rule]], start: Structure, step: Step, read: Reagents
+    ranked: Iterable[tuple[float, Rule]], start: Structure, step: Step
 ) -> list[tuple[float, Outcome]]:
     found = []
     for rank, rule in ranked:
@@ -167,7 +177,7 @@ def _carry_out(
                 penalty = place + (0 if part == 0 or rule.role != "product" else 0.5)
                 penalty += _BY_PRODUCT_RANK if role == "by-product" else 0
                 penalty += _OVER_RANK if role == "over-reaction" else 0
-                found.append((rank + penalty, _outcome(rule, product, role, start, read)))
+                found.append((rank + penalty, _outcome(rule, product, role, start, step)))
     return found
 
 
@@ -176,7 +186,6 @@ def _together(
     ranked: Iterable[tuple[float, Rule]],
     start: Structure,
     step: Step,
-    read: Reagents,
 ) -> list[tuple[float, Outcome]]:
     """What stands when every rule that goes to completion has done so (H2: alkene and benzyl)."""
     product_rules = {o.rule for _, o in found if o.role == "product"}
@@ -193,7 +202,7 @@ def _together(
             continue
     if len(complete) < 2 or now is start:
         return []
-    return [(complete[0][0] - 1, _outcome(complete[0][1], now, "product", start, read))]
+    return [(complete[0][0] - 1, _outcome(complete[0][1], now, "product", start, step))]
 
 
 def _goes_on(rule: Rule) -> bool:
@@ -246,15 +255,15 @@ def _by_id(name: str) -> Rule:
     return next(rule for rule in rules() if rule.id == name)
 
 
-def _outcome(rule: Rule, product: Structure, role: Role, start: Structure, read: Reagents) -> Outcome:
-    cautions = tuple(dict.fromkeys((*rule.cautions, *read.cautions)))
+def _outcome(rule: Rule, product: Structure, role: Role, start: Structure, step: Step) -> Outcome:
+    cautions = tuple(dict.fromkeys((*rule.cautions, *step.read.cautions)))
     return Outcome(
         product.smiles,
         role,
         rule.id,
         rule.name,
         rule.note,
-        stereo_words(product, start, inverted="invert" in rule.args),
+        stereo_words(product, start, step.racemic, inverted=rule.inverts),
         cautions,
         rule.source,
     )
@@ -273,14 +282,13 @@ def _unchanged(start: Structure) -> Outcome:
     )
 
 
-def _distinct(outcomes: Iterable[Outcome], start: Structure) -> list[Outcome]:
-    """Each compound once; mirror images are one compound where the start has none of its own."""
-    achiral = not any(atom.stereo for atom in start.atoms)
+def _distinct(outcomes: Iterable[Outcome], start: Structure, racemic: bool) -> list[Outcome]:
+    """Each compound once; mirror images are one compound where nothing that went in was one of two."""
     kept: dict[str, Outcome] = {}
     for outcome in outcomes:
         if outcome.smiles == start.smiles:
             continue
-        mirrored = achiral and "@" in outcome.smiles and outcome.smiles not in kept
+        mirrored = racemic and "@" in outcome.smiles and outcome.smiles not in kept
         if not (mirrored and mirror_smiles(read_structure(outcome.smiles)) in kept):
             kept.setdefault(outcome.smiles, outcome)
     return list(kept.values())

@@ -37,23 +37,30 @@ def _open_centres(structure: Structure) -> list[int]:
     return found
 
 
-def stereo_words(product: Structure, start: Structure, inverted: bool = False) -> str:
-    """ "racemic", "meso" or "" for a product of an achiral start; what became of its centres otherwise.
+def stereo_words(product: Structure, start: Structure, racemic: bool, inverted: bool = False) -> str:
+    """ "racemic", "meso" or "" for a product of an achiral or racemic start; else what became of its centres.
 
-    ``inverted``: the step attacks a carbon from behind.
+    Args:
+        racemic: nothing that went in is a single enantiomer.
+        inverted: the step attacks a carbon from behind.
     """
     marked = sum(bool(atom.cip) for atom in product.atoms)
     if not marked:
         return _unmarked_words(product, start)
-    achiral_product = mirror_smiles(product) == product.smiles
-    if achiral_product:
+    if mirror_smiles(product) == product.smiles:
         return "meso"
-    achiral_start = mirror_smiles(start) == start.smiles
-    if achiral_start:
+    if racemic:
         return "racemic" if marked < 2 else "one diastereomer, racemic"
-    if inverted and any(atom.stereo for atom in start.atoms):
+    if inverted:
         return "inverted at the carbon attacked, kept elsewhere"
     return "configuration kept; new centres by the mechanism"
+
+
+def is_achiral(structure: Structure | None) -> bool:
+    """Whether a structure as drawn is no single enantiomer."""
+    if structure is None or not any(atom.stereo for atom in structure.atoms):
+        return True
+    return mirror_smiles(structure) == structure.smiles
 
 
 def _unmarked_words(product: Structure, start: Structure) -> str:
