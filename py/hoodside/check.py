@@ -79,12 +79,12 @@ def rank(
     """
     tallies = [_tally(source, readings, f"candidates[{i}]") for i, source in enumerate(candidates)]
     mine = {t.expected.structure.inchikey for t in tallies}
-    left = _others([rival for _, rival in stated], readings, mine)
+    left = _once(_others([rival for _, rival in stated], readings, mine))
     mine |= {tally.expected.structure.inchikey for _, tally in left}
     found = sorted(_others(rivals, readings, mine), key=lambda entry: -entry[1].weight_db)
     put_up = [*left, *found[: len(rivals) // POOL]]
     tallies += [t for _, t in put_up]
-    called = {rival.smiles: name for name, rival in stated}
+    called = {rival.smiles: name for name, rival in reversed(stated)}
     numbers = count(1)
     names = [called.get(r.smiles) or f"rival {next(numbers)}" for r, _ in put_up]
     verdicts, parts = judge(tallies), shares(tallies)
@@ -100,6 +100,14 @@ def _others(rivals: Sequence[Rival], readings: Readings, known: set[str]) -> lis
     """Rivals weighed, without those whose InChIKey is known already."""
     found = [(rival, _tally(rival.smiles, readings, "rivals")) for rival in rivals]
     return [(rival, tally) for rival, tally in found if tally.expected.structure.inchikey not in known]
+
+
+def _once(weighed: Sequence[tuple[Rival, Tally]]) -> list[tuple[Rival, Tally]]:
+    """The first of each compound."""
+    found: dict[str, tuple[Rival, Tally]] = {}
+    for rival, tally in weighed:
+        found.setdefault(tally.expected.structure.inchikey, (rival, tally))
+    return list(found.values())
 
 
 def _tally(source: str, readings: Readings, field: str) -> Tally:

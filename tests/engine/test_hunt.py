@@ -160,6 +160,9 @@ def test_rivals_found_before_stand_in_a_check_and_take_part_in_its_verdict() -> 
 def test_a_rival_put_up_that_is_a_candidate_already_stands_once() -> None:
     answer = call("check", {"candidates": ["CCO"], "put_up": [{"smiles": "OCC"}]})
     assert len(answer["candidates"]) == 1
+    step = {"start": "CC=O"}
+    stated = call("check", {"candidates": ["CCO"], "step": step, "put_up": [{"smiles": "CC=O"}]})
+    assert [c["name"] for c in stated["candidates"] if c["index"] is None] == ["the start"]
 
 
 @pytest.mark.parametrize(

@@ -5,6 +5,7 @@ import { startChecking } from './state/check.js';
 import { startCompleting } from './state/complete.js';
 import { startEngine } from './state/engine.js';
 import { startOffline } from './state/offline.js';
+import { startScouting } from './state/scout.js';
 import { App } from './views/app.js';
 
 const root = /** @type {HTMLElement} */ (document.getElementById('app'));
@@ -15,4 +16,5 @@ loadCases().then(() => {
 startEngine();
 startCompleting();
 startChecking();
+startScouting();
 startOffline();

@@ -2,6 +2,7 @@ import { computed, effect, signal } from '@preact/signals';
 import { asFault, call, engineState } from './engine.js';
 import { checkInput, stepInput } from './input.js';
 import { caseById, cases, noteSummary } from './cases.js';
+import { putUpFor } from './put-up.js';
 import { caseId } from './route.js';
 import { summaryOf } from '../words/verdict.js';
 
@@ -26,7 +27,7 @@ export function question(doc) {
   if (!usable.length) return null;
   const input = checkInput(doc);
   if (!Object.keys(input.refs).length && !input.params.formula && !input.params.hrms && !input.params.analysis) return null;
-  const params = { id: doc.id, ...input.params, ...stepInput(doc), candidates: usable.map((structure) => structure.smiles) };
+  const params = { id: doc.id, ...input.params, ...stepInput(doc), ...putUpFor(doc), candidates: usable.map((structure) => structure.smiles) };
   const intended = usable.findIndex((structure) => structure.id === doc.intended);
   if (intended >= 0) params.intended = intended;
   return { params, refs: input.refs, ids: usable.map((structure) => structure.id), key: JSON.stringify(params) };

@@ -21,3 +21,6 @@ export function structureName(doc, found, at) {
   const id = found.order[at] ?? '';
   return id ? nameOf(doc, id) : found.answer.candidates[at]?.name ?? '';
 }
+
+/** Look-alikes are numbered; what a step has left goes by its part in it. @param {import('../types').Weighed} candidate */
+export const isLookAlike = ({ index, name }) => index === null && /^rival \d/.test(name);

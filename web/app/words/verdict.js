@@ -5,11 +5,18 @@ import { letter, structureName } from './structures.js';
 /** @typedef {import('../types').Verdict} Verdict */
 /** @typedef {import('../state/check.js').Checked} Checked */
 
-/** Where the structure of the verdict stands among the weighed: the intended one, else the best.
+/** Where the structure of the verdict stands among the weighed: the intended one, else the best of the case's own.
  * @param {CaseDoc} doc @param {Checked} found */
 export function subjectAt(doc, found) {
   const intended = doc.intended ? found.order.indexOf(doc.intended) : -1;
-  return Math.max(intended, 0);
+  return Math.max(intended < 0 ? found.order.findIndex(Boolean) : intended, 0);
+}
+
+/** Where look-alikes are sought from: the structure of the verdict, unless it is ruled out and another of the case's own
+ * does better. @param {CaseDoc} doc @param {Checked} found */
+export function leadAt(doc, found) {
+  const at = subjectAt(doc, found);
+  return found.answer.candidates[at]?.verdict === 'clashes' ? Math.max(found.order.findIndex(Boolean), 0) : at;
 }
 
 /** @param {CaseDoc} doc @param {Checked} found @returns {Verdict} */

@@ -3,6 +3,8 @@ import { Words } from '../../components/chem.js';
 import { Caution } from '../../components/parts.js';
 import { currentCheck } from '../../state/check.js';
 import { address } from '../../state/route.js';
+import { weighedFor } from '../../state/scout.js';
+import { isLookAlike } from '../../words/structures.js';
 import { Thumb } from '../tally/thumb.js';
 import { openReading } from './open-reading.js';
 
@@ -23,15 +25,17 @@ export function NextStation({ doc }) {
   const advice = found.answer.next;
   return html`<div class="next ${fresh ? '' : 'stale'}">
     <p class="next-head">${COUNTS[stand] ?? stand} ${stand === 1 ? 'structure still stands' : 'structures still stand'}.${' '}
-      ${advice.length ? 'Best first:' : outlook(stand)}</p>
+      ${advice.length ? 'Best first:' : outlook(stand, found.answer.candidates.some(isLookAlike) ? 0 : weighedFor(doc))}</p>
     <ul class="slips-next">${advice.map((entry, i) => html`<${Slip} key=${entry.measure + i} doc=${doc}
       found=${found} advice=${entry} />`)}</ul>
   </div>`;
 }
 
-/** What to say when there is nothing to measure. @param {number} stand structures still standing */
-function outlook(stand) {
+/** What to say when there is nothing to measure. @param {number} stand structures still standing
+ * @param {number} weighed look-alikes weighed beside them */
+function outlook(stand, weighed) {
   if (stand > 1) return 'No measurement on the list would tell them apart.';
+  if (stand === 1 && weighed) return 'None of the look-alikes weighed beside it comes near.';
   return stand === 1 ? 'Put up what else it could be before resting on it.' : 'Put up another structure: none of these made the readings.';
 }
 

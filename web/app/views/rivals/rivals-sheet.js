@@ -7,12 +7,14 @@ import { Sheet } from '../../components/sheet.js';
 import { Sign } from '../../components/sign.js';
 import { Working } from '../../components/working.js';
 import { changeWithUndo } from '../../state/cases.js';
+import { currentCheck } from '../../state/check.js';
 import { newId } from '../../state/document.js';
 import { ask } from '../../state/engine.js';
 import { hunt, huntQuestion, hunts, LIMIT, stopHunt } from '../../state/rivals.js';
 import { address } from '../../state/route.js';
 import { plural, signed } from '../../words/numbers.js';
 import { nameOf } from '../../words/structures.js';
+import { leadAt } from '../../words/verdict.js';
 import { CaseSign } from '../case/sign.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
@@ -27,7 +29,7 @@ const HOW = [{ value: 'allowed', text: 'the readings allow' }, { value: 'all', t
 /** Look-alikes of the structure of the verdict: searched, weighed, kept or dismissed. Leaving the sheet stops the search;
  * coming back goes on with it. @param {{ doc: CaseDoc }} props */
 export function RivalsSheet({ doc }) {
-  const subject = doc.structures.find(({ id }) => id === doc.intended) ?? doc.structures[0];
+  const subject = subjectOf(doc);
   const smiles = subject?.smiles ?? '';
   const [which, setWhich] = useState('allowed');
   const question = smiles ? huntQuestion(doc, smiles, which === 'allowed') : null;
@@ -50,6 +52,13 @@ export function RivalsSheet({ doc }) {
       ${!current.since && (current.stopped || current.fault) && html`<button type="button" class="button" onClick=${goOn}>${current.stopped ? `Stopped at ${current.weighed} weighed. Go on` : 'Try again'}</button>`}
       <div class="rivals-found" aria-busy=${String(current.since > 0)}><${Found} doc=${doc} name=${name} now=${current} /></div>`}
   <//>`;
+}
+
+/** The structure whose look-alikes are sought. @param {CaseDoc} doc */
+function subjectOf(doc) {
+  const { found } = currentCheck.value;
+  const lead = found ? found.order[leadAt(doc, found)] : '';
+  return doc.structures.find(({ id }) => id === lead) ?? doc.structures.find(({ id }) => id === doc.intended) ?? doc.structures[0];
 }
 
 /** How far the search has come. @param {Hunt} now */

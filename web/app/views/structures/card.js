@@ -1,5 +1,5 @@
 import { html } from 'htm/preact';
-import { Formula } from '../../components/chem.js';
+import { Formula, Words } from '../../components/chem.js';
 import { Drawing } from '../../components/drawing.js';
 import { StructureDrawing } from '../../components/structure-drawing.js';
 import { Sign } from '../../components/sign.js';
@@ -57,7 +57,8 @@ export function RivalCard({ doc, candidate, at }) {
   return html`<li><button type="button" class="card card-rival" onClick=${take}
     aria-label="Take ${name} over as a structure">
     <${Drawing} structure=${candidate.smiles} label=${name} width=${150} height=${112} class="drawing-card" />
-    <span class="card-foot"><span class="card-name">${name}</span><${Sign} verdict=${candidate.verdict}
+    <span class="card-foot"><span class="card-name">${name}
+      <span class="card-formula card-how"><${Words} text=${candidate.how.join('; ')} /></span></span><${Sign} verdict=${candidate.verdict}
       size=${22} /></span>
   </button></li>`;
 }

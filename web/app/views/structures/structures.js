@@ -4,12 +4,13 @@ import { Section } from '../../components/parts.js';
 import { currentCheck } from '../../state/check.js';
 import { CheckTrouble } from '../readings/check-trouble.js';
 import { hasReadings } from '../rivals/proposals-sheet.js';
+import { isLookAlike } from '../../words/structures.js';
 import { RivalCard, StructureCard } from './card.js';
 
 /** The second station: what it could be. @param {{ doc: import('../../types').CaseDoc }} props */
 export function Structures({ doc }) {
   const { found } = currentCheck.value;
-  const rivals = (found?.answer.candidates ?? []).map((candidate, at) => ({ candidate, at })).filter(({ at }) => !found?.order[at]);
+  const rivals = (found?.answer.candidates ?? []).map((candidate, at) => ({ candidate, at })).filter(({ candidate, at }) => !found?.order[at] && !(isLookAlike(candidate) && candidate.verdict === 'clashes'));
   return html`<div class="structures">
     ${doc.structures.length === 0 && html`<p
       class="empty">Put up the structure you mean to have made, and what else it could be.

@@ -13,6 +13,7 @@ import { Rows } from './rows.js';
 import { rowsOf } from './row-data.js';
 import { Table } from './table.js';
 import { touchedAt } from './touched.js';
+import { Unlisted } from './unlisted.js';
 import { VerdictLine } from './verdict-line.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
@@ -28,6 +29,7 @@ export function Tally({ doc }) {
   return html`<div class="tally ${fresh ? '' : 'stale'}" aria-busy=${String(!fresh)}>
     <${CheckTrouble} />
     <${VerdictLine} doc=${doc} found=${found} />
+    <${Unlisted} doc=${doc} found=${found} />
     ${found.answer.warnings.map((warning) => html`<p class="hint" key=${warning}>${warning}</p>`)}
     <${Ladder} doc=${doc} found=${found} at=${at} />
     <header class="section-head tally-head"><h2>${structureName(doc, found, at)}</h2><p>${signed(candidate.weight_db)}</p></header>
