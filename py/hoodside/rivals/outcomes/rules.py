@@ -29,6 +29,8 @@ PARTNERS = {
     "amine": "[NX3;H1,H2,H3;!$(N[CX3]=[OX1]);!$(NS(=O)=O);!$(N[CX2]#N)]",
     "aryl_amine": "c[NX3;!$(N[CX3]=[OX1]);!$(N=O)]",
     "arylhydrazine": "c[NX3;H1][NX3;H2]",
+    "azole": "[nH]",
+    "allylsilane": "[Si][CX4][CX3]=[CX3]",
     "imide": "[CX3](=O)[NX3;H1][CX3]=O",
     "isocyanate": "[#6]N=C=O",
     "isothiocyanate": "[#6]N=C=S",

@@ -64,14 +64,18 @@ def find_outcomes(
     racemic = is_achiral(start)
     found = _of_step(now, whole, partner, kind, racemic)
     if len(steps) > 1 and not _spans(found, steps, partner):
-        found = _in_turn(now, steps, partner, kind, racemic)
-    made = any(outcome.role == "product" for outcome in found)
+        in_turn = _in_turn(now, steps, partner, kind, racemic)
+        found = in_turn if _has_product(in_turn) or not _has_product(found) else found
     return Outcomes(
         (*found[:_MOST], _unchanged(start)),
         told.names,
         told.unknown,
-        "" if made else why_nothing(told, partner),
+        "" if _has_product(found) else why_nothing(told, partner),
     )
+
+
+def _has_product(found: Iterable[Outcome]) -> bool:
+    return any(outcome.role == "product" for outcome in found)
 
 
 def _without_workup(texts: list[str]) -> list[str]:
@@ -139,6 +143,8 @@ def _of_step(
     done: set[str] = set()
     mates = _mates(read, partner)
     for mate in mates:
+        if mate.penalty and _has_product(o for _, o in found):
+            continue  # what may be base or solvent alone is not looked for a part in something else
         step = _step(mate, read, racemic)
         ranked = [
             (_rank(rule, needs) + mate.penalty * rule.asks_partner, rule)
@@ -148,7 +154,7 @@ def _of_step(
         here = _carry_out(ranked, start, step)
         found += here + _together(here, ranked, start, step)
         done |= {rule.id for _, rule in ranked if not rule.asks_partner}
-    if kind and not any(o.role == "product" for _, o in found):
+    if kind and not _has_product(o for _, o in found):
         step = _step(mates[0], read, racemic)
         found += _carry_out([(rule.rank, rule) for rule in of_kind(kind)], start, step)
     found.sort(key=lambda pair: pair[0])

@@ -11,7 +11,9 @@ from hoodside.molecule import Structure
 Score = Callable[[Structure, dict[int, int]], float]  # structure, map number in the pattern -> atom
 
 _PULLING = "[CX3]=[OX1],[CX2]#[NX1],[N+](=O)[O-],S(=O)=O,C(F)(F)F"
-_BEST_RING = 6
+_BEST_RING, _FIVE = 6, 5
+#: What benzo-fusion takes from the place next to N or S of a five-ring.
+_BENZO_ALPHA = 2.0
 _HALIDE_ORDER = {"I": 3.0, "Br": 2.0, "Cl": 1.0, "F": 0.0}
 
 
@@ -99,7 +101,7 @@ def aromatic(structure: Structure, site: dict[int, int]) -> float:
 def _ring_score(structure: Structure, ring: tuple[int, ...], place: int) -> float:
     if not all(structure.atoms[a].aromatic for a in ring):
         return 0.0
-    score = 0.0
+    score = -_BENZO_ALPHA if _beside_benzo_hetero(structure, ring, place) else 0.0
     for member in ring:
         steps = abs(ring.index(member) - ring.index(place))
         steps = min(steps, len(ring) - steps)
@@ -120,6 +122,16 @@ _HETERO_RING = {
     (6, "N", 0, 1): -3.0, (6, "N", 0, 2): -1.0, (6, "N", 0, 3): -3.0,
     (6, "N", 1, 1): 0.0, (6, "N", 1, 2): -1.0, (6, "N", 1, 3): 1.0,
 }  # fmt: skip
+
+
+def _beside_benzo_hetero(structure: Structure, ring: tuple[int, ...], place: int) -> bool:
+    """Position 2 of indole or benzothiophene; 3 leads there (Joule and Mills, Heterocyclic Chemistry)."""
+    fused = any(other != ring and len(set(other) & set(ring)) > 1 for other in structure.rings)
+    return (
+        fused
+        and len(ring) == _FIVE
+        and any(structure.atoms[n].symbol in "NS" for n in structure.neighbours[place] if n in ring)
+    )
 
 
 def _directing(structure: Structure, near: int, member: int, steps: int) -> float:
@@ -177,7 +189,13 @@ def ring(structure: Structure, site: dict[int, int]) -> float:
     return -abs(structure.distances_from(site[1])[site[2]] + 1 - _BEST_RING)
 
 
+def less_hindered(structure: Structure, site: dict[int, int]) -> float:
+    """The carbon with fewer neighbours is attacked; it is the one mapped 2."""
+    return -float(len(structure.neighbours[site[2]]))
+
+
 SCORES: dict[str, Score] = {
+    "less": less_hindered,
     "ring": ring,
     "cation": cation,
     "diol": diol,
