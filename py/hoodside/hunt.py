@@ -15,9 +15,9 @@ from hoodside.rivals.search import Search
 from hoodside.rivals.stated import StatedStep, stated_rivals
 from hoodside.weigh.expectations import expectations
 from hoodside.weigh.structure import Tally, weigh_structure
-from hoodside.weigh.verdict import Verdict, judge
+from hoodside.weigh.verdict import CLASHES, ENOUGH, TELLS_APART, Verdict, judge
 
-_UNWEIGHED = {"weight_db": None, "verdict": None, "reason": ""}
+_UNWEIGHED = {"weight_db": None, "verdict": None, "reason": "", "near": False}
 
 
 class Hunt:
@@ -124,12 +124,15 @@ def _standings(tallies: list[Tally | None]) -> list[dict[str, Any]]:
     """Weight and verdict of each, judged all together; nothing where there is no tally."""
     known = [tally for tally in tallies if tally]
     verdicts = iter(judge(known))
-    return [_standing(tally, next(verdicts)) if tally else _UNWEIGHED for tally in tallies]
+    least = max(ENOUGH, tallies[0].weight_db - TELLS_APART) if tallies[0] else ENOUGH
+    return [_standing(tally, next(verdicts), least) if tally else _UNWEIGHED for tally in tallies]
 
 
-def _standing(tally: Tally, verdict: Verdict) -> dict[str, Any]:
+def _standing(tally: Tally, verdict: Verdict, least: float) -> dict[str, Any]:
+    """``near``: it stands, and near enough to the structure itself (the first) to take its verdict away."""
     return {
         "weight_db": round(tally.weight_db, 1) + 0.0,
         "verdict": verdict.verdict,
         "reason": verdict.reason,
+        "near": verdict.verdict != CLASHES and tally.weight_db >= least,
     }

@@ -12,16 +12,26 @@ import re
 import time
 from dataclasses import dataclass, field
 from pathlib import Path
+from typing import Any
 
 from bench.tables import Figure, print_figures
+from hoodside.check import check_case
+from hoodside.hunt import Hunt
 from hoodside.molecule.kernel import kernel
 from hoodside.molecule.structure import Structure, read_structure
+from hoodside.readings.from_json import readings_from_json
 from hoodside.rivals import Rival, find_rivals, iterate_rivals
 from hoodside.rivals.names import flat, name_of
+from hoodside.weigh.verdict import FITS
 
 CASES = Path(__file__).parents[1] / "cases" / "published.json"
 LIMIT = 200
 _DEPTHS = (20, 50, 100)
+_READINGS = ("formula", "solvent", "mhz", "h1", "c13", "ir", "ir_medium", "ms", "hrms")
+#: Hunts take longest: they are made for every so manieth case. The app puts up as many of what they find.
+_EVERY_MISSING = 8
+_PUT_UP = 3
+_LONGEST_S = 60.0
 
 
 @dataclass
@@ -40,6 +50,7 @@ def run(every: int = 1, show_missed: bool = False) -> None:
         _measure(read_structure(case["smiles"]), case["rivals"], tally)
     print("\n".join(tally.missed) if show_missed else "", end="\n" if show_missed else "")
     _print(tally)
+    print_figures(_missing(every * _EVERY_MISSING))
 
 
 def _measure(intended: Structure, listed: list[str], tally: _Tally) -> None:
@@ -79,6 +90,38 @@ def _print(tally: _Tally) -> None:
             Figure("rivals put up, mean", sum(tally.sizes) / len(tally.sizes)),
         ]
     )
+
+
+def _missing(every: int) -> list[Figure]:
+    """Verdicts on the best of a list, as it stands and with the near look-alikes a hunt puts up unasked."""
+    absent: list[tuple[bool, bool]] = []
+    present: list[tuple[bool, bool]] = []
+    for case in json.loads(CASES.read_text("utf-8"))[::every]:
+        readings = {key: case[key] for key in _READINGS if case.get(key)}
+        if len(case["rivals"]) > 1:
+            absent.append(_fits(readings, case["rivals"]))
+            present.append(_fits(readings, [case["smiles"], *case["rivals"]]))
+    return [
+        _share("truth not on the list: best one fits", [before for before, _ in absent]),
+        _share("... with look-alikes put up unasked", [after for _, after in absent]),
+        _share("truth on the list: best one fits", [before for before, _ in present]),
+        _share("... with look-alikes put up unasked", [after for _, after in present]),
+    ]
+
+
+def _share(name: str, flags: list[bool]) -> Figure:
+    return Figure(name, 100 * sum(flags) / len(flags), "%", note=f"of {len(flags)} cases")
+
+
+def _fits(readings: dict[str, Any], candidates: list[str]) -> tuple[bool, bool]:
+    """Whether the best of a list fits, before and after its near look-alikes are put up."""
+    best = check_case({**readings, "candidates": candidates})["candidates"][0]
+    hunt = Hunt(read_structure(best["smiles"]), readings_from_json(readings))
+    hunt.go_on(_LONGEST_S)
+    near = [{"smiles": r["smiles"], "how": r["how"]} for r in hunt.answer()["rivals"] if r["near"]]
+    again = check_case({**readings, "candidates": candidates, "put_up": near[:_PUT_UP]})["candidates"]
+    own = next(c for c in again if c["index"] is not None)
+    return best["verdict"] == FITS, own["verdict"] == FITS
 
 
 def rank_of(listed: str, found: tuple[Rival, ...]) -> int | None:

@@ -1,4 +1,4 @@
-"""The right structure may be missing from the list: look-alikes are sought unasked, and it is said plainly."""
+"""The right structure may be missing from the list: look-alikes are sought unasked, and that is said."""
 
 from __future__ import annotations
 

@@ -70,6 +70,15 @@ def test_a_hunt_weighs_as_the_check_does() -> None:
     }
 
 
+def test_near_are_those_that_take_the_verdict_away() -> None:
+    """Ketone and ethoxy carbons do not tell para from meta; the pattern of the ring does."""
+    poor = {"formula": "C10H12O2", "c13": [READINGS["c13"][0], *READINGS["c13"][-3:]]}
+    near = {r["smiles"] for r in _to_the_end(readings=poor, slice_ms=1_000)[-1]["rivals"] if r["near"]}
+    assert name_of("CCOc1cccc(C(C)=O)c1") in near
+    full = _to_the_end(readings=READINGS, slice_ms=1_000)[-1]
+    assert not any(r["near"] for r in full["rivals"])
+
+
 def test_a_slice_keeps_its_time() -> None:
     question: dict[str, Any] = {"readings": READINGS, "limit": 60, "slice_ms": 40}
     hunt(STRUCTURE, **question)  # patterns compile here

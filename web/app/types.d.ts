@@ -18,10 +18,11 @@ export interface Candidate { id: string; source: string; name: string; smiles: s
 /** What the case list shows without waking the chemistry. */
 export interface Summary { verdict: Verdict; text: string; lead: string }
 
-/** A look-alike the engine put up: how it was reached, a move each. Weight and verdict are null until it is weighed. */
+/** A look-alike the engine put up: how it was reached, a move each. Weight and verdict are null until it is weighed;
+ * `near` when it stands near enough to take the verdict away. */
 export interface Rival {
   smiles: string; how: string[]; distance: number; plausibility: number; formula: string;
-  weight_db: number | null; verdict: Verdict | null; reason: string;
+  weight_db: number | null; verdict: Verdict | null; reason: string; near: boolean;
 }
 
 /** A compound put into a step: the start or its partner. */

@@ -12,9 +12,6 @@ import { wide } from './screen.js';
 
 /** How long a case has been let alone before its look-alikes are sought, ms. */
 const REST_MS = 1000;
-/** Decibans within which a look-alike counts as near, and the least that speaks for it at all. */
-const NEAR_DB = 10;
-const LEAST_DB = 10;
 /** More are kept than are put up, so that others follow those waved away. */
 const KEPT = 8;
 
@@ -41,12 +38,8 @@ export function weighedFor(doc) {
   return question && known?.key === JSON.stringify(question) ? known.weighed : 0;
 }
 
-/** Look-alikes that stand near enough to take the verdict away. @param {Told} told */
-function nearOf({ structure, rivals }) {
-  const least = Math.max(LEAST_DB, (structure?.weight_db ?? 0) - NEAR_DB);
-  return rivals.filter(({ weight_db: weight, verdict }) => weight !== null && weight >= least && verdict !== 'clashes')
-    .slice(0, KEPT).map(({ smiles, how }) => ({ smiles, how }));
-}
+/** Look-alikes that stand near enough to take the verdict away, heaviest first. @param {Told} told */
+const nearOf = ({ rivals }) => rivals.filter(({ near }) => near).slice(0, KEPT).map(({ smiles, how }) => ({ smiles, how }));
 
 /** @param {string} id of the case @param {object} question @param {string} key */
 async function scout(id, question, key) {

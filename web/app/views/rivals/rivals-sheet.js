@@ -22,7 +22,7 @@ import { CaseSign } from '../case/sign.js';
 /** @typedef {import('../../state/rivals.js').Hunt} Hunt */
 /** @typedef {import('../../state/rivals.js').Standing} Standing */
 
-/** Decibans within which a look-alike counts as near: ten times as likely or unlikely. */
+/** Decibans within which the engine calls a look-alike near: ten times as likely or unlikely. */
 const NEAR_DB = 10;
 const HOW = [{ value: 'allowed', text: 'the readings allow' }, { value: 'all', text: 'all look-alikes' }];
 
@@ -69,7 +69,7 @@ function Found({ doc, name, now }) {
   const gone = new Set([...doc.structures.map(({ smiles }) => smiles), ...(doc.dismissed ?? [])]);
   const shown = now.rivals.filter(({ smiles }) => !gone.has(smiles));
   const own = now.structure;
-  const near = own ? shown.filter(({ weight_db: weight }) => weight !== null && weight >= own.weight_db - NEAR_DB).length : 0;
+  const near = shown.filter((rival) => rival.near).length;
   const dismissed = doc.dismissed?.length ?? 0;
   const recall = () => changeWithUndo(doc.id, 'Dismissed ones brought back', (draft) => { draft.dismissed = []; });
   if (!now.rivals.length) return now.done ? html`<p class="lead">The readings leave no look-alike of ${name} standing that a few moves reach.</p>` : null;
