@@ -7,8 +7,10 @@ import random
 import pytest
 
 from bench.synthetic_multiplets import mixture
+from hoodside.engine import call
 from hoodside.errors import InvalidInputError
 from hoodside.predict.spins import Nuclei, SpinSystem, exact_lines, fit_from_json, spins_from_json
+from hoodside.predict.spins.ab_quartet import ab_lines
 from hoodside.predict.spins.fit import fit_system
 from hoodside.predict.spins.least_squares import solve_least_squares, solve_symmetric
 from hoodside.predict.spins.multiplet_reading import read_multiplet
@@ -171,3 +173,84 @@ def test_bad_fit_names_the_field(change: dict[str, object], field: str) -> None:
     with pytest.raises(InvalidInputError) as caught:
         fit_from_json(given)
     assert caught.value.field == field
+
+
+# -- fits from a structure -----------------------------------------------------------------------------------
+
+
+def observed(smiles: str, mhz: float, lo: float, hi: float, by_hz: float) -> list[dict[str, float]]:
+    """The stronger lines of a structure's own simulation, moved along, as a printout might have them."""
+    found = call("trace", {"smiles": smiles, "mhz": mhz})
+    lines = [line for system in found["systems"] for line in system["lines"] if lo < line["ppm"] < hi]
+    top = max(line["intensity"] for line in lines)
+    strong = [line for line in lines if line["intensity"] > 0.05 * top]
+    return [{"hz": line["hz"] + by_hz, "height": line["intensity"]} for line in strong]
+
+
+@pytest.mark.parametrize(
+    ("smiles", "lo", "hi", "n"),
+    [("CC(=O)OC=C", 4, 8, 3), ("CC(C)c1ccc(C=O)cc1", 7.1, 8.1, 4), ("CCOC(C)=O", 3.5, 4.6, 2)],
+)
+def test_structure_is_fitted_to_lines_that_lie_elsewhere(smiles: str, lo: float, hi: float, n: int) -> None:
+    """Lines made from the prediction and moved by 5 Hz give the same shifts moved by 5 Hz, and the same J."""
+    lines = observed(smiles, 60, lo, hi, 5.0)
+    found = call("fit", {"smiles": smiles, "mhz": 60, "lines": lines, "n": n})
+    for shift in found["shifts"]:
+        assert shift["ppm"] - shift["predicted_ppm"] == pytest.approx(5 / 60, abs=0.01)
+    for coupling in found["couplings"]:
+        assert coupling["hz"] == pytest.approx(coupling["predicted_hz"], abs=0.4)
+    assert found["rms_hz"] < 0.5
+
+
+def test_symmetry_of_the_structure_outlives_the_fit() -> None:
+    """A para pair is AA'BB': two shifts and the ortho J, from the four lines that a printout shows."""
+    lines = [{"ppm": ppm, "height": h} for ppm, h in [(7.172, 1), (7.023, 3), (6.871, 3), (6.720, 1)]]
+    found = call("fit", {"smiles": "CCOc1ccc(CCC(=O)OC)cc1", "mhz": 60, "lines": lines, "n": 4})
+    assert len(found["shifts"]) == 2
+    assert [c["hz"] for c in found["couplings"]] == [pytest.approx(8.6, abs=0.5)]
+    assert found["rms_hz"] < 0.5
+
+
+@pytest.mark.parametrize(
+    ("lines", "field"),
+    [
+        ([{"ppm": 7.0}], "lines"),
+        ([{"ppm": 40.0}, {"ppm": 40.1}], "lines"),
+        ([{"ppm": 1}, {"ppm": "x"}], "lines[1].ppm"),
+    ],
+)
+def test_structure_fit_says_what_is_wrong(lines: list[dict[str, object]], field: str) -> None:
+    with pytest.raises(InvalidInputError) as caught:
+        call("fit", {"smiles": "CCO", "mhz": 60, "lines": lines})
+    assert caught.value.field == field
+    assert caught.value.hint
+
+
+# -- AB quartets ---------------------------------------------------------------------------------------------
+
+
+def test_roofed_lines_are_read_as_an_ab_quartet() -> None:
+    """J from the outer gaps, the difference of the shifts from the closed form of AB."""
+    made = ab_lines(400.0, 409.6, 14.2)
+    reading = read_multiplet([h for h, _ in made], [i for _, i in made]).readings[0]
+    assert reading.pattern == "ABq"
+    assert reading.j == pytest.approx((14.2,))
+    assert reading.shifts_hz == pytest.approx((400.0, 409.6))
+
+
+def test_heights_by_eye_are_enough_for_an_ab_quartet() -> None:
+    """Low and high (1 and 3) where the true ratio of the heights is 10."""
+    assert read_multiplet([0, 14, 17, 31], [1, 3, 3, 1]).readings[0].pattern == "ABq"
+
+
+def test_even_gaps_stay_a_quartet_and_equal_heights_a_dd() -> None:
+    assert read_multiplet([0, 7, 14, 21], [1, 3, 3, 1]).readings[0].pattern == "q"
+    assert read_multiplet([0, 8, 16, 24], [1, 1, 1, 1]).readings[0].pattern == "dd"
+    assert read_multiplet([0, 8.6, 10, 18.6], [1, 1, 1, 1]).readings[0].pattern == "dd"
+
+
+def test_partners_too_near_for_first_order_are_told() -> None:
+    h1 = [{"ppm": 7.09, "mult": "d", "j": [8.4], "n": 2}, {"ppm": 6.82, "mult": "d", "j": [8.4], "n": 2}]
+    near = call("partners", {"h1": h1, "mhz": 60})["shared"][0]
+    assert near["times"] == pytest.approx(0.27 * 60 / 8.4, abs=0.1)
+    assert "times" not in call("partners", {"h1": h1})["shared"][0]

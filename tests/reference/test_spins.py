@@ -1,8 +1,8 @@
 """Spin systems against closed forms, and multiplets read after the published procedure.
 
 Sources: PSB = Pople, Schneider and Bernstein, High-resolution Nuclear Magnetic Resonance, McGraw-Hill 1959,
-chapter 6 (AB: section 6-4; AB2: section 6-5; ABX: section 6-7); GUN = Gunther, NMR Spectroscopy, on the analysis
-of high-resolution spectra (AA'XX'); HHV = Hoye, Hanson and Vyvyan, J. Org. Chem. 1994, 59, 4096;
+chapter 6 (AB: section 6-4; AB2: section 6-5; ABX: section 6-7); GUN = Gunther, NMR Spectroscopy, analysis of
+high-resolution spectra (AA'XX'); HHV = Hoye, Hanson and Vyvyan, J. Org. Chem. 1994, 59, 4096;
 HZ = Hoye and Zhao, J. Org. Chem. 2002, 67, 4014. Formulas, rules and section numbers from memory.
 """
 

@@ -2,16 +2,19 @@
 
 from __future__ import annotations
 
+from math import isfinite
 from typing import Any
 
+from hoodside.errors import InvalidInputError
 from hoodside.methods.arguments import integer
 from hoodside.methods.structures import structure_of
 from hoodside.predict.spins import Trace, envelope
-from hoodside.predict.spins.contract import fit_from_json, lines_to_json, spins_from_json
+from hoodside.predict.spins.contract import fit_from_json, lines_to_json, observed_line, spins_from_json
 from hoodside.predict.spins.model import LineList
 from hoodside.predict.spins.molecule import FIELDS, simulate_groups
 from hoodside.predict.spins.multiplet_reading import MultipletReading, read_multiplet
 from hoodside.predict.spins.partners import find_partners
+from hoodside.predict.spins.structure_fit import fit_structure
 from hoodside.predict.whole import USUAL_MHZ, USUAL_SOLVENT, predict_all
 from hoodside.readings.fields import Span, number, rows
 from hoodside.readings.from_json import readings_from_json
@@ -35,8 +38,61 @@ def spins(**system: Any) -> dict[str, Any]:
 
 
 def fit(**observed: Any) -> dict[str, Any]:
-    """Shifts and J of a spin system fitted to observed lines; see ``predict.spins.contract``."""
-    return fit_from_json(observed)
+    """Shifts and J fitted to observed lines: of a spin system, or of the structure given as ``smiles``.
+
+    See ``predict.spins.contract`` for systems.
+    """
+    return _structure_fit(**observed) if "smiles" in observed else fit_from_json(observed)
+
+
+def _structure_fit(
+    smiles: str,
+    lines: list[Any],
+    solvent: str = USUAL_SOLVENT,
+    mhz: float = USUAL_MHZ,
+    n: int | None = None,
+) -> dict[str, Any]:
+    """The groups of a structure that lie where the lines are (of ``n`` H, when given), fitted to them."""
+    structure = structure_of(smiles, "smiles")
+    field = number(mhz or USUAL_MHZ, "mhz", _FIELD)
+    chosen = solvent_asked(solvent, "solvent", USUAL_SOLVENT)
+    seen = rows(lines, "lines", lambda entry, path: observed_line(entry, path, field))
+    if len(seen) < 2:
+        raise InvalidInputError(
+            f"{len(seen)} lines cannot be fitted.", hint="Give two lines or more.", field="lines"
+        )
+    hydrogens = None if n is None else integer(n, "n", 1, 200)
+    groups = predict_all(structure, chosen, field).h1
+    found = fit_structure(structure, groups, chosen, field, seen, hydrogens)
+    return {
+        "mhz": field,
+        "groups": list(found.groups),
+        "shifts": [
+            {
+                "group": s.group,
+                "atoms": list(groups[s.group].atoms),
+                "predicted_ppm": round(s.predicted, 3),
+                "ppm": round(s.ppm, 4),
+                "uncertain_hz": _finite(s.uncertain_hz),
+            }
+            for s in found.shifts
+        ],
+        "couplings": [
+            {
+                "groups": list(c.groups),
+                "predicted_hz": round(c.predicted, 1),
+                "hz": round(c.hz, 2),
+                "uncertain_hz": _finite(c.uncertain_hz),
+            }
+            for c in found.couplings
+        ],
+        "rms_hz": round(found.fit.rms_hz, 3),
+        "lines": lines_to_json(found.fit.lines, field, _SEEN),
+    }
+
+
+def _finite(hz: float) -> float | None:
+    return round(hz, 2) if isfinite(hz) else None
 
 
 def trace(
@@ -105,12 +161,23 @@ def multiplet(
     }
 
 
-def partners(h1: list[Any]) -> dict[str, Any]:
-    """Which 1H signals share a J within the measuring error, and which J stand alone."""
-    shared, lone = find_partners(readings_from_json({"h1": h1}).h1)
+def partners(h1: list[Any], mhz: float | None = None) -> dict[str, Any]:
+    """Which 1H signals share a J within the measuring error, and which J stand alone.
+
+    With the field, ``times`` says how many J the two signals lie apart.
+    """
+    field = None if mhz is None else number(mhz, "mhz", _FIELD)
+    signals = readings_from_json({"h1": h1}).h1
+    shared, lone = find_partners(signals)
     return {
         "shared": [
-            {"a": s.a, "b": s.b, "hz": round((s.hz_a + s.hz_b) / 2, 1), "counts_fit": s.counts_fit}
+            {
+                "a": s.a,
+                "b": s.b,
+                "hz": round((s.hz_a + s.hz_b) / 2, 1),
+                "counts_fit": s.counts_fit,
+                **({} if field is None else {"times": round(s.times_apart(signals, field), 1)}),
+            }
             for s in shared
         ],
         "lone": [{"signal": entry.signal, "hz": entry.hz} for entry in lone],
@@ -125,6 +192,7 @@ def _reading(found: MultipletReading, mhz: float) -> dict[str, Any]:
         "centre_ppm": found.centre_hz / mhz,
         "centre_hz": found.centre_hz,
         "rms_hz": round(found.rms_hz, 3),
+        "shifts_ppm": [hz / mhz for hz in sorted(found.shifts_hz, reverse=True)],
     }
 
 

@@ -12,6 +12,8 @@ from hoodside.errors import InvalidInputError
 _GAP_ERROR = 0.6
 #: Factor by which the height ratio may differ from the one the positions ask for.
 _RATIO_ERROR = 1.6
+#: Height ratio above which it may be smaller than that: heights by eye hardly go further.
+CLEAR_ROOF = 2.0
 
 
 @dataclass(frozen=True, slots=True)
@@ -69,6 +71,7 @@ def read_ab_quartet(hz: Sequence[float], heights: Sequence[float] | None = None)
     )
     if heights is not None:
         outer, inner = heights[order[0]] + heights[order[3]], heights[order[1]] + heights[order[2]]
-        if not 1 / _RATIO_ERROR <= inner / outer / found.ratio <= _RATIO_ERROR:
+        seen = inner / outer
+        if seen > _RATIO_ERROR * found.ratio or (seen < CLEAR_ROOF and seen < found.ratio / _RATIO_ERROR):
             return None
     return found

@@ -109,7 +109,8 @@ def fit_from_json(given: Mapping[str, Any]) -> dict[str, Any]:
     Raises: InvalidInputError naming the field, its value and the mend.
     """
     mhz, system = system_from_json(given)
-    seen = [_observed_line(e, k, mhz) for k, e in enumerate(_list(given.get("lines"), "lines"))]
+    lines = _list(given.get("lines"), "lines")
+    seen = [observed_line(entry, f"lines[{k}]", mhz) for k, entry in enumerate(lines)]
     fit = fit_system(
         system,
         [hz for hz, _ in seen],
@@ -168,8 +169,11 @@ def _nuclei(entry: Any, index: int, mhz: float) -> Nuclei:
     return Nuclei(ppm * mhz, count, observed, str(entry.get("label", "")))
 
 
-def _observed_line(entry: Any, index: int, mhz: float) -> tuple[float, float]:
-    place = f"lines[{index}]"
+def observed_line(entry: Any, place: str, mhz: float) -> tuple[float, float]:
+    """(Hz, height) of an object with "ppm" or "hz" and perhaps "height"; ``place`` names it in errors.
+
+    Raises: InvalidInputError naming the field, its value and the mend.
+    """
     if not isinstance(entry, Mapping):
         raise _wrong(place, entry, "is no object", 'Write {"ppm": 7.1, "height": 1}.')
     height = _checked(entry.get("height", 1.0), f"{place}.height", (1e-9, 1e12))

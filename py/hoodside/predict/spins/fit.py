@@ -8,7 +8,7 @@ lead from far away, then with narrower ones: total-line-shape fitting (Stephenso
 from __future__ import annotations
 
 from array import array
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Iterable, Sequence
 from dataclasses import dataclass, replace
 from math import sqrt
 
@@ -35,6 +35,9 @@ MOST_FREE = 14
 #: Share of the strongest line that counts when lines are compared.
 _COUNTED = 0.02
 
+#: Groups, or couplings, that share one value: those a symmetry of the molecule makes alike.
+Tied = tuple[int, ...]
+
 
 @dataclass(frozen=True, slots=True)
 class Fit:
@@ -57,8 +60,8 @@ def fit_system(
     start: SpinSystem,
     hz: Sequence[float],
     heights: Sequence[float],
-    free_shifts: Sequence[int] | None = None,
-    free_couplings: Sequence[int] | None = None,
+    free_shifts: Sequence[int | Tied] | None = None,
+    free_couplings: Sequence[int | Tied] | None = None,
 ) -> Fit:
     """Fit shifts and couplings to observed lines.
 
@@ -66,12 +69,12 @@ def fit_system(
         start: the system as predicted.
         hz, heights: observed lines; heights in any unit. The lines must be all those of the observed groups
             inside the range they span.
-        free_shifts: groups whose shift may move (all observed ones when None).
-        free_couplings: indices in ``start.couplings`` that may change (all when None).
+        free_shifts: groups whose shift may move (all observed ones when None); those of one entry together.
+        free_couplings: indices in ``start.couplings`` that may change (all when None), likewise.
     Raises: InvalidInputError when nothing is given to fit, or too much.
     """
-    shifts = _observed(start) if free_shifts is None else list(free_shifts)
-    couplings = list(range(len(start.couplings)) if free_couplings is None else free_couplings)
+    shifts = _tied(_observed(start) if free_shifts is None else free_shifts)
+    couplings = _tied(range(len(start.couplings)) if free_couplings is None else free_couplings)
     _check(hz, heights, len(shifts) + len(couplings))
 
     def system_of(values: Sequence[float]) -> SpinSystem:
@@ -79,7 +82,7 @@ def fit_system(
 
     pairs = sorted(zip(hz, heights, strict=True))
     seen = LineList(array("d", [x for x, _ in pairs]), array("d", [h for _, h in pairs]))
-    values = [start.groups[g].hz for g in shifts] + [start.couplings[c][2] for c in couplings]
+    values = [start.groups[g[0]].hz for g in shifts] + [start.couplings[c[0]][2] for c in couplings]
     spreads = [_SHIFT_SPREAD] * len(shifts) + [_COUPLING_SPREAD] * len(couplings)
     predicted, errors = values, [0.0]
     for width, hold in _ROUNDS:
@@ -88,6 +91,10 @@ def fit_system(
     found = system_of(values)
     lines = simulate(found)
     return Fit(found, lines, _distance(seen, lines), tuple(errors))
+
+
+def _tied(entries: Iterable[int | Tied]) -> list[Tied]:
+    return [(entry,) if isinstance(entry, int) else entry for entry in entries]
 
 
 def _observed(system: SpinSystem) -> list[int]:
@@ -110,13 +117,15 @@ def _check(hz: Sequence[float], heights: Sequence[float], free: int) -> None:
 
 
 def _with_values(
-    start: SpinSystem, shifts: Sequence[int], couplings: Sequence[int], values: Sequence[float]
+    start: SpinSystem, shifts: Sequence[Tied], couplings: Sequence[Tied], values: Sequence[float]
 ) -> SpinSystem:
     groups, pairs = list(start.groups), list(start.couplings)
-    for g, hz in zip(shifts, values, strict=False):
-        groups[g] = replace(groups[g], hz=hz)
-    for c, hz in zip(couplings, values[len(shifts) :], strict=True):
-        pairs[c] = (*pairs[c][:2], hz)
+    for tied, hz in zip(shifts, values, strict=False):
+        for g in tied:
+            groups[g] = replace(groups[g], hz=hz)
+    for tied, hz in zip(couplings, values[len(shifts) :], strict=True):
+        for c in tied:
+            pairs[c] = (*pairs[c][:2], hz)
     return SpinSystem(tuple(groups), tuple(pairs))
 
 

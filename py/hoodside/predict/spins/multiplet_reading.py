@@ -15,6 +15,7 @@ from math import comb, isfinite, log2
 
 from hoodside.errors import InvalidInputError
 from hoodside.predict.multiplet import Splitting, name_of
+from hoodside.predict.spins.ab_quartet import CLEAR_ROOF, ab_lines, read_ab_quartet
 from hoodside.predict.spins.least_squares import solve_least_squares
 
 #: Most lines read, and most coupled spins assumed.
@@ -26,6 +27,8 @@ _POSITION_SD, _REACH, _LOOSE = 0.2, 0.9, 1.4
 _HEIGHT_SD, _HEIGHT_FLOOR = 0.3, 0.01
 #: Cost of one more coupling, in units of chi squared; and what equating two couplings may cost.
 _PER_COUPLING, _EQUATED = 4.0, 5.0
+#: Cost of an AB quartet, in couplings: one J, one difference, and that two nuclei were taken for one signal.
+_QUARTET_COSTS = 3
 #: Hz: couplings further apart are not tried as equal.
 _NEAR_EQUAL = 1.3
 #: How far the number of partners may be from what the outermost heights say (powers of two).
@@ -46,6 +49,7 @@ class MultipletReading:
         centre_hz: middle of the multiplet, Hz.
         rms_hz: root mean square distance of the lines from the reading, Hz.
         score: chi squared of positions and heights plus the cost of each coupling; the smaller the better.
+        shifts_hz: both shifts of an AB quartet, which lie where no line is; empty for first-order patterns.
     """
 
     pattern: str
@@ -53,6 +57,7 @@ class MultipletReading:
     centre_hz: float
     rms_hz: float
     score: float
+    shifts_hz: tuple[float, ...] = ()
 
     @property
     def j(self) -> tuple[float, ...]:
@@ -77,11 +82,11 @@ def read_multiplet(hz: Sequence[float], heights: Sequence[float] | None = None) 
     Raises: InvalidInputError for no or too many lines, or heights that do not fit.
     """
     lines, sizes = _checked(hz, heights)
-    found = sorted(_readings(lines, sizes), key=lambda r: r.score)
+    found = sorted([*_readings(lines, sizes), *_quartets(lines, sizes)], key=lambda r: r.score)
     kept = [r for r in found if r.score <= found[0].score + _WORSE]
     unique = list({r.pattern: r for r in reversed(kept)}.values())
     unique.sort(key=lambda r: r.score)
-    return MultipletAnalysis(tuple(unique[:_ALTERNATIVES]), _warnings(lines, sizes, bool(found)))
+    return MultipletAnalysis(tuple(unique[:_ALTERNATIVES]), _warnings(lines, sizes, found))
 
 
 def _checked(hz: Sequence[float], heights: Sequence[float] | None) -> tuple[list[float], list[float] | None]:
@@ -107,6 +112,23 @@ def _readings(lines: list[float], heights: list[float] | None) -> Iterator[Multi
         fitted = _fitted(lines, heights, [Splitting(j, 1) for j in couplings])
         if fitted is not None:
             yield _simplified(lines, heights, fitted)
+
+
+def _quartets(lines: list[float], heights: list[float] | None) -> Iterator[MultipletReading]:
+    """Four lines as an AB quartet: two strongly coupled nuclei in place of one with two partners."""
+    found = read_ab_quartet(lines, heights) if len(lines) == 4 else None
+    if found is None:
+        return
+    made = ab_lines(*found.shifts, found.j)
+    away = [x - hz for x, (hz, _) in zip(lines, made, strict=True)]
+    score = sum((d / _POSITION_SD) ** 2 for d in away) + _PER_COUPLING * _QUARTET_COSTS
+    if heights is not None:
+        seen = (heights[1] + heights[2]) / (heights[0] + heights[3])
+        ratio = seen if CLEAR_ROOF <= seen < found.ratio else found.ratio
+        outer = 0.5 / (1 + ratio)
+        score += _height_chi(heights, [outer, 0.5 - outer, 0.5 - outer, outer])
+    rms = (sum(d * d for d in away) / len(lines)) ** 0.5
+    yield MultipletReading("ABq", (Splitting(found.j, 1),), found.centre, rms, score, found.shifts)
 
 
 def _candidate_sets(lines: list[float], heights: list[float] | None) -> Iterator[tuple[float, ...]]:
@@ -280,22 +302,28 @@ def _judged(
     away = _away(lines, given, parts, centre)
     score = sum((d / _POSITION_SD) ** 2 for d in away) + _PER_COUPLING * len(parts)
     if heights is not None:
-        score += sum(
-            ((h - share) / (_HEIGHT_SD * share + _HEIGHT_FLOOR)) ** 2
-            for h, (_, share) in zip(heights, given, strict=True)
-        )
+        score += _height_chi(heights, [share for _, share in given])
     rms = (sum(d * d for d in away) / len(lines)) ** 0.5
     return MultipletReading(name_of(parts), tuple(parts), centre, rms, score)
 
 
-def _warnings(lines: list[float], heights: list[float] | None, read: bool) -> tuple[str, ...]:
-    found = []
-    if not read:
-        found.append("No set of couplings explains these lines to first order.")
+def _height_chi(heights: Sequence[float], shares: Sequence[float]) -> float:
+    return sum(
+        ((h - share) / (_HEIGHT_SD * share + _HEIGHT_FLOOR)) ** 2
+        for h, share in zip(heights, shares, strict=True)
+    )
+
+
+def _warnings(
+    lines: list[float], heights: list[float] | None, found: Sequence[MultipletReading]
+) -> tuple[str, ...]:
+    said = []
+    if all(reading.shifts_hz for reading in found):
+        said.append("No set of couplings explains these lines to first order.")
     middle = lines[0] + lines[-1]
     skew = max(abs(a + b - middle) for a, b in zip(lines, reversed(lines), strict=True))
     if skew > _ASYMMETRY:
-        found.append(
+        said.append(
             f"The lines are {skew:.1f} Hz out of symmetry: overlap, or not first order at this field."
         )
     if heights is not None and len(lines) > 1:
@@ -303,5 +331,5 @@ def _warnings(lines: list[float], heights: list[float] | None, read: bool) -> tu
         low, high = sum(heights[:half]), sum(heights[-half:])
         if max(low, high) > _LEANING * min(low, high):
             side = "higher" if high > low else "lower"
-            found.append(f"The pattern leans to {side} shift: a strongly coupled partner lies there.")
-    return tuple(found)
+            said.append(f"The pattern leans to {side} shift: a strongly coupled partner lies there.")
+    return tuple(said)

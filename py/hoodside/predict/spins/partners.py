@@ -28,6 +28,11 @@ class SharedCoupling:
     hz_b: float
     counts_fit: bool
 
+    def times_apart(self, signals: Sequence[ProtonSignal], mhz: float) -> float:
+        """Difference of the two shifts over J: ten is needed for first-order patterns (common practice)."""
+        middles = [(signals[k].lo + signals[k].hi) / 2 for k in (self.a, self.b)]
+        return abs(middles[0] - middles[1]) * mhz / max(self.hz_a, self.hz_b)
+
 
 @dataclass(frozen=True, slots=True)
 class LoneCoupling:
