@@ -118,6 +118,7 @@ def warm_work(page: Page, profile: Path) -> list[Figure]:
     )
     whole, predicting = _timed(profile, len(PREDICTED), lambda: page.evaluate(PREDICTIONS, PREDICTED))
     steps, editing = _timed(profile, len(STEPS), lambda: page.evaluate(EDITS, [GROWN, STEPS, "C15H20N2O3"]))
+    memory = page.evaluate("() => window.engine.call('worker.memory')")
     weighed = ", ".join(str(count) for _, _, count in hunts)
     return [
         _median(
@@ -129,6 +130,7 @@ def warm_work(page: Page, profile: Path) -> list[Figure]:
         _processor("the same, processor time of the worker", predicting),
         _median("one editing step to the structure redrawn, warm", steps, 50),
         _processor("the same, processor time of the worker", editing),
+        Figure("worker memory after all this", sum(memory.values()) / 1e6, "MB", note="both wasm heaps"),
     ]
 
 

@@ -197,3 +197,12 @@ def test_proposals_say_fragments_structures_and_what_was_done(
     assert told[:2] == ["No fragment is forced by these readings.", "Structures"]
     assert any(line.strip().startswith("+") and line.endswith("CC(C)O") for line in told)
     assert "weighed" in told[-1]
+
+
+def test_rivals_begin_with_what_the_step_may_have_left(capsys: pytest.CaptureFixture[str]) -> None:
+    """Borohydride: the aldehyde is what is left when nothing happens (common practice)."""
+    command = ["rivals", "OCc1ccccc1", "--start", "O=Cc1ccccc1", "--with", "NaBH4", "--limit", "2"]
+    assert main(command) == 0
+    told = capsys.readouterr().out.splitlines()
+    assert told[0].split() == ["O=Cc1ccccc1", "C7H6O", "the", "start", "of", "the", "step,", "unchanged"]
+    assert len(told) >= 3

@@ -115,6 +115,9 @@ def _rivals(command: argparse.ArgumentParser) -> None:
     command.add_argument("smiles", metavar="SMILES", help="the structure")
     command.add_argument("--readings", metavar="FILE", help="readings that rivals should fit")
     command.add_argument("--limit", default="", help="how many rivals")
+    command.add_argument("--start", default="", metavar="SMILES", help="what the step began from")
+    command.add_argument("--with", dest="reagents", default="", metavar="REAGENT", help="what was added")
+    command.add_argument("--partner", default="", metavar="SMILES", help="the organic partner")
 
 
 def _proposals(command: argparse.ArgumentParser) -> None:

@@ -18,6 +18,11 @@ def run(options: argparse.Namespace) -> int:
     asked: dict[str, Any] = {"smiles": options.smiles}
     if options.readings:
         asked["readings"] = check_object(read_json(options.readings)[0][0])
+        if isinstance(asked["readings"], dict) and asked["readings"].get("step"):
+            asked["step"] = asked["readings"]["step"]
+    if options.start:
+        stated = {"start": options.start, "reagents": options.reagents, "partner": options.partner}
+        asked["step"] = {key: value for key, value in stated.items() if value}
     if options.limit:
         asked["limit"] = options.limit
     return answer_one("rivals", asked, options.json, _lines)

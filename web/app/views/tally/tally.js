@@ -1,4 +1,5 @@
 import { html } from 'htm/preact';
+import { Words } from '../../components/chem.js';
 import { currentCheck } from '../../state/check.js';
 import { engineState } from '../../state/engine.js';
 import { address } from '../../state/route.js';
@@ -33,6 +34,7 @@ export function Tally({ doc }) {
     ${found.answer.warnings.map((warning) => html`<p class="hint" key=${warning}>${warning}</p>`)}
     <${Ladder} doc=${doc} found=${found} at=${at} />
     <header class="section-head tally-head"><h2>${structureName(doc, found, at)}</h2><p>${signed(candidate.weight_db)}</p></header>
+    ${candidate.how.length > 0 && html`<p class="hint">Put up by the program: <${Words} text=${candidate.how.join('; ')} />.</p>`}
     <${Axis} doc=${doc} found=${found} at=${at} />
     <a class="button" href=${address('case', doc.id, 'tally', 'trace')}>Simulated trace, at any field</a>
     <${Rows} doc=${doc} rows=${rows} at=${at} />
