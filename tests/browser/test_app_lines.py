@@ -72,12 +72,42 @@ def test_lines_in_hz_with_heights_tell_a_quartet(hand: Hand) -> None:
     first = hand.page.locator(".line-reading").first
     expect(first.locator("b")).to_have_text("q")
     expect(first).to_contain_text("7.0 Hz")
-    expect(first).to_contain_text("4.026 ppm")
+    expect(hand.page.locator(".lines-found .line-reading").first).to_contain_text("4.026 ppm")
     hand.back()
     hand.back()
     expect(hand.page.locator(".slip")).to_have_count(
         1
     )  # lines typed are kept although the signal has no shift yet
+
+
+def test_roofed_lines_are_offered_as_an_ab_quartet(hand: Hand) -> None:
+    """J = 14 Hz and a difference of sqrt(31 x 3) Hz by the closed form of AB; heights by eye."""
+    hand.tap("Add a signal")
+    hand.tap("Pattern and J from its lines")
+    hand.tap("Hz")
+    _enter(hand, ["1231", "1217", "1214", "1200"])
+    for at, taps in enumerate([1, 3, 3, 1]):
+        for _ in range(taps):
+            hand.page.get_by_label(f"Height of line {at + 1}").click()
+    best = hand.page.locator(".lines-at-hand .line-reading").first
+    expect(best.locator("b")).to_have_text("ABq")
+    expect(best).to_contain_text("14.0 Hz")
+    expect(hand.page.locator(".lines-found")).to_contain_text("3.051 and 3.027 ppm")
+    best.click()
+    expect(hand.page.locator("input[name=shift]")).to_have_value("3.08-3.00")
+    expect(hand.page.locator("input[name=j]")).to_have_value("14.0")
+
+
+def test_the_line_being_typed_stays_in_sight(hand: Hand) -> None:
+    hand.tap("Add a signal")
+    hand.tap("Pattern and J from its lines")
+    _enter(hand, ["6.53", "6.51", "6.49", "6.47", "6.45", "6.43", "6.41"])
+    hand.page.locator(".lines-at-hand .line-reading").first.wait_for()
+    typed = hand.page.locator("input[name=line-7]").bounding_box()
+    strip = hand.page.locator(".lines-at-hand").bounding_box()
+    assert typed is not None
+    assert strip is not None
+    assert typed["y"] + typed["height"] <= strip["y"]
 
 
 def test_a_line_that_is_none_is_kept_and_named(hand: Hand) -> None:
@@ -99,6 +129,13 @@ def test_partner_of_a_j_is_named_under_it(hand: Hand) -> None:
     hand.back()
     hand.page.locator(".slip", has_text="7.81").click()
     expect(hand.page.locator(".partner-note")).to_contain_text("No other signal shares 8.2 Hz")
+
+
+def test_partners_too_near_for_first_order_are_warned_of(hand: Hand) -> None:
+    """Difference of the shifts below ten times J: common practice."""
+    hand.paste_report("1H NMR (60 MHz, CDCl3) δ 7.09 (d, J = 8.4 Hz, 2H), 6.82 (d, J = 8.4 Hz, 2H)")
+    hand.page.locator(".slip", has_text="7.09").click()
+    expect(hand.page.locator(".partner-note")).to_contain_text("not first order")
 
 
 def _spectrum() -> FilePayload:

@@ -114,6 +114,36 @@ def test_first_order_rules_hold_at_400_and_not_at_60(hand: Hand) -> None:
     expect(hand.page.locator(".tree figcaption")).to_contain_text("2 branches")
 
 
+def test_small_lines_come_up_when_drawn_taller(hand: Hand) -> None:
+    hand.tap("Draw it taller")
+    expect(hand.page.locator(".trace-plot")).to_contain_text("4 times as tall")
+    hand.tap("Draw it taller")
+    hand.tap("As tall as before")
+    expect(hand.page.locator(".trace-plot")).not_to_contain_text("times as tall")
+
+
+def test_typed_lines_stand_over_the_trace_at_their_own_field_alone(hand: Hand) -> None:
+    _field(hand, "60")
+    expect(hand.page.locator(".trace-typed")).to_have_count(4)
+    _field(hand, "400")
+    expect(hand.page.locator(".trace-typed")).to_have_count(0)
+
+
+def test_spin_system_is_fitted_to_the_typed_lines(hand: Hand) -> None:
+    """Four lines of a para pair at 60 MHz: two shifts of 2 H and the J between ortho H, 8 to 9 Hz."""
+    _field(hand, "60")
+    hand.tap("Fit it to the 4 lines at 7.24–6.68")
+    result = hand.page.locator(".fit-result")
+    expect(result).to_contain_text("gives the 4 lines within 0.")
+    expect(result.get_by_role("button", name="2 H")).to_have_count(2)
+    assert re.search(r"8\.\d ± 0\.\d Hz", result.inner_text())
+    expect(hand.page.locator(".trace-fitted")).to_have_count(1)
+    result.get_by_role("button", name="2 H").first.click()
+    expect(hand.page.locator(".drawing-traced .lit")).to_have_count(2)
+    hand.tap("Leave the fit of the 4 lines at 7.24–6.68")
+    expect(hand.page.locator(".trace-fitted")).to_have_count(0)
+
+
 def test_a_line_is_drawn_as_a_lorentzian(bare_page: Page) -> None:
     """Half its height half a width from its middle, a fifth one width away."""
     heights = bare_page.evaluate(LINE_SHAPE, [0, 0.5, 1, -0.5])

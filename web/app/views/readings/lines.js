@@ -27,5 +27,14 @@ export function linesQuestion(lines, mhz) {
   return { lines: read.map(({ at }) => toNumber(at)), unit: lines.unit, ...(full && { heights }), ...(toNumber(mhz) > 0 && { mhz: toNumber(mhz) }) };
 }
 
+/** The lines of a signal that can be read, with heights where every line has one, else all alike.
+ * @param {LineList} lines @param {number} mhz @returns {{ ppm: number, height: number }[]} */
+export function linesInPpm(lines, mhz) {
+  const read = lines.rows.filter(({ at }) => !Number.isNaN(toNumber(at)));
+  const heights = read.map(({ tall }) => heightOf(tall));
+  const full = lines.heights !== 'none' && heights.every((height) => height > 0);
+  return read.map(({ at }, i) => ({ ppm: toNumber(at) / (lines.unit === 'hz' ? mhz : 1), height: full ? heights[i] ?? 1 : 1 }));
+}
+
 /** What is wrong with a line as typed, '' when nothing is. @param {string} text @param {string} unit */
 export const lineFault = (text, unit) => (text.trim() && Number.isNaN(toNumber(text)) ? `${text} is no line. Type ${unit === 'hz' ? '2784.2' : '6.960'}.` : '');

@@ -53,17 +53,28 @@ function heightAt(lines, at, reach) {
   return sum;
 }
 
-/** The curve of a view as [ppm, height], high shift first, its tallest point 1. Tops of lines narrower than a column are
- * never lost: every line in view is a point of the curve.
+/** Lines as the engine gives them, for drawing. @param {{ hz: number, intensity: number }[]} lines @returns {Line[]} */
+export const sharp = (lines) => merged(lines, LINE_HZ);
+
+/** The curve of a view as [ppm, height], high shift first. Tops of lines narrower than a column are never lost: every
+ * line in view is a point of the curve.
  * @param {Line[]} lines @param {number} mhz @param {{ hi: number, lo: number }} view ppm @param {number} columns
+ * @param {number} [unit] what counts as 1; the tallest point when not given
  * @returns {[number, number][]} */
-export function curve(lines, mhz, view, columns) {
+export function curve(lines, mhz, view, columns, unit) {
   const [hi, lo] = [view.hi * mhz, view.lo * mhz];
   const places = Array.from({ length: columns + 1 }, (_, i) => hi - ((hi - lo) * i) / columns);
   for (const { hz } of lines) if (hz > lo && hz < hi) places.push(hz);
   places.sort((a, b) => b - a);
   const reach = REACH * Math.max(LINE_HZ, ...lines.map(({ width }) => width));
   const heights = places.map((hz) => heightAt(lines, hz, reach));
-  const top = Math.max(...heights) || 1;
+  const top = unit ?? (Math.max(...heights) || 1);
   return places.map((hz, i) => [hz / mhz, /** @type {number} */ (heights[i]) / top]);
+}
+
+/** Height of the tallest point in view. @param {Line[]} lines @param {number} mhz @param {{ hi: number, lo: number }} view */
+export function tallest(lines, mhz, view) {
+  const inside = lines.filter(({ hz }) => hz > view.lo * mhz && hz < view.hi * mhz);
+  const reach = REACH * Math.max(LINE_HZ, ...lines.map(({ width }) => width));
+  return Math.max(...[view.hi * mhz, view.lo * mhz, ...inside.map(({ hz }) => hz)].map((hz) => heightAt(lines, hz, reach)));
 }

@@ -12,3 +12,11 @@ export interface TracedGroup {
   /** Distance to the nearest group of its spin system, in Hz and in its own largest J; null where there is none. */
   nearest: { hz: number; times: number } | null;
 }
+/** A signal with the lines typed from the printout. */
+export interface TypedSignal { id: string; shift: string; n: number; lines: { ppm: number; height: number }[] }
+/** What a fit of a structure's spin system to lines gave. */
+export interface Fitted {
+  mhz: number; rms_hz: number; groups: number[]; lines: TraceLine[];
+  shifts: { group: number; atoms: number[]; predicted_ppm: number; ppm: number; uncertain_hz: number | null }[];
+  couplings: { groups: number[]; predicted_hz: number; hz: number; uncertain_hz: number | null }[];
+}
