@@ -45,6 +45,7 @@ METHODS: dict[str, str] = {
     "proposals": "proposals:proposals",
     "changes": "changes:changes",
     "amounts": "quantities:amounts",
+    "amount_tables": "quantities:amount_tables",
 }
 _HOME = "hoodside.methods."
 

@@ -88,6 +88,34 @@ def test_solvent_left_by_mole_and_mass(hand: Hand) -> None:
     expect(hand.page.locator(".facts-table").first).to_contain_text("95.74")
 
 
+def test_the_account_as_text_holds_the_amounts(hand: Hand) -> None:
+    """What is copied says what the record shows: figures, their uncertainty, and what they rest on."""
+    hand.page.context.grant_permissions(["clipboard-read", "clipboard-write"])
+    hand.back()
+    hand.page.get_by_label("Case menu").click()
+    hand.tap("Record")
+    expect(hand.page.locator(".facts-table").first).to_contain_text("95.74")
+    hand.tap("Copy")
+    expect(hand.page.get_by_text("Copied as text")).to_be_visible()
+    copied = hand.page.evaluate("navigator.clipboard.readText()")
+    assert "Amounts, solvent left (one standard uncertainty):" in copied
+    assert "ethyl acetate: 4.26" in copied
+    assert "five times the longest T1" in copied
+    hand.back()
+    hand.page.get_by_label("Case menu").click()
+    hand.tap("Amounts")
+
+
+def test_standards_and_residues_come_from_the_tables(hand: Hand) -> None:
+    hand.tap("Another solvent")
+    expect(
+        hand.page.get_by_role("button", name="ethyl acetate, 2.05 and 4.12 and 1.26 ppm").first
+    ).to_be_visible()
+    hand.page.get_by_role("button", name="of the table").click()
+    expect(hand.page.get_by_role("button", name="cyclopentyl methyl ether")).to_be_visible()
+    hand.tap("Remove")
+
+
 def test_amounts_are_kept_with_the_case(hand: Hand) -> None:
     hand.page.reload()
     expect(hand.page.locator(".facts-table").first).to_contain_text("95.74")

@@ -109,9 +109,22 @@ def test_a_partner_makes_the_step(hand: Hand) -> None:
     page.get_by_role("button", name="K2CO3, DMF").tap()
     page.get_by_role("button", name="Done").tap()
     assert len(outcomes(page)) == 1
+    expect(page.locator(".run-none")).to_contain_text("The table holds no step for K2CO3")
     page.get_by_label("Add an organic partner").tap()
     put_in(page, "BrCc1ccccc1")
     expect(page.locator(".run-outcome").first).to_contain_text("C16H18O", timeout=ANSWER_MS)
+
+
+def test_a_reagent_brings_its_own_structure(hand: Hand) -> None:
+    """A Grignard reagent by its name needs no partner put in beside it."""
+    page = hand.page
+    start_from(page, "CC(C)c1ccc(C=O)cc1")
+    page.get_by_role("link", name="Search").tap()
+    page.get_by_label("Reagents").fill("PhMg")
+    page.get_by_role("button", name="PhMgBr", exact=True).tap()
+    page.get_by_role("button", name="Done").tap()
+    assert "C16H18O" in outcomes(page)[0]
+    expect(page.locator(".run-cautions")).to_contain_text("Grignard reagent")
 
 
 def test_the_start_is_grown_and_brought_back(hand: Hand) -> None:

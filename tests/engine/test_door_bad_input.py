@@ -109,6 +109,7 @@ GOOD: list[tuple[str, dict[str, Any]]] = [
     ("proposals", {"readings": READINGS, "limit": 2}),
     ("changes", {"start": "CCCO", "product": "CCC=O", "solvent": "CDCl3", "mhz": 400}),
     *(("amounts", question) for question in AMOUNTS),
+    ("amount_tables", {"nmr_solvent": "DMSO-d6"}),
 ]
 OUT_OF_PLACE: tuple[Any, ...] = (
     None,

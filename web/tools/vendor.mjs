@@ -27,6 +27,8 @@ const MODULES = /** @type {Record<string, string>} */ ({
 const FOR_PAGES = ['preact', 'preact/hooks', 'htm', 'htm/preact', '@preact/signals', 'idb', 'uplot'];
 /** File in OUT -> the module, in this folder, that names what workers use. */
 const FOR_WORKERS = { 'eigen-solver.js': 'eigen-solver.mjs' };
+/** Bare import of a page -> file in OUT and the module, in this folder, that names what is used of a large package. */
+const JOINED_FOR_PAGES = { 'qr/decode.js': { file: 'qr-decoder.js', entry: 'qr-decoder.mjs' } };
 const STYLES = ['uplot/dist/uPlot.min.css'];
 
 const SPECIFIER = /(\b(?:from|import)\s*)(["'])([^"'\n]+)\2/g;
@@ -69,7 +71,9 @@ async function joinModule(file, entry) {
 
 /** Browsers want the import map before the first script. @param {string} index */
 async function insertMap(index) {
-  const imports = Object.fromEntries(FOR_PAGES.map((bare) => [bare, `./vendor/${MODULES[bare]}`]));
+  const copied = FOR_PAGES.map((bare) => [bare, `./vendor/${MODULES[bare]}`]);
+  const joined = Object.entries(JOINED_FOR_PAGES).map(([bare, { file }]) => [bare, `./vendor/${file}`]);
+  const imports = Object.fromEntries([...copied, ...joined]);
   const map = `<script type="importmap">${JSON.stringify({ imports })}</script>`;
   const page = await readFile(index, 'utf8');
   const mapped = page.replace(/(?=<script|<link[^>]+modulepreload)/, `${map}\n    `);
@@ -80,6 +84,7 @@ async function insertMap(index) {
 const [out, index] = process.argv.slice(2).map((path) => resolve(path));
 const done = /** @type {Set<string>} */ (new Set());
 for (const bare of FOR_PAGES) await copyModule(out, MODULES[bare], done);
-for (const [file, entry] of Object.entries(FOR_WORKERS)) await joinModule(join(out, file), join(here, entry));
+const joins = [...Object.entries(FOR_WORKERS), ...Object.values(JOINED_FOR_PAGES).map(({ file, entry }) => [file, entry])];
+for (const [file, entry] of joins) await joinModule(join(out, file), join(here, entry));
 for (const file of STYLES) await copyFile(join(packages, file), join(out, /** @type {string} */ (file.split('/').at(-1))));
 await insertMap(index);

@@ -38,6 +38,16 @@ def impurity_signals(solvent: str) -> tuple[ImpuritySignal, ...]:
     return tuple(found)
 
 
+def residues(solvent: str) -> dict[str, tuple[ImpuritySignal, ...]]:
+    """What may be left in a product, with its signals in an NMR solvent; what stays most comes first."""
+    found: dict[str, tuple[ImpuritySignal, ...]] = {
+        row["compound"]: () for row in load_table("usual_residues")
+    }
+    for signal in impurity_signals(solvent):
+        found[signal.compound] = (*found.get(signal.compound, ()), signal)
+    return {compound: signals for compound, signals in found.items() if signals}
+
+
 def _is_number(cell: str) -> bool:
     try:
         float(cell)

@@ -23,7 +23,9 @@ def run(options: argparse.Namespace) -> int:
 def _lines(answer: dict[str, Any]) -> Iterator[str]:
     rows = [[o["role"], o["formula"], o["smiles"], o["stereo"], o["name"]] for o in answer["outcomes"]]
     yield from columns(rows)
-    if answer["unknown"]:
+    if answer["no_step"]:
+        yield f"! {answer['no_step']}"
+    elif answer["unknown"]:
         yield f"! Not known as reagents: {', '.join(answer['unknown'])}"
     for caution in answer["cautions"]:
         yield f"caution  {caution['reagent']}: {caution['hazards']}. Quench: {caution['quench']}"

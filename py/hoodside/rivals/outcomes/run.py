@@ -67,7 +67,7 @@ def find_outcomes(
         in_turn = _in_turn(now, steps, partner, kind, racemic)
         found = in_turn if _has_product(in_turn) or not _has_product(found) else found
     return Outcomes(
-        (*found[:_MOST], _unchanged(start)),
+        (*found[:_MOST], _unchanged(start, known=bool(found))),
         told.names,
         told.unknown,
         "" if _has_product(found) else why_nothing(told, partner),
@@ -275,13 +275,13 @@ def _outcome(rule: Rule, product: Structure, role: Role, start: Structure, step:
     )
 
 
-def _unchanged(start: Structure) -> Outcome:
+def _unchanged(start: Structure, known: bool) -> Outcome:
     return Outcome(
         start.smiles,
         "no reaction",
         "",
         "starting material",
-        "Not everything reacts.",
+        "Not everything reacts." if known else "The table knows no step of it, which proves nothing.",
         "",
         (),
         "common practice",

@@ -32,23 +32,39 @@ function Main({ name, figure, unit }) {
 /** More than there can be, beyond its own uncertainty. @param {Figure | undefined} figure */
 const tooMuch = (figure) => figure && figure.value - figure.expanded > 100;
 
+/** The single figures an answer may hold, what they are called and their unit. @type {['ratio' | 'conversion_percent' | 'yield_percent' | 'purity_percent', string, string][]} */
+const SINGLE = [['ratio', 'ratio, first to second', ': 1'], ['conversion_percent', 'conversion', '%'], ['yield_percent', 'yield', '%'], ['purity_percent', 'purity by mass', '%']];
+
+/** The answer as lines of plain text. @param {import('../../types').CaseDoc} doc @param {AmountAnswer} answer @returns {string[]} */
+export function amountLines(doc, answer) {
+  const each = (/** @type {string} */ what, /** @type {Record<string, Figure> | undefined} */ figures) =>
+    Object.entries(figures ?? {}).map(([name, figure]) => `  ${name}: ${figureWords(figure)} ${what}`);
+  return [`Amounts, ${kindOf(amountsOf(doc).kind).name.toLowerCase()} (one standard uncertainty):`,
+    ...SINGLE.flatMap(([key, name, unit]) => { const figure = answer[key]; return figure ? [`  ${name}: ${figureWords(figure)} ${unit}`] : []; }),
+    ...each('mole %', answer.mole_percent), ...each('mass %', answer.mass_percent),
+    'This holds if:', ...answer.assumptions.map((line) => `  ${line}`)];
+}
+
 /** A figure for each species. @param {{ title: string, figures: Record<string, Figure> }} props */
 const Each = ({ title, figures }) => html`<${Section} title=${title}><dl class="facts-table">${Object.entries(figures).map(([name, figure]) => html`<div key=${name}>
   <dt>${name}</dt><dd>${figureWords(figure)} %</dd></div>`)}</dl><//>`;
 
 /** The figures of a case for its record; nothing while the question is not whole. @param {{ doc: import('../../types').CaseDoc }} props */
 export function RecordedAmounts({ doc }) {
+  const answer = useAmounts(doc);
+  return answer && html`<${Section} title="Amounts: ${kindOf(amountsOf(doc).kind).name.toLowerCase()}"><${Answer} answer=${answer} /><//>`;
+}
+
+/** What the amounts of a case come to, null while the question is not whole. @param {import('../../types').CaseDoc} doc @returns {AmountAnswer | null} */
+export function useAmounts(doc) {
   const { params } = doc.amounts ? amountsQuestion(doc) : { params: null };
   const { value } = useAnswer('amounts', params);
-  return params && value ? html`<${Section} title="Amounts: ${kindOf(amountsOf(doc).kind).name.toLowerCase()}"><${Answer} answer=${/** @type {any} */ (value)} /><//>` : null;
+  return params ? /** @type {any} */ (value) : null;
 }
 
 /** The figures asked for, with uncertainty and assumptions. @param {{ answer: AmountAnswer }} props */
 export const Answer = ({ answer }) => html`<div class="amount-answer" aria-live="polite">
-  ${answer.ratio && html`<${Main} name="ratio, first to second" figure=${answer.ratio} unit=": 1" />`}
-  ${answer.conversion_percent && html`<${Main} name="conversion" figure=${answer.conversion_percent} unit="%" />`}
-  ${answer.yield_percent && html`<${Main} name="yield" figure=${answer.yield_percent} unit="%" />`}
-  ${answer.purity_percent && html`<${Main} name="purity by mass" figure=${answer.purity_percent} unit="%" />`}
+  ${SINGLE.map(([key, name, unit]) => answer[key] && html`<${Main} key=${key} name=${name} figure=${answer[key]} unit=${unit} />`)}
   ${(tooMuch(answer.yield_percent) || tooMuch(answer.purity_percent)) && html`<p class="trouble" role="alert">More than 100 %.
     <span>A signal holds more than it was taken for, a number of H or a mass is wrong, or something else was weighed with it.</span></p>`}
   ${answer.mole_percent && html`<${Each} title="Mole per cent" figures=${answer.mole_percent} />`}

@@ -20,9 +20,3 @@ export const KINDS = [
 
 /** @param {string} kind */
 export const kindOf = (kind) => KINDS.find((entry) => entry.kind === kind) ?? /** @type {Kind} */ (KINDS[0]);
-
-/** Internal standards of common practice, asked of the table of names. */
-export const STANDARDS = ['maleic acid', 'dimethyl sulfone', '1,3,5-trimethoxybenzene', 'dimethyl terephthalate', 'dibromomethane', 'mesitylene'];
-/** Solvents that stay behind most, as the table of impurities names them. */
-export const LEFT_BEHIND = ['ethyl acetate', 'dichloromethane', 'diethyl ether', 'n-hexane', 'toluene', 'acetone', 'methanol', 'ethanol', 'tetrahydrofuran',
-  'acetonitrile', 'dimethylformamide', 'chloroform', 'water'];

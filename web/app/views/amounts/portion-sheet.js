@@ -2,16 +2,15 @@ import { html } from 'htm/preact';
 import { NumberPad, PadField } from '../../components/pad.js';
 import { Chips, Section } from '../../components/parts.js';
 import { Sheet } from '../../components/sheet.js';
-import { ask } from '../../state/engine.js';
 import { go } from '../../state/route.js';
-import { say } from '../../state/toast.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { fixed, toNumber } from '../../words/numbers.js';
 import { highFirst, protonLabel } from '../../words/readings.js';
 import { nameOf } from '../../words/structures.js';
 import { changePortion, amountsAddress, removePortion } from './change.js';
-import { kindOf, LEFT_BEHIND, STANDARDS } from './kinds.js';
+import { kindOf } from './kinds.js';
 import { amountsOf, integralOf, portionName, portionsOf } from './question.js';
+import { TableChips, useTables } from './table-chips.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 /** @typedef {import('../../types').Portion} Portion */
@@ -32,16 +31,20 @@ export function PortionSheet({ doc, roleKey, id }) {
   const remove = () => { removePortion(doc.id, roleKey, portion, name); leave(); };
   return html`<${Sheet} title=${name} back=${back} class="entry-sheet" action=${html`<button type="button" class="bar-action" onClick=${remove}>Remove</button>`}
     foot=${html`<${NumberPad} done=${leave} next="next" />`}>
-    ${role.solvent ? html`<${WhichSolvent} portion=${portion} change=${change} />` : html`<${Who} doc=${doc} portion=${portion} role=${role} change=${change} />`}
+    ${role.solvent ? html`<${WhichSolvent} doc=${doc} portion=${portion} change=${change} />` : html`<${Who} doc=${doc} portion=${portion} role=${role} change=${change} />`}
     ${role.signals && html`<${Signals} doc=${doc} portion=${portion} role=${role} change=${change} />`}
     ${!role.solvent && html`<${Named} portion=${portion} change=${change} />`}
     ${role.mass && html`<${Mass} portion=${portion} role=${role} change=${change} />`}
   <//>`;
 }
 
-/** @param {{ portion: Portion, change: Change }} props */
-const WhichSolvent = ({ portion, change }) => html`<${Chips} label="Solvent" heading class="chips-flow" optional=${false} value=${portion.name}
-  options=${LEFT_BEHIND.map((value) => ({ value, text: value }))} onPick=${(/** @type {string} */ name) => change((draft) => { draft.name = name; })} />`;
+/** What may be left in it, with its signals in the solvent of the case.
+ * @param {{ doc: CaseDoc, portion: Portion, change: Change }} props */
+function WhichSolvent({ doc, portion, change }) {
+  const entries = useTables(doc).residues.map(({ name, signals }) => ({ name, lines: signals.map(({ ppm }) => ppm) }));
+  return html`<${TableChips} label="Solvent" entries=${entries} value=${portion.name} optional=${false}
+    onPick=${(/** @type {string} */ name) => change((draft) => { draft.name = name; })} />`;
+}
 
 /** What the portion is: a structure of the case, or a usual standard.
  * @param {{ doc: CaseDoc, portion: Portion, role: Role, change: Change }} props */
@@ -49,15 +52,24 @@ function Who({ doc, portion, role, change }) {
   const pickStructure = (/** @type {string} */ id) => change((draft) => {
     Object.assign(draft, { structure: id, name: id ? nameOf(doc, id) : '', formula: doc.structures.find((entry) => entry.id === id)?.formula ?? '', molar: '' });
   });
-  const pickStandard = async (/** @type {string} */ name) => {
-    const { names } = await ask('names', { query: name, limit: 1 });
-    if (names[0]) change((draft) => { Object.assign(draft, { name, structure: '', formula: names[0].formula, molar: '' }); });
-    else say(`${name} is not in the table of names; give its molar mass.`);
-  };
-  return html`${role.key === 'standard' ? html`<${Chips} label="Which standard" heading class="chips-flow" value=${portion.name}
-      options=${STANDARDS.map((name) => ({ value: name, text: name }))} onPick=${(/** @type {string} */ name) => { if (name) pickStandard(name); }} />`
-    : doc.structures.length > 0 && html`<${Chips} label="Which structure" heading class="chips-flow" value=${portion.structure}
-      options=${doc.structures.map(({ id }) => ({ value: id, text: nameOf(doc, id) }))} onPick=${pickStructure} />`}`;
+  if (role.key === 'standard') return html`<${WhichStandard} doc=${doc} portion=${portion} change=${change} />`;
+  return doc.structures.length > 0 && html`<${Chips} label="Which structure" heading class="chips-flow" value=${portion.structure}
+    options=${doc.structures.map(({ id }) => ({ value: id, text: nameOf(doc, id) }))} onPick=${pickStructure} />`;
+}
+
+/** A standard brings its molar mass; where it shows and what it does not go with stands below.
+ * @param {{ doc: CaseDoc, portion: Portion, change: Change }} props */
+function WhichStandard({ doc, portion, change }) {
+  const { standards } = useTables(doc);
+  const chosen = standards.find(({ name }) => name === portion.name);
+  const pick = (/** @type {string} */ name) => change((draft) => {
+    const found = standards.find((entry) => entry.name === name);
+    Object.assign(draft, { name, structure: '', formula: '', molar: found ? String(found.molar_mass) : '' });
+  });
+  return html`<${TableChips} label="Which standard" entries=${standards.map(({ name, signals }) => ({ name, lines: signals.map(({ ppm }) => ppm) }))}
+      value=${portion.name} onPick=${pick} />
+    ${chosen && html`<p class="whisper">δ ${chosen.signals.map(({ ppm, protons }) => `${fixed(ppm, 2)} (${protons}H)`).join(', ')}. ${chosen.notes}.
+      <span class="source">${chosen.source}</span></p>`}`;
 }
 
 /** Its name, and its molar mass where no formula tells it. @param {{ portion: Portion, change: Change }} props */

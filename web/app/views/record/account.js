@@ -30,8 +30,8 @@ export function readingLines(doc) {
   return lines;
 }
 
-/** The whole account as plain text. @param {CaseDoc} doc @param {Checked | null} found */
-export function accountText(doc, found) {
+/** The whole account as plain text. @param {CaseDoc} doc @param {Checked | null} found @param {string[]} [amounts] lines about amounts */
+export function accountText(doc, found, amounts = []) {
   const parts = [doc.title, doc.invented ? 'INVENTED EXAMPLE: values made up' : '', `last changed ${doc.changed.slice(0, 16).replace('T', ' ')} UTC`, '', ...readingLines(doc), ''];
   if (found) {
     const { word, rest } = sentence(doc, found);
@@ -43,6 +43,6 @@ export function accountText(doc, found) {
     });
     if (found.answer.next.length) parts.push('', 'Next:', ...found.answer.next.map((entry) => `  ${entry.measure}, about ${fixed(entry.expected_db, 0)} decibans: ${entry.why}`));
   } else parts.push(`${plural(doc.structures.length, 'structure')}: ${doc.structures.map((entry) => entry.smiles).join(', ')}`);
-  parts.push('', 'Weights of evidence, not proof. Made with Hoodside.');
+  parts.push('', ...amounts, '', 'Weights of evidence, not proof. Made with Hoodside.');
   return parts.join('\n').replace(/\n{3,}/g, '\n\n');
 }

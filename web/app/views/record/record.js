@@ -9,7 +9,7 @@ import { address } from '../../state/route.js';
 import { say } from '../../state/toast.js';
 import { signed } from '../../words/numbers.js';
 import { letterOf, structureName } from '../../words/structures.js';
-import { RecordedAmounts } from '../amounts/answer.js';
+import { amountLines, RecordedAmounts, useAmounts } from '../amounts/answer.js';
 import { VerdictLine } from '../tally/verdict-line.js';
 import { Rows } from '../tally/rows.js';
 import { rowsOf } from '../tally/row-data.js';
@@ -22,7 +22,8 @@ import { copyText, download, shareText } from './send.js';
 /** The account of a case: to read, print, share, keep. @param {{ doc: CaseDoc }} props */
 export function Record({ doc }) {
   const { found } = currentCheck.value;
-  const text = () => accountText(doc, found);
+  const amounts = useAmounts(doc);
+  const text = () => accountText(doc, found, amounts ? amountLines(doc, amounts) : []);
   const file = () => download(`${doc.title || 'case'}.json`, JSON.stringify(doc, null, 1), 'application/json');
   const foot = html`<div class="record-foot">
     <button type="button" class="button" onClick=${() => window.print()}>Print</button>

@@ -1,5 +1,6 @@
 import { html } from 'htm/preact';
 import { useEffect, useState } from 'preact/hooks';
+import { Words } from '../../components/chem.js';
 import { Icon } from '../../components/icon.js';
 import { Section, Trouble } from '../../components/parts.js';
 import { Sheet } from '../../components/sheet.js';
@@ -45,14 +46,13 @@ export function RunSheet({ doc }) {
     <div class="run-found ${busy ? 'stale' : ''}" aria-busy=${String(busy)} aria-live="polite">
       <${Trouble} fault=${fault ?? refused} />
       ${found ? html`<${Section} title="What may be in the flask" aside=${outcomes.length > 1 ? plural(outcomes.length, 'compound') : ''}>
-        ${outcomes.length === 1 && html`<p class="hint">${NOTHING}</p>`}
+        ${found.no_step && html`<p class="trouble run-none" role="note"><${Words} text=${found.no_step} />
+          <span> A partner or a reagent may be missing above.</span></p>`}
         <${List} doc=${doc} run=${run} outcomes=${outcomes} ticked=${ticked} /><//>
         <${TenSeconds} doc=${doc} run=${run} outcomes=${outcomes} />`
         : html`<p class="hint">${busy ? 'working it out' : run.start ? 'Tap what was added, and what may be in the flask comes up here.' : 'Choose what you started from, then what was added.'}</p>`}</div>
   <//>`;
 }
-
-const NOTHING = 'The tables know no step of this start with these reagents. That is not to say that nothing happens: a partner or a reagent may be missing.';
 
 /** Start, partner, reagents. @param {{ doc: CaseDoc, run: Run }} props */
 function Asked({ doc, run }) {

@@ -11,7 +11,7 @@ export interface ReagentCaution {
   reagent: string; grave: boolean; gravest: string; words: string; incompatibilities: string; quench: string; source: string;
 }
 export interface Outcomes {
-  outcomes: Outcome[]; understood: string[]; unknown: string[]; cautions: ReagentCaution[]; no_caution: string[];
+  outcomes: Outcome[]; understood: string[]; unknown: string[]; no_step: string; cautions: ReagentCaution[]; no_caution: string[];
 }
 export interface Reagent { name: string; names: string[]; shelf: string }
 /** Whole conditions, taken with one tap. `partner` says what organic partner they want, "" for none. */

@@ -6,6 +6,7 @@ import { Run } from '../run/run.js';
 import { NameSheet } from './name-sheet.js';
 import { OneStructure } from './one-sheet.js';
 import { PasteStructure } from './paste-sheet.js';
+import { ScanSheet } from './scan-sheet.js';
 
 /** @typedef {import('../../types').CaseDoc} CaseDoc */
 
@@ -16,6 +17,7 @@ const SHEETS = {
   rivals: (doc) => html`<${RivalsSheet} doc=${doc} />`,
   proposals: (doc) => html`<${ProposalsSheet} doc=${doc} />`,
   paste: (doc) => html`<${PasteStructure} doc=${doc} />`,
+  scan: (doc) => html`<${ScanSheet} doc=${doc} />`,
   name: (doc) => html`<${NameSheet} doc=${doc} />`,
   one: (doc, arg) => html`<${OneStructure} doc=${doc} id=${arg} />`,
 };

@@ -30,6 +30,7 @@ export function Structures({ doc }) {
         <a class="button primary" href=${address('case', doc.id, 'structures', 'run')}>What did you run?</a>
         <a class="button" href=${address('case', doc.id, 'structures', 'paste')}>Paste SMILES or CTfile</a>
         <a class="button" href=${address('case', doc.id, 'structures', 'name')}>By name</a>
+        <a class="button" href=${address('case', doc.id, 'structures', 'scan')}>Scan a QR code</a>
       </div>
       ${doc.structures.length > 0 && hasReadings(doc) && html`<a class="button"
         href=${address('case', doc.id, 'structures', 'proposals')}>What the readings themselves say</a>`}

@@ -1,0 +1,2 @@
+// What the app uses of qr.
+export { decodeQR } from 'qr/decode.js';
