@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 import time
-from collections.abc import Iterator, Sequence
+from collections.abc import Callable, Iterator, Sequence
 from dataclasses import asdict
 from typing import Any
 
@@ -41,9 +41,13 @@ class Hunt:
         formula_known: bool = True,
         step: StatedStep | None = None,
     ) -> None:
-        self._structure, self._readings = structure, readings
+        self._structure, self._readings, self.limit = structure, readings, limit
         stated = [rival for _, rival in stated_rivals(step)] if step else []
-        self._search = Search(structure, formula_known, readings if allowed else None, limit, stated=stated)
+        asked = readings if allowed else None
+        self._begin: Callable[[int], Search] = lambda most: Search(
+            structure, formula_known, asked, most, stated=stated
+        )
+        self._search = self._begin(limit)
         self._formulas: dict[str, str] = {}
         self._tried: set[str] = set()
         self._weighed: list[tuple[Rival, Tally]] = []
@@ -59,6 +63,16 @@ class Hunt:
             if time.monotonic() >= until:
                 return
         self.done = True
+
+    def widen(self, limit: int) -> None:
+        """Keep as many as ``limit``, when that is more than before."""
+        if limit > self.limit:
+            self.limit = limit
+            if self._search.small:  # what the enumeration has put up is not ranked anew by moves
+                self._search = self._begin(limit)
+            self._search.widen(limit)
+            self._left = self._run()
+            self._seen, self.done = 0, False
 
     def answer(self) -> dict[str, Any]:
         """All weighed so far, heaviest first, then what waits for its weighing; JSON-ready."""

@@ -33,6 +33,9 @@ def test_look_alikes_are_weighed_kept_and_dismissed(page: Page) -> None:
     expect(page.locator(".rival")).to_have_count(many - 2)
     hand.tap("Bring back 1 dismissed one")
     expect(page.locator(".rival")).to_have_count(many - 1)
+    page.get_by_role("button", name="Look further, for the best 100").click()
+    expect(page.get_by_role("button", name="Look further, for the best 200")).to_be_visible(timeout=120_000)
+    assert page.locator(".rival").count() > many
     hand.back()
     expect(page.locator(".card")).to_have_count(before + 1)
     assert hand.complaints == []

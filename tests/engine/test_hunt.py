@@ -10,7 +10,10 @@ import pytest
 
 from hoodside.engine import call
 from hoodside.errors import InvalidInputError, StructureError
+from hoodside.hunt import Hunt
 from hoodside.methods.hunting import hunt
+from hoodside.molecule import read_structure
+from hoodside.readings.from_json import readings_from_json
 from hoodside.rivals.names import name_of
 
 #: Made up from the predicted spectrum: 15 readings.
@@ -68,6 +71,24 @@ def test_a_hunt_weighs_as_the_check_does() -> None:
     assert {s: weights[s] for s in smiles} == {
         r["smiles"]: (r["weight_db"], r["verdict"]) for r in done["rivals"]
     }
+
+
+@pytest.mark.parametrize("smiles", ["CCOc1ccc(C)cc1", "CCC(=O)OC"])
+def test_a_higher_limit_takes_a_hunt_further_to_the_same_end(smiles: str) -> None:
+    """The second is small enough for all its isomers to be enumerated."""
+    formula = {"CCOc1ccc(C)cc1": "C9H12O", "CCC(=O)OC": "C4H8O2"}[smiles]
+    narrow = Hunt(read_structure(smiles), readings_from_json({"formula": formula}), limit=8)
+    narrow.go_on(60)
+    before = {r["smiles"] for r in narrow.answer()["rivals"]}
+    narrow.widen(25)
+    assert not narrow.done
+    narrow.go_on(60)
+    wide = Hunt(read_structure(smiles), readings_from_json({"formula": formula}), limit=25)
+    wide.go_on(60)
+    after, whole = (narrow.answer(), wide.answer())
+    assert before < {r["smiles"] for r in after["rivals"]}
+    assert {r["smiles"] for r in after["rivals"]} == {r["smiles"] for r in whole["rivals"]}
+    assert (after["complete"], after["note"]) == (whole["complete"], whole["note"])
 
 
 def test_near_are_those_that_take_the_verdict_away() -> None:

@@ -35,12 +35,13 @@ def hunt(
 ) -> dict[str, Any]:
     """Go on with a hunt for about ``slice_ms`` and say how it stands.
 
-    The question itself names the hunt: asked again, it goes on where the last slice ended, until ``done``. An
-    engine that no longer holds the hunt begins it anew.
+    The question itself names the hunt: asked again, it goes on where the last slice ended, until ``done``; a
+    higher ``limit`` takes it further. An engine that no longer holds the hunt begins it anew.
     """
-    question = [structure, readings, limit, formula_known, allowed, step]
-    key = json.dumps(question, sort_keys=True)
-    going = _hunts.pop(key, None) or _begin(structure, readings, limit, formula_known, allowed, step)
+    wanted = integer(limit, "limit", 1, MOST)
+    key = json.dumps([structure, readings, formula_known, allowed, step], sort_keys=True)
+    going = _hunts.pop(key, None) or _begin(structure, readings, wanted, formula_known, allowed, step)
+    going.widen(wanted)
     going.go_on(integer(slice_ms, "slice_ms", LEAST_MS, MOST_MS) / 1000)
     _hunts[key] = going
     if len(_hunts) > _KEPT:
@@ -49,7 +50,7 @@ def hunt(
 
 
 def _begin(
-    structure: object, readings: object, limit: object, formula_known: object, allowed: object, step: object
+    structure: object, readings: object, limit: int, formula_known: object, allowed: object, step: object
 ) -> Hunt:
     given = readings if readings is not None else {}
     if not isinstance(given, dict):
@@ -58,7 +59,7 @@ def _begin(
         structure_of(short_text(structure, "structure")),
         readings_from_json(given),
         allowed=flag(allowed, "allowed"),
-        limit=integer(limit, "limit", 1, MOST),
+        limit=limit,
         formula_known=flag(formula_known, "formula_known"),
         step=step_from_json(step),
     )

@@ -106,6 +106,13 @@ class Growth:
             self._take(*heapq.heappop(self._heap))
             yield
 
+    def widen(self, by: int) -> None:
+        """Keep so many more; ``run`` then goes on."""
+        self._limit += by
+        best = heapq.nsmallest(self._limit, (cost for cost, _ in self.found))
+        self._dearest = [-cost for cost in best]
+        heapq.heapify(self._dearest)
+
     @property
     def frontier(self) -> float:
         """What is found from here on costs no less."""

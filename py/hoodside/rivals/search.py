@@ -80,6 +80,7 @@ class Search:
     """Growth by moves, then, where the formula is small, whatever isomers are left.
 
     Attributes:
+        small: all isomers of the formula are enumerated; moves then serve to rank them.
         complete: every sensible isomer was found; known when ``run`` has ended, as is ``note``.
     """
 
@@ -93,9 +94,9 @@ class Search:
         stated: Sequence[Rival] = (),
     ) -> None:
         self._structure, self._limit = structure, limit
-        self._small = formula_known and _is_small(structure)
-        self._steps = STEPS + _STEPS_PER_RIVAL * limit if steps is None else steps
-        budget = min(self._steps, _STEPS_WHEN_SMALL) if self._small else self._steps
+        self.small = formula_known and _is_small(structure)
+        self._steps = _steps(limit) if steps is None else steps
+        budget = min(self._steps, _STEPS_WHEN_SMALL) if self.small else self._steps
         keep = early_test(readings) if readings else lambda smiles: True
         moves = steps_from if formula_known else moves_and_swaps
         self._growth = Growth(structure, limit, budget, keep, moves)
@@ -105,6 +106,13 @@ class Search:
         self._others = sum(formula_of(read_structure(rival.smiles)) != mine for _, rival in self.found)
         self.complete = False
         self.note = ""
+
+    def widen(self, limit: int) -> None:
+        """Keep as many as ``limit``; ``run`` then goes on from where it ended. Not for a small formula."""
+        if limit > self._limit:
+            self._growth.widen(limit - self._limit)
+            self._limit, self._steps = limit, _steps(limit)
+            self._growth.budget = max(self._growth.budget, self._steps)
 
     @property
     def found(self) -> list[tuple[float, Rival]]:
@@ -139,7 +147,7 @@ class Search:
     def run(self) -> Iterator[None]:
         """Works in small pieces, so that a caller may do other things between them or stop."""
         yield from self._growth.run()
-        if self._small:
+        if self.small:
             isomers = self._isomers()
             if isomers is not None:
                 yield from self._add_all(isomers)
@@ -184,6 +192,10 @@ class Search:
             self.note = (
                 f"{formula} has {sensible} sensible isomers; the {self._limit} most plausible are kept."
             )
+
+
+def _steps(limit: int) -> int:
+    return STEPS + _STEPS_PER_RIVAL * limit
 
 
 def _is_small(structure: Structure) -> bool:

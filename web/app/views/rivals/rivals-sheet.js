@@ -10,7 +10,7 @@ import { changeWithUndo } from '../../state/cases.js';
 import { currentCheck } from '../../state/check.js';
 import { newId } from '../../state/document.js';
 import { ask } from '../../state/engine.js';
-import { hunt, huntQuestion, hunts, LIMIT, stopHunt } from '../../state/rivals.js';
+import { hunt, huntFurther, huntQuestion, hunts, stopHunt, wider } from '../../state/rivals.js';
 import { address } from '../../state/route.js';
 import { plural, signed } from '../../words/numbers.js';
 import { nameOf } from '../../words/structures.js';
@@ -50,7 +50,8 @@ export function RivalsSheet({ doc }) {
     ${current && html`<${Working} since=${current.since} words=${progress(current)} stop=${() => stopHunt(doc.id, true)} />
       <${Trouble} fault=${current.fault} />
       ${!current.since && (current.stopped || current.fault) && html`<button type="button" class="button" onClick=${goOn}>${current.stopped ? `Stopped at ${current.weighed} weighed. Go on` : 'Try again'}</button>`}
-      <div class="rivals-found" aria-busy=${String(current.since > 0)}><${Found} doc=${doc} name=${name} now=${current} /></div>`}
+      <div class="rivals-found" aria-busy=${String(current.since > 0)}><${Found} doc=${doc} name=${name} now=${current} /></div>
+      ${wider(current) > 0 && question && html`<button type="button" class="button" onClick=${() => huntFurther(doc.id, question, wider(current))}>Look further, for the best ${wider(current)}</button>`}`}
   <//>`;
 }
 
@@ -62,7 +63,7 @@ function subjectOf(doc) {
 }
 
 /** How far the search has come. @param {Hunt} now */
-const progress = ({ weighed, looked_at: looked }) => `${weighed} of up to ${LIMIT} weighed, ${looked} looked at`;
+const progress = ({ weighed, limit, looked_at: looked }) => `${weighed} of up to ${limit} weighed, ${looked} looked at`;
 
 /** @param {{ doc: CaseDoc, name: string, now: Hunt }} props */
 function Found({ doc, name, now }) {

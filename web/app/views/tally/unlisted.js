@@ -39,8 +39,9 @@ function lookAlikes(near, best, name) {
   const gap = Math.round((near[0]?.weight_db ?? 0) - best.weight_db);
   const one = near.length === 1;
   const names = one ? 'Rival 1, put up unasked,' : `Rivals 1 to ${near.length}, put up unasked,`;
-  if (gap > 0) return `${names} ${one ? 'suits' : 'suit'} the readings better than ${name}, ${one ? '' : 'the best '}by ${gap} decibans.`;
-  return `${names} ${one ? 'comes' : 'come'} as near as ${name}: the readings do not tell them apart.`;
+  const todo = `Keep or dismiss ${one ? 'it' : 'them'} in the list of what else would fit.`;
+  if (gap > 0) return `${names} ${one ? 'suits' : 'suit'} the readings better than ${name}, ${one ? '' : 'the best '}by ${gap} decibans. ${todo}`;
+  return `${names} ${one ? 'comes' : 'come'} as near as ${name}: the readings do not tell them apart. ${todo}`;
 }
 
 /** Signals that nothing standing explains and that have no name of their own (water, a solvent). @param {Weighed[]} standing */
