@@ -77,8 +77,9 @@ def headed_names() -> Iterator[ReagentName]:
 
 def _spans(plain: str) -> Iterator[tuple[int, int, ReagentName]]:
     """Everything that could be a name, listed ones before others of the same length."""
-    for pattern, found in _patterns():
-        yield from ((m.start(), m.end(), found) for m in pattern.finditer(plain))
+    for name, found in _listed().items():
+        if name in plain:
+            yield from ((start, start + len(name), found) for start in _places(plain, name))
     for start in (m.start() for m in re.finditer(r"(?<![a-z0-9])[a-z0-9(*]", plain)):
         yield from _headed(plain, start)
     for start, end in _pieces(plain):
@@ -86,6 +87,20 @@ def _spans(plain: str) -> Iterator[tuple[int, int, ReagentName]]:
         if named is not None and named.kind not in _NO_PARTNERS:
             partner = ReagentName(named.name, frozenset(("partner",)), "", named.smiles, named=True)
             yield start, end, partner
+
+
+def _places(plain: str, name: str) -> Iterator[int]:
+    """Where a name stands by itself, no letter or figure beside it."""
+    start = plain.find(name)
+    while start >= 0:
+        before, after = plain[start - 1 : start], plain[start + len(name) : start + len(name) + 1]
+        if not (_is_plain(before) or _is_plain(after)):
+            yield start
+        start = plain.find(name, start + 1)
+
+
+def _is_plain(letter: str) -> bool:
+    return letter.isascii() and letter.isalnum()
 
 
 def _headed(plain: str, start: int) -> Iterator[tuple[int, int, ReagentName]]:
@@ -152,14 +167,6 @@ def _listed() -> dict[str, ReagentName]:
             read = ReagentName(name, frozenset(row["roles"].split()), row["caution"], row["brings"])
             found.setdefault(in_plain(name), read)
     return found
-
-
-@cache
-def _patterns() -> tuple[tuple[re.Pattern[str], ReagentName], ...]:
-    return tuple(
-        (re.compile(rf"(?<![a-z0-9]){re.escape(plain)}(?![a-z0-9])"), found)
-        for plain, found in _listed().items()
-    )
 
 
 @cache

@@ -46,7 +46,8 @@ def _partner_roles(smiles: str) -> frozenset[str]:
 def _known_for(name: str, roles: frozenset[str]) -> str:
     """ "Known for NaN3: azide substitution, epoxide opening by azide." """
     fitting = [rule for rule in rules() if rule.role == "product" and _wants(rule, roles)]
-    steps = list(dict.fromkeys(rule.name for rule in sorted(fitting, key=lambda rule: (len(rule.needs), rule.rank))))
+    fitting.sort(key=lambda rule: (len(rule.needs), rule.rank))  # what asks for little else first
+    steps = list(dict.fromkeys(rule.name for rule in fitting))
     if not steps:
         return ""
     more = f" and {len(steps) - _LISTED} more" if len(steps) > _LISTED else ""

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import re
 from dataclasses import dataclass
+from functools import lru_cache
 
 from hoodside.reagent_names import ReagentName, read_names
 
@@ -50,6 +51,7 @@ def stages(text: str) -> list[str]:
     return [part for part in parts if part]
 
 
+@lru_cache(maxsize=64)
 def read_reagents(text: str) -> Reagents:
     """Find every known reagent name in a text, longest names first."""
     found, unknown = read_names(text)

@@ -124,11 +124,9 @@ def partner_roles(partner: Structure | None) -> set[str]:
     """What the partner can act as, as "partner:<key>"."""
     if partner is None:
         return set()
-    found = set()
-    for key, patterns in PARTNERS.items():
-        if any(partner.matches(pattern) for pattern in patterns.split("|")):
-            found.add(f"partner:{key}")
-    return found
+    asked = [(key, pattern) for key, patterns in PARTNERS.items() for pattern in patterns.split("|")]
+    found = partner.match_all([pattern for _, pattern in asked])
+    return {f"partner:{key}" for (key, _), matches in zip(asked, found, strict=True) if matches}
 
 
 def _met(rule: Rule, roles: set[str]) -> bool:
