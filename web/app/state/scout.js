@@ -1,4 +1,5 @@
 import { effect, signal } from '@preact/signals';
+import { heavyAtoms } from '../words/structures.js';
 import { leadAt } from '../words/verdict.js';
 import { checkingSince, current, currentCheck } from './check.js';
 import { call, engineState } from './engine.js';
@@ -15,6 +16,9 @@ const REST_MS = 1000;
 /** More are kept than are put up, so that others follow those waved away. */
 const KEPT = 8;
 
+/** Look-alikes of larger structures are sought only when asked for: a single one takes the engine seconds. */
+const LARGEST = 60;
+
 /** Where a verdict is on the screen. */
 const SHOWING = ['structures', 'tally', 'next'];
 
@@ -27,7 +31,7 @@ export function scoutQuestion(doc) {
   const { found, fresh } = currentCheck.value;
   const id = found && fresh ? found.order[leadAt(doc, found)] : '';
   const subject = doc.structures.find((structure) => structure.id === id);
-  return subject ? { ...huntQuestion(doc, subject.smiles, true), formula_known: true } : null;
+  return subject && heavyAtoms(subject.formula) <= LARGEST ? { ...huntQuestion(doc, subject.smiles, true), formula_known: true } : null;
 }
 
 /** How many look-alikes of the structure of the verdict were weighed for the case as it stands, 0 while none have been.

@@ -24,3 +24,7 @@ export function structureName(doc, found, at) {
 
 /** Look-alikes are numbered; what a step has left goes by its part in it. @param {import('../types').Weighed} candidate */
 export const isLookAlike = ({ index, name }) => index === null && /^rival \d/.test(name);
+
+/** Atoms other than hydrogen. @param {string} formula as the engine writes it */
+export const heavyAtoms = (formula) =>
+  [...formula.matchAll(/([A-Z][a-z]?)(\d*)/g)].reduce((sum, [, symbol, n]) => sum + (symbol === 'H' ? 0 : Number(n || 1)), 0);
