@@ -3,6 +3,7 @@ import { useState } from 'preact/hooks';
 import { Formula, Words } from '../../components/chem.js';
 import { Drawing } from '../../components/drawing.js';
 import { Icon } from '../../components/icon.js';
+import { heavyAtoms } from '../../words/structures.js';
 import { Changes } from './changes.js';
 
 /** @typedef {import('./types').Outcome} Outcome */
@@ -11,9 +12,6 @@ import { Changes } from './changes.js';
 /** Small companions (water, methanol, CO2 ...) are not proposed as structures of the sample. */
 const SMALLEST = 4;
 const PRODUCTS_PROPOSED = 3;
-
-/** @param {string} formula */
-const heavyAtoms = (formula) => [...formula.matchAll(/([A-Z][a-z]?)(\d*)/g)].reduce((sum, [, symbol, n]) => sum + (symbol === 'H' ? 0 : Number(n || 1)), 0);
 
 /** What is ticked before anybody has: the likely products, the first of what else may be there, and the start.
  * @param {Outcome[]} outcomes @param {number} at */
