@@ -10,8 +10,10 @@ from hoodside.rivals.outcomes.rules import Rule, partner_roles, rules
 #: Roles that help a step along but call for none themselves.
 _BYSTANDERS = frozenset(
     {"solvent", "quench", "drying", "hot", "cold", "water", "excess", "twice", "ligand", "weak", "partner"}
-    | {"base", "acid", "alcohol", "dmf", "acetone", "chloroform", "tert_butanol"}
+    | {"base", "acid", "alcohol", "dmf", "acetone", "chloroform", "tert_butanol", "methanol", "ethanol"}
+    | {"butanol", "strong_base", "bulky_base"}
 )
+_PARTNER = frozenset({"partner"})
 _NAMED, _LISTED = 3, 6
 
 
@@ -20,7 +22,7 @@ def why_nothing(read: Reagents, partner: Structure | None) -> str:
     told = []
     if read.unknown:
         told.append(f"The table does not know {_and(read.unknown)}.")
-    active = [f for f in read.found if f.roles - _BYSTANDERS or f.brings] or list(read.found)
+    active = [f for f in read.found if f.roles - _BYSTANDERS or f.roles >= _PARTNER] or list(read.found)
     names = list(dict.fromkeys(f.name for f in active))[:_NAMED]
     if partner is not None:
         names.append("this partner")
@@ -46,12 +48,18 @@ def _partner_roles(smiles: str) -> frozenset[str]:
 def _known_for(name: str, roles: frozenset[str]) -> str:
     """ "Known for NaN3: azide substitution, epoxide opening by azide." """
     fitting = [rule for rule in rules() if rule.role == "product" and _wants(rule, roles)]
-    fitting.sort(key=lambda rule: (len(rule.needs), rule.rank))  # what asks for little else first
+    fitting.sort(key=_familiar)
     steps = list(dict.fromkeys(rule.name for rule in fitting))
     if not steps:
         return ""
-    more = f" and {len(steps) - _LISTED} more" if len(steps) > _LISTED else ""
-    return f"Known for {name}: {', '.join(steps[:_LISTED])}{more}."
+    more = f"; and {len(steps) - _LISTED} more" if len(steps) > _LISTED else ""
+    return f"Known for {name}: {'; '.join(steps[:_LISTED])}{more}."
+
+
+def _familiar(rule: Rule) -> tuple[int, bool, int]:
+    """What asks for little else comes first, and what has a name of its own in the trade."""
+    asked = sum(not choices[0].startswith("!") for choices in rule.needs)
+    return asked, not rule.kinds, rule.rank
 
 
 def _wants(rule: Rule, roles: frozenset[str]) -> bool:

@@ -46,13 +46,16 @@ export function RunSheet({ doc }) {
     <div class="run-found ${busy ? 'stale' : ''}" aria-busy=${String(busy)} aria-live="polite">
       <${Trouble} fault=${fault ?? refused} />
       ${found ? html`<${Section} title="What may be in the flask" aside=${outcomes.length > 1 ? plural(outcomes.length, 'compound') : ''}>
-        ${found.no_step && html`<p class="trouble run-none" role="note"><${Words} text=${found.no_step} />
-          <span> A partner or a reagent may be missing above.</span></p>`}
+        ${found.no_step && html`<p class="trouble run-none" role="note"><${Words} text=${firstSentence(found.no_step)} />
+          <span> <${Words} text=${found.no_step.slice(firstSentence(found.no_step).length)} /> A partner or a reagent may be missing.</span></p>`}
         <${List} doc=${doc} run=${run} outcomes=${outcomes} ticked=${ticked} /><//>
         <${TenSeconds} doc=${doc} run=${run} outcomes=${outcomes} />`
         : html`<p class="hint">${busy ? 'working it out' : run.start ? 'Tap what was added, and what may be in the flask comes up here.' : 'Choose what you started from, then what was added.'}</p>`}</div>
   <//>`;
 }
+
+/** @param {string} text */
+const firstSentence = (text) => text.match(/^.*?\.(?= [A-Z]|$)/)?.[0] ?? text;
 
 /** Start, partner, reagents. @param {{ doc: CaseDoc, run: Run }} props */
 function Asked({ doc, run }) {
