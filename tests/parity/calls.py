@@ -125,3 +125,10 @@ def redrawn(source: str, step: str, arguments: dict[str, Any]) -> str:
 
     asked = {"structure": source, "step": step, "arguments": arguments}
     return handle("edit", json.dumps(asked))
+
+
+def hunted(smiles: str, readings: dict[str, Any], limit: int) -> dict[str, Any]:
+    """A whole hunt for look-alikes."""
+    from hoodside.methods.hunting import hunt
+
+    return hunt(smiles, readings, limit=limit, slice_ms=60_000)

@@ -10,7 +10,7 @@ from collections import defaultdict
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
 from itertools import pairwise
-from math import comb
+from math import comb, fsum
 
 from hoodside.errors import InvalidInputError
 from hoodside.predict.coupling.model import Coupling
@@ -137,7 +137,7 @@ def _of_block(block: list[Coupling], n: int) -> list[Splitting]:
     if all(c.pairs % n == 0 for c in block) and len({c.label for c in block}) == len(block):
         return [Splitting(c.hz, c.pairs // n, c.sd) for c in block]
     total = sum(c.pairs for c in block)
-    mean = sum(c.hz * c.sign * c.pairs for c in block) / total
+    mean = fsum(c.hz * c.sign * c.pairs for c in block) / total
     return [Splitting(abs(mean), round(total / n), max(c.sd for c in block))]
 
 
@@ -153,7 +153,7 @@ def merged(parts: Sequence[Splitting], within: float = MERGED) -> tuple[Splittin
 
 
 def _mean(parts: list[Splitting]) -> float:
-    return sum(s.hz * s.count for s in parts) / sum(s.count for s in parts)
+    return fsum(s.hz * s.count for s in parts) / sum(s.count for s in parts)
 
 
 def name_of(parts: Sequence[Splitting]) -> str:

@@ -6,6 +6,8 @@ the effects are those of the monosubstituted benzenes in facts/coupling_groups.c
 
 from __future__ import annotations
 
+from math import fsum
+
 from hoodside.molecule import Structure
 from hoodside.predict.coupling.groups import GroupKind
 from hoodside.predict.coupling.model import Estimate
@@ -47,12 +49,12 @@ def _group(
 def _estimate(groups: list[GroupKind | None], i: int, apart: int) -> Estimate:
     turned = [groups[(i + k) % 6] for k in range(6)]
     if apart == 1:
-        hz = _ORTHO + sum(g.ortho_23 - _ORTHO for g in (turned[2], turned[5]) if g)
-        hz += sum(g.ortho_34 - _ORTHO for g in (turned[3], turned[4]) if g)
+        hz = _ORTHO + fsum(g.ortho_23 - _ORTHO for g in (turned[2], turned[5]) if g)
+        hz += fsum(g.ortho_34 - _ORTHO for g in (turned[3], turned[4]) if g)
         return Estimate(hz, _SD, "benzene ortho", _SOURCE)
     if apart == 2:
         across = turned[1]
         hz = _META + (across.meta_26 - _META if across else 0.0)
-        hz += sum(g.meta_24 - _META for g in (turned[3], turned[5]) if g)
+        hz += fsum(g.meta_24 - _META for g in (turned[3], turned[5]) if g)
         return Estimate(hz, _SD, "benzene meta", _SOURCE)
     return Estimate(_PARA, _SD, "benzene para", _SOURCE)

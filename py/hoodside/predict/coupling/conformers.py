@@ -8,7 +8,7 @@ from __future__ import annotations
 
 from dataclasses import dataclass
 from functools import cache
-from math import cos, exp, radians
+from math import cos, exp, fsum, radians
 
 from hoodside.molecule import Structure
 from hoodside.predict.coupling.groups import GroupKind, gauche_energy, kinds_of_atoms
@@ -97,7 +97,7 @@ class Conformers:
         return tuple(Torsion(w, d) for w, d in zip(weights, (60.0, 180.0, 300.0), strict=True))
 
     def _gauche(self, front: dict[Point, float], rear: dict[Point, float], degrees: float) -> float:
-        return sum(
+        return fsum(
             gauche_energy(self.kinds[p].bulk, self.kinds[q].bulk)
             for p, at in front.items()
             for q, behind in rear.items()
@@ -154,7 +154,7 @@ class Conformers:
         for k, atom in enumerate(ring):
             here = self._axial_groups(ring, k, angles)
             axial.append(here)
-            total += sum(self._axial_cost(ring, atom, point) for point, _ in here)
+            total += fsum(self._axial_cost(ring, atom, point) for point, _ in here)
         for k in range(len(ring)):
             total += _SYN_DIAXIAL * sum(
                 1 for _, s in axial[k] for _, t in axial[(k + 2) % len(ring)] if s * t > 0
@@ -214,7 +214,7 @@ def _wrapped(angle: float) -> float:
 def _boltzmann(energies: list[float]) -> list[float]:
     low = min(energies)
     weights = [exp(-(e - low) / _RT) for e in energies]
-    total = sum(weights)
+    total = fsum(weights)
     return [w / total for w in weights]
 
 

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from math import fsum
+
 from hoodside.molecule import Structure
 from hoodside.predict.coupling import karplus
 from hoodside.predict.coupling.conformers import BondShape, Conformers
@@ -66,7 +68,7 @@ class SaturatedBonds:
             *self._signed(shape.rear, there, -1),
         ]
         between = shape.rear[there] - shape.front[here]
-        hz = sum(t.weight * karplus.vicinal(t.degrees + between, substituents) for t in shape.torsions)
+        hz = fsum(t.weight * karplus.vicinal(t.degrees + between, substituents) for t in shape.torsions)
         label = f"vicinal, {shape.ring}-membered ring" if shape.ring else "vicinal, staggered rotamers"
         return Estimate(hz, _SD_RING if shape.ring else _SD_CHAIN, label, karplus.SOURCE)
 

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from math import fsum
+
 from hoodside.molecule import Bond, Structure
 from hoodside.predict.coupling.benzene import benzene_couplings
 from hoodside.predict.coupling.model import BARE, Estimate, Site, SiteCoupling
@@ -121,7 +123,7 @@ class _Finder:
         pair = [r for r in (rules.best("cis"), rules.best("trans")) if r is not None]
         if not pair:
             return None
-        hz = sum(r.estimate.hz for r in pair) / len(pair)
+        hz = fsum(r.estimate.hz for r in pair) / len(pair)
         if len(pair) == 2 and pair[0] is pair[1]:
             return pair[0], pair[0].estimate
         e = pair[0].estimate
