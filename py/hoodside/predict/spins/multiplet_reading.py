@@ -10,7 +10,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator, Sequence
 from dataclasses import dataclass
-from itertools import pairwise
+from itertools import groupby, pairwise
 from math import comb, isfinite, log2
 
 from hoodside.errors import InvalidInputError
@@ -22,7 +22,9 @@ from hoodside.predict.spins.least_squares import solve_least_squares
 MOST_LINES, MOST_PARTNERS = 40, 8
 #: Hz: standard deviation of a printed position; furthest a component may lie from its line, and the same
 #: for sums of couplings not yet refined, whose errors add up.
-_POSITION_SD, _REACH, _LOOSE = 0.2, 0.9, 1.4
+_POSITION_SD, _REACH, _LOOSE = 0.2, 1.2, 1.8
+#: Standard deviation of a position over that of the distance between lines printed as one.
+_CLOSENESS = 0.4
 #: Relative and absolute standard deviation of a height (share of all).
 _HEIGHT_SD, _HEIGHT_FLOOR = 0.3, 0.01
 #: Cost of one more coupling, in units of chi squared; and what equating two couplings may cost.
@@ -109,7 +111,7 @@ def _checked(hz: Sequence[float], heights: Sequence[float] | None) -> tuple[list
 
 def _readings(lines: list[float], heights: list[float] | None) -> Iterator[MultipletReading]:
     for couplings in _candidate_sets(lines, heights):
-        fitted = _fitted(lines, heights, [Splitting(j, 1) for j in couplings])
+        fitted = _fitted(lines, heights, [Splitting(j, len(list(same))) for j, same in groupby(couplings)])
         if fitted is not None:
             yield _simplified(lines, heights, fitted)
 
@@ -215,8 +217,13 @@ def _fitted(
         if given is None:
             return None
         # Solved for the change, so that couplings the lines cannot tell apart stay together.
-        rows = [[1.0, *means] for means, _ in given]
-        solved = solve_least_squares(rows, _away(lines, given, parts, centre))
+        rows = [[1.0, *line.means] for line in given]
+        away = _away(lines, given, parts, centre)
+        for line in given:
+            for apart in line.gaps:
+                rows.append([0.0, *(_CLOSENESS * step for step in apart)])
+                away.append(-_CLOSENESS * _dot(apart, parts))
+        solved = solve_least_squares(rows, away)
         if solved is None:
             return None
         centre += solved[0]
@@ -230,16 +237,13 @@ def _fitted(
 
 def _assigned(
     lines: list[float], parts: Sequence[Splitting], centre: float, reach: float
-) -> list[tuple[list[float], float]] | None:
-    """Per line, the mean of d(position)/dJ over its components, and their share of the intensity.
+) -> list[_Line] | None:
+    """What the components under every line say.
 
     Components go to the lines in order, every line taking at least one; None when that needs a step of more
     than ``reach`` Hz.
     """
-    found = sorted(
-        (centre + sum(m * s.hz for m, s in zip(steps, parts, strict=True)), steps, share)
-        for steps, share in _components(parts)
-    )
+    found = sorted((centre + _dot(steps, parts), steps, share) for steps, share in _components(parts))
     if len(found) < len(lines):
         return None
     gathered: list[list[tuple[tuple[float, ...], float]]] = [[] for _ in lines]
@@ -247,7 +251,7 @@ def _assigned(
         if abs(lines[k] - at) > reach:
             return None
         gathered[k].append((steps, share))
-    return [_mean(entries, len(parts)) for entries in gathered]
+    return [_line(entries, len(parts)) for entries in gathered]
 
 
 def _in_order(lines: list[float], components: list[float]) -> list[int]:
@@ -267,9 +271,27 @@ def _in_order(lines: list[float], components: list[float]) -> list[int]:
     return path[::-1]
 
 
-def _mean(entries: list[tuple[tuple[float, ...], float]], size: int) -> tuple[list[float], float]:
+@dataclass(frozen=True, slots=True)
+class _Line:
+    """A printed line: d(position)/dJ of its middle and of gaps between its components, and its intensity."""
+
+    means: list[float]
+    gaps: list[tuple[float, ...]]
+    share: float
+
+
+def _line(entries: list[tuple[tuple[float, ...], float]], size: int) -> _Line:
     total = sum(share for _, share in entries)
-    return [sum(steps[k] * share for steps, share in entries) / total for k in range(size)], total
+    means = [sum(steps[k] * share for steps, share in entries) / total for k in range(size)]
+    gaps = [
+        tuple(b - a for a, b in zip(first, second, strict=True))
+        for (first, _), (second, _) in pairwise(entries)
+    ]
+    return _Line(means, gaps, total)
+
+
+def _dot(steps: Sequence[float], parts: Sequence[Splitting]) -> float:
+    return sum(m * s.hz for m, s in zip(steps, parts, strict=True))
 
 
 def _components(parts: Sequence[Splitting]) -> list[tuple[tuple[float, ...], float]]:
@@ -284,13 +306,10 @@ def _components(parts: Sequence[Splitting]) -> list[tuple[tuple[float, ...], flo
 
 
 def _away(
-    lines: list[float], given: list[tuple[list[float], float]], parts: Sequence[Splitting], centre: float
+    lines: list[float], given: Sequence[_Line], parts: Sequence[Splitting], centre: float
 ) -> list[float]:
     """Distance in Hz of each line from the middle of its components."""
-    return [
-        x - centre - sum(m * s.hz for m, s in zip(means, parts, strict=True))
-        for x, (means, _) in zip(lines, given, strict=True)
-    ]
+    return [x - centre - _dot(line.means, parts) for x, line in zip(lines, given, strict=True)]
 
 
 def _judged(
@@ -301,8 +320,11 @@ def _judged(
         return None
     away = _away(lines, given, parts, centre)
     score = sum((d / _POSITION_SD) ** 2 for d in away) + _PER_COUPLING * len(parts)
+    score += sum(
+        (_CLOSENESS * _dot(apart, parts) / _POSITION_SD) ** 2 for line in given for apart in line.gaps
+    )
     if heights is not None:
-        score += _height_chi(heights, [share for _, share in given])
+        score += _height_chi(heights, [line.share for line in given])
     rms = (sum(d * d for d in away) / len(lines)) ** 0.5
     return MultipletReading(name_of(parts), tuple(parts), centre, rms, score)
 
