@@ -30,6 +30,8 @@ _STEPS_PER_ROUND = 12
 #: Step of the numerical derivative, and change of the parameters that counts as none, Hz.
 _NUDGE, _SETTLED = 0.02, 0.002
 _FIRST_DAMPING, _MOST_DAMPING = 1e-2, 1e6
+#: Sums of squares up to this much larger are as good a fit.
+_AS_GOOD = 1.05
 #: Most free parameters.
 MOST_FREE = 14
 #: Share of the strongest line that counts when lines are compared.
@@ -87,7 +89,9 @@ def fit_system(
     predicted, errors = values, [0.0]
     for width, hold in _ROUNDS:
         difference = _difference(system_of, seen, width)
-        values, errors = _round(values, _held(difference, predicted, spreads, hold))
+        held = _held(difference, predicted, spreads, hold)
+        values, errors = _round(values, held)
+    values, errors = _signed_as_predicted(values, errors, predicted, len(shifts), held)
     found = system_of(values)
     lines = simulate(found)
     return Fit(found, lines, _distance(seen, lines), tuple(errors))
@@ -182,6 +186,27 @@ def _round(
         if moved < _SETTLED:
             break
     return values, _standard_errors(normal, now)
+
+
+def _signed_as_predicted(
+    values: list[float],
+    errors: list[float],
+    predicted: Sequence[float],
+    first: int,
+    difference: Callable[[Sequence[float]], list[float]],
+) -> tuple[list[float], list[float]]:
+    """Couplings (from index ``first`` on) turned to the predicted sign where the lines do not tell the sign.
+
+    In AA'XX' the lines stay where they are when one of J(AA'), J(XX') changes its sign.
+    """
+    for k in range(first, len(values)):
+        if values[k] * predicted[k] < 0:
+            turned = [*values[:k], -values[k], *values[k + 1 :]]
+            trial, trial_errors = _round(turned, difference)
+            no_worse = _squares(difference(trial)) <= _AS_GOOD * _squares(difference(values))
+            if no_worse and trial[k] * predicted[k] > 0:
+                values, errors = trial, trial_errors
+    return values, errors
 
 
 def _step(
