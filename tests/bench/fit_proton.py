@@ -24,7 +24,7 @@ from scipy.stats import t as student  # noqa: E402
 
 from bench.proton_cases import Compound, Row, assigned_rows, load_compounds  # noqa: E402
 from bench.proton_matching import match  # noqa: E402
-from bench.proton_ridge import fit, trust_of  # noqa: E402
+from bench.ridge import fit, trust_of  # noqa: E402
 from hoodside.predict.learned import LearnedTable, in_place_of  # noqa: E402
 from hoodside.predict.proton.correction import DEGREES_OF_FREEDOM, USUAL_HALF_SPLIT  # noqa: E402
 from hoodside.predict.proton.predict import pairs_of, refinements  # noqa: E402
