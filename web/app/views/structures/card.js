@@ -44,6 +44,10 @@ export function StructureCard({ doc, structure }) {
   </a></li>`;
 }
 
+/** How a rival was reached, without what its name says already: "the start of the step, unchanged".
+ * @param {string} name @param {string} how */
+const said = (name, how) => (how.startsWith(name) ? how.split(', ').slice(1).join(', ') : how);
+
 /** A structure the program put up itself; dashed. @param {{ doc: CaseDoc, candidate: import('../../types').Weighed, at: number }} props */
 export function RivalCard({ doc, candidate, at }) {
   const { found } = currentCheck.value;
@@ -58,7 +62,7 @@ export function RivalCard({ doc, candidate, at }) {
     aria-label="Take ${name} over as a structure">
     <${Drawing} structure=${candidate.smiles} label=${name} width=${150} height=${112} class="drawing-card" />
     <span class="card-foot"><span class="card-name">${name}
-      <span class="card-formula card-how"><${Words} text=${candidate.how.join('; ')} /></span></span><${Sign} verdict=${candidate.verdict}
+      <span class="card-formula"><${Words} text=${said(name, candidate.how.join('; '))} /></span></span><${Sign} verdict=${candidate.verdict}
       size=${22} /></span>
   </button></li>`;
 }

@@ -14,7 +14,7 @@ import { readingLabel } from './row-data.js';
  * @param {{ doc: CaseDoc, found: Checked }} props */
 export function Unlisted({ doc, found }) {
   const doubt = doubtOf(doc, found);
-  if (!doubt) return html`<p class="whisper" role="status">${scouting.value ? 'looking for what else would fit' : ''}</p>`;
+  if (!doubt) return scouting.value ? html`<p class="whisper" role="status">looking for what else would fit</p>` : null;
   return html`<div class="unlisted" role="note"><p><b>The right structure may not be on the list.</b> <${Words} text=${doubt} /></p>
     <div class="two-up"><a class="button" href=${address('case', doc.id, 'structures', 'rivals')}>What else would fit?</a>
       ${hasReadings(doc) && html`<a class="button" href=${address('case', doc.id, 'structures', 'proposals')}>What do the readings say?</a>`}</div></div>`;
