@@ -7,6 +7,7 @@ from dataclasses import dataclass
 from functools import cache
 
 from hoodside.facts import load_table
+from hoodside.ring_names import RULES, ring_name
 
 _IGNORED = re.compile(r"[\s\-‐–,.'’′()\[\]]+")
 _WORD = re.compile(r"[^\s\-,.'’()\[\]]+")
@@ -51,8 +52,13 @@ def find_names(query: str, limit: int = 20) -> list[NamedStructure]:
 
 
 def exact_name(text: str) -> NamedStructure | None:
-    """The structure that bears exactly this name (capitals, hyphens and spaces aside), or None."""
-    return _by_key().get(_key(text))
+    """The structure that bears exactly this name (capitals, hyphens and spaces aside), or None.
+
+    Substituted benzenes are read by their locants where the table has no such name.
+    """
+    listed = _by_key().get(_key(text))
+    smiles = None if listed else ring_name(text)
+    return NamedStructure(text.strip(), smiles, "", "systematic name", RULES) if smiles else listed
 
 
 @cache

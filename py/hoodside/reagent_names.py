@@ -9,10 +9,12 @@ from functools import cache
 
 from hoodside.facts import load_table
 from hoodside.names import exact_name
+from hoodside.ring_names import ring_group
 
 #: Kinds of named compounds that stand by rather than react.
 _NO_PARTNERS = ("solvent",)
 _PIECES = re.compile(r"(?:[^,;/]|(?<=[\dn]),(?=[\dn]))+")  # no piece ends within 2,2- or N,N-
+_BETWEEN = re.compile(r",(?!\d)|(?<!\d),|[;/+\0]|\band\b|\bin\b|\bwith\b|\bthen\b")
 _LINKS = re.compile(r"\s(?:and|in|with|then)\s")
 #: What may go before or behind a name in a piece: amounts, strengths, times.
 _AMOUNT = re.compile(
@@ -20,6 +22,9 @@ _AMOUNT = re.compile(
     r"|cat|catalytic|rt|overnight|dry|anhyd|anhydrous|conc|concd|concentrated|dil|aq|solution|days?)(?![a-z])\.?\)?"
 )
 _LETTERS = re.compile(r"[a-z]{2}")
+_RINGS = re.compile(r"phenyl|benzyl")
+_LOCANT_STARTS = frozenset("23456omp")
+_LONGEST_GROUP = 60
 _GLUE = ("", " ", "-")
 
 
@@ -121,6 +126,10 @@ def _groups_at(plain: str, at: int) -> Iterator[str]:
     for length in range(min(longest, len(plain) - at), 0, -1):
         if plain[at : at + length] in _groups():
             yield plain[at : at + length]
+    if at < len(plain) and plain[at] in _LOCANT_STARTS:  # 3,4-dimethoxyphenyl, p-chlorobenzyl
+        for ring in _RINGS.finditer(plain, at, at + _LONGEST_GROUP):
+            if ring_group(plain[at : ring.end()]):
+                yield plain[at : ring.end()]
 
 
 def _ends(plain: str, at: int) -> bool:
@@ -128,7 +137,7 @@ def _ends(plain: str, at: int) -> bool:
 
 
 def _made(head: dict[str, str], template: str, group: str) -> ReagentName:
-    shown, smiles = _groups()[in_plain(group)]
+    shown, smiles = _groups().get(in_plain(group)) or (group, ring_group(group) or "")
     return ReagentName(
         template.replace("*", shown),
         frozenset(head["roles"].split()),
@@ -154,7 +163,7 @@ def _left_over(plain: str, taken: list[tuple[int, int, ReagentName]]) -> list[st
     rest = plain
     for start, end, _ in reversed(taken):
         rest = f"{rest[:start]}\0{rest[end:]}"
-    pieces = [_AMOUNT.sub("", piece).strip(" .()-:") for piece in re.split(r"[,;/+\0]|\band\b|\bin\b", rest)]
+    pieces = [_AMOUNT.sub("", piece).strip(" .()-:") for piece in _BETWEEN.split(rest)]
     return [piece for piece in pieces if _LETTERS.search(piece)]
 
 

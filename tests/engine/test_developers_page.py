@@ -27,6 +27,7 @@ def test_files_the_page_names_are_there() -> None:
 STEPS = (
     {"errors"},
     {"facts"},
+    {"ring_names"},
     {"molecule", "names", "readings", "numerics", "numerics_browser", "numerics_cpython"},
     {"predict", "reagent_names"},
     {"weigh", "rivals", "amounts", "record"},

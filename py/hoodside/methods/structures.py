@@ -91,12 +91,20 @@ def draw(
 
 def names(query: str, limit: int = 20) -> dict[str, Any]:
     """Common names that hold the query, best first."""
-    from hoodside.names import find_names
+    from hoodside.names import exact_name, find_names
 
-    found = find_names(short_text(query, "query"), integer(limit, "limit", 1, 500))
+    asked = short_text(query, "query")
+    found = find_names(asked, integer(limit, "limit", 1, 500))
+    exact = exact_name(asked)
+    systematic = [exact] if exact and not exact.formula else []  # not of the table, so told first
     return {
         "names": [
-            {"name": entry.name, "smiles": entry.smiles, "formula": entry.formula, "source": entry.source}
-            for entry in found
+            {
+                "name": entry.name,
+                "smiles": entry.smiles,
+                "formula": entry.formula or formula_of(structure_of(entry.smiles)).text,
+                "source": entry.source,
+            }
+            for entry in (*systematic, *found)
         ]
     }

@@ -55,11 +55,16 @@ def with_fused_ring_cis(structure: Structure, a: int, b: int, oxygen: int) -> St
 
 
 #: What bridges a double bond: the new atom, its hydrogens, and what else it carries.
-_BRIDGES = {"O": ("O", 2, ()), "CH2": ("C", 4, ()), "CCl2": ("C", 4, ("Cl", "Cl"))}
+_BRIDGES = {
+    "O": ("O", 2, ()),
+    "CH2": ("C", 4, ()),
+    "CCl2": ("C", 4, ("Cl", "Cl")),
+    "CBr2": ("C", 4, ("Br", "Br")),
+}
 
 
 def bridge(structure: Structure, a: int, b: int, by: str = "O") -> Structure:
-    """Bridge a double bond by one atom on one face: "O" (epoxide), "CH2" or "CCl2" (cyclopropane)."""
+    """Bridge a double bond by one atom on one face: "O" (epoxide), "CH2", "CCl2" or "CBr2" (cyclopropane)."""
     cis = cis_pair(structure, a, b)
     draft = Draft(structure)
     before = {end: [n for n in structure.neighbours[end] if n != far] for end, far in ((a, b), (b, a))}
