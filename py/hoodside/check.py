@@ -3,12 +3,13 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from contextlib import suppress
 from dataclasses import dataclass, replace
 from itertools import count
 from typing import TYPE_CHECKING, Any
 
 from hoodside.advise.next import Standing, advise
-from hoodside.errors import FormulaError
+from hoodside.errors import FormulaError, StructureError
 from hoodside.predict.formula import parse_formula, unsaturation
 from hoodside.predict.model import ProtonGroup
 from hoodside.put_up import POOL, candidates_of, expected_of, put_up_of, rivals_of, stated_of
@@ -97,8 +98,11 @@ def rank(
 
 
 def _others(rivals: Sequence[Rival], readings: Readings, known: set[str]) -> list[tuple[Rival, Tally]]:
-    """Rivals weighed, without those whose InChIKey is known already."""
-    found = [(rival, _tally(rival.smiles, readings, "rivals")) for rival in rivals]
+    """Rivals weighed, without those whose InChIKey is known already or that nothing can be predicted for."""
+    found = []
+    for rival in rivals:
+        with suppress(StructureError):
+            found.append((rival, _tally(rival.smiles, readings, "rivals")))
     return [(rival, tally) for rival, tally in found if tally.expected.structure.inchikey not in known]
 
 

@@ -101,7 +101,9 @@ def _put_up(entry: object, field: str) -> Rival:
 
     given = record(entry, field, 'Give {"smiles": ..., "how": [...]}.')
     how = rows(given.get("how"), f"{field}.how", text)
-    return Rival(_smiles(given.get("smiles"), f"{field}.smiles"), how, len(how), 0.0)
+    smiles = _smiles(given.get("smiles"), f"{field}.smiles")
+    expected_of(smiles, Readings(), f"{field}.smiles")
+    return Rival(smiles, how, len(how), 0.0)
 
 
 def expected_of(source: str, readings: Readings, field: str) -> Expectations:

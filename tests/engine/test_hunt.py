@@ -197,9 +197,23 @@ def test_a_rival_put_up_that_is_a_candidate_already_stands_once() -> None:
 
 @pytest.mark.parametrize(
     ("put_up", "field"),
-    [(3, "put_up"), (["CCO"], "put_up[0]"), ([{"how": []}], "put_up[0].smiles"), ([{}] * 30, "put_up")],
+    [
+        (3, "put_up"),
+        (["CCO"], "put_up[0]"),
+        ([{"how": []}], "put_up[0].smiles"),
+        ([{}] * 30, "put_up"),
+        ([{"smiles": "C1CC"}], "put_up[0].smiles"),
+    ],
 )
 def test_bad_rivals_put_up_are_named(put_up: Any, field: str) -> None:
-    with pytest.raises(InvalidInputError) as caught:
+    with pytest.raises((InvalidInputError, StructureError)) as caught:
         call("check", {"candidates": ["CCO"], "put_up": put_up})
     assert (caught.value.field or "").startswith(field)
+
+
+def test_a_step_of_organometallics_does_not_stop_the_check() -> None:
+    step = {"start": "C[Mg]Br", "reagents": "H2O", "partner": "O=Cc1ccccc1"}
+    answer = call(
+        "check", {"h1": [{"ppm": 4.9, "mult": "q", "n": 1}], "candidates": ["CC(O)c1ccccc1"], "step": step}
+    )
+    assert answer["candidates"][0]["index"] == 0
