@@ -52,6 +52,7 @@ def test_lines_in_ppm_give_pattern_and_j_and_are_taken_over(hand: Hand) -> None:
         hand.page.get_by_label(f"Height of line {at + 1}").click()  # all alike: low
     expect(first.locator("b")).to_have_text("dd")
     expect(first).to_contain_text("16.0, 8.0 Hz")
+    expect(hand.page.locator(".tree figcaption")).to_contain_text("d by 16.0 Hz, then d by 8.0 Hz")
     first.click()
     expect(hand.page.locator("input[name=shift]")).to_have_value("6.50")
     expect(hand.page.locator("input[name=j]")).to_have_value("16.0, 8.0")

@@ -8,6 +8,7 @@ import { address, go } from '../../state/route.js';
 import { useAnswer } from '../../state/use-answer.js';
 import { fixed, toNumber } from '../../words/numbers.js';
 import { CaseSign } from '../case/sign.js';
+import { Tree } from '../trace/tree.js';
 import { emptyLines, lineFault, linesInPpm, linesQuestion, nextRough } from './lines.js';
 import { Printout } from './photos.js';
 
@@ -97,6 +98,7 @@ function Found({ found, take }) {
     ${found.readings.map((reading, i) => html`<button type="button" key=${reading.pattern + reading.j.join()} class="line-reading line-reading-other" onClick=${() => take(reading)}>
       <b>${reading.pattern}</b><span><${Couplings} reading=${reading} /></span><em>take</em>
       <span class="source">${i ? 'or so' : 'best reading'}; ${placeWords(reading)}, lines within ${fixed(reading.rms_hz, 2)} Hz</span></button>`)}
+    ${found.readings[0] && html`<${Tree} mult=${found.readings[0].pattern} j=${found.readings[0].j} />`}
     <p class="whisper">Spacings ${found.spacings_hz.map((hz) => fixed(hz, 1)).join(', ')} Hz</p>
   </div>`;
 }
