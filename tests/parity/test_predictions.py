@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import csv
 import json
 from pathlib import Path
 from statistics import median
@@ -12,6 +13,7 @@ from compare import Runner, same
 pytestmark = pytest.mark.node
 
 CASES = json.loads((Path(__file__).parents[1] / "cases" / "published.json").read_text("utf-8"))
+STEPS = Path(__file__).parents[1] / "reference" / "reagent_steps.csv"
 #: Structures of about 25 heavy atoms for the clock; on this many, loading the tables no longer counts.
 TWENTY_FIVE = [
     "CC(C)(C)OC(=O)N[C@@H](Cc1ccccc1)C(=O)NCCOCC",
@@ -33,6 +35,12 @@ def test_outcomes_alike(in_browser: Runner) -> None:
     """Reaction outcomes of the published alkenes and alcohols."""
     smiles = [c["smiles"] for c in CASES if "C=C" in c["smiles"] or "O" in c["smiles"]][:40]
     same(in_browser, [["calls.outcome_list", s, r] for s in smiles for r in ("OsO4, NMO", "Swern", "LiAlH4")])
+
+
+def test_steps_alike(in_browser: Runner) -> None:
+    """Steps by the names of their reagents: the same outcomes in the same order."""
+    steps = list(csv.DictReader(STEPS.read_text("utf-8").splitlines()))
+    same(in_browser, [["calls.outcome_list", row["start"], row["reagents"]] for row in steps])
 
 
 def test_speed_of_prediction_in_pyodide(in_browser: Runner) -> None:

@@ -13,6 +13,9 @@ import pytest
 from hoodside.errors import InvalidInputError
 from hoodside.molecule import read_structure
 from hoodside.rivals.outcomes import Outcome, find_outcomes
+from hoodside.rivals.outcomes.apply import Step, best_first
+from hoodside.rivals.outcomes.reagents import read_reagents
+from hoodside.rivals.outcomes.rules import rules
 from hoodside.rivals.outcomes.stereo import mirror_smiles
 
 HERE = Path(__file__).parent
@@ -81,6 +84,19 @@ def test_attack_from_behind_inverts(start: str, reagents: str, partner: str, pro
     other = read_structure(partner) if partner else None
     first = find_outcomes(read_structure(start), reagents, other).outcomes[0]
     assert first.smiles == read_structure(product).smiles
+
+
+def test_every_preference_finds_its_atoms() -> None:
+    """A row that ranks sites maps the atoms its preference looks at: each is tried where it matches."""
+    tried = [
+        "CC(O)CC(=O)CC", "C=CCC(C)O", "OCC(O)CO", "Oc1ccccc1CO", "CC(=O)CCC=O", "CC1CO1", "BrCCc1ccc(I)cc1",
+        "C=CCNCC=C", "ON=C(C)CC", "COc1ccccc1C", "C=CC(C)(C)C=CC", "CC(=O)CC(=O)OCC", "OC(=O)CCCc1ccccc1",
+    ]  # fmt: skip
+    asked = Step(None, frozenset(), read_reagents(""))
+    for rule in rules():
+        if rule.op != "seq":
+            for smiles in tried:
+                best_first(rule, read_structure(smiles), asked)
 
 
 def test_a_silent_table_says_what_it_lacks() -> None:

@@ -60,6 +60,7 @@ PARTNERS = {
     "phosphonate": "[PX4](=O)[CX4;!H0][CX3]",
     "active_methylene": "[CX4;H2,H1]([$([CX3]=O),$(C#N)])[$([CX3]=O),$(C#N)]",
     "acyl_donor": "[CX3](=O)([OX2,$(C#N),Cl])[OX2]",
+    "ester": "[CX4;H3,H2][CX3](=O)[OX2][CX4]",
     "oxalate": "[OX2][CX3](=O)[CX3](=O)[OX2]",
     "sulfonyl_chloride": "[SX4](=O)(=O)Cl",
     "boc2o": "CC(C)(C)OC(=O)OC(=O)OC(C)(C)C",

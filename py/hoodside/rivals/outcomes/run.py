@@ -26,6 +26,7 @@ _ROLES: dict[str, Role] = {
 _NEED_BONUS = 3
 _PARTNER_BONUS = 15
 _MOST = 24
+_MOBILE_HYDROGEN = "[nH]"
 #: Roles of what is poured in to quench, and of what is quenched by it.
 _WORKUP = frozenset(
     {"acid", "hcl", "water", "quench", "solvent", "alcohol", "methanol", "ethanol", "cold", "drying"}
@@ -289,12 +290,19 @@ def _unchanged(start: Structure, known: bool) -> Outcome:
 
 
 def _distinct(outcomes: Iterable[Outcome], start: Structure, racemic: bool) -> list[Outcome]:
-    """Each compound once; mirror images are one compound where nothing that went in was one of two."""
+    """Each compound once: tautomers are one, mirror images too where nothing chiral went in."""
     kept: dict[str, Outcome] = {}
+    mobile: set[str] = set()
     for outcome in outcomes:
-        if outcome.smiles == start.smiles:
+        smiles = outcome.smiles
+        if smiles == start.smiles or smiles in kept:
             continue
-        mirrored = racemic and "@" in outcome.smiles and outcome.smiles not in kept
-        if not (mirrored and mirror_smiles(read_structure(outcome.smiles)) in kept):
-            kept.setdefault(outcome.smiles, outcome)
+        if racemic and "@" in smiles and mirror_smiles(read_structure(smiles)) in kept:
+            continue
+        if _MOBILE_HYDROGEN in smiles:
+            key = read_structure(smiles).inchikey  # the same for hydrogen on either nitrogen
+            if key in mobile:
+                continue
+            mobile.add(key)
+        kept[smiles] = outcome
     return list(kept.values())
