@@ -11,7 +11,7 @@ from pathlib import Path
 import pytest
 
 from bench.spin_timing import timed_system
-from hoodside.predict.spins import exact_lines
+from hoodside.predict.spins import cluster_lines, exact_lines
 
 ROOT = Path(__file__).parents[2]
 SCRIPT = """
@@ -28,8 +28,10 @@ import sys; sys.dont_write_bytecode = True; sys.path[:0] = ["/py", "/bench"]
 import json
 from spin_timing import timed_system
 from hoodside.predict.spins.exact import exact_lines
-found = exact_lines(timed_system("full", 6))
-json.dumps([list(found.hz), list(found.intensity)])
+from hoodside.predict.spins.clusters import cluster_lines
+exact = exact_lines(timed_system("full", 6))
+reduced = cluster_lines(timed_system("chain", 9), 36)
+json.dumps([[list(lines.hz), list(lines.intensity)] for lines in (exact, reduced)])
 `));
 """
 
@@ -43,10 +45,10 @@ def test_lines_in_pyodide_are_those_of_cpython(tmp_path: Path) -> None:
     script.write_text(SCRIPT.format(root=ROOT, modules=modules), "utf-8")
     done = subprocess.run([node, str(script)], capture_output=True, text=True, timeout=300, check=False)
     assert done.returncode == 0, done.stderr[-2000:]
-    hz, intensity = json.loads(done.stdout)
-    here = exact_lines(timed_system("full", 6))
-    assert hz == pytest.approx(list(here.hz), abs=1e-8)
-    assert intensity == pytest.approx(list(here.intensity), abs=1e-10)
+    here = exact_lines(timed_system("full", 6)), cluster_lines(timed_system("chain", 9), 36)
+    for (hz, intensity), lines in zip(json.loads(done.stdout), here, strict=True):
+        assert hz == pytest.approx(list(lines.hz), abs=1e-6)
+        assert intensity == pytest.approx(list(lines.intensity), abs=1e-8)
 
 
 def _modules() -> Path | None:

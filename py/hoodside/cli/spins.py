@@ -19,7 +19,8 @@ def run(options: argparse.Namespace) -> int:
 
 
 def _lines(answer: dict[str, Any]) -> Iterator[str]:
-    yield f"method: {answer['method']}"
+    off = f", a line may be off by {answer['error_hz']:.2f} Hz" if "error_hz" in answer else ""
+    yield f"method: {answer['method']}{off}"
     rows = [
         [f"{line['ppm']:.4f}", f"{line['hz']:.2f}", f"{line['intensity']:.4f}"] for line in answer["lines"]
     ]
