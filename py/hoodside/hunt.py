@@ -119,9 +119,12 @@ class Hunt:
 
     def _tally(self, source: str) -> Tally | None:
         try:
-            return weigh_structure(expectations(source, self._readings), self._readings)
+            expected = expectations(source, self._readings)
+            tally = weigh_structure(expected, self._readings)
         except StructureError:  # beyond what the predictors take: it stands unweighed
             return None
+        expected.structure.release()  # hundreds may be kept, and their predictions are made
+        return tally
 
     def _told(self, rival: Rival) -> dict[str, Any]:
         if rival.smiles not in self._formulas:

@@ -5,7 +5,7 @@ from __future__ import annotations
 import json
 from collections.abc import Sequence
 from dataclasses import dataclass
-from functools import cached_property
+from functools import cached_property, lru_cache
 from typing import Any
 
 from hoodside.molecule.elements import SYMBOLS
@@ -124,6 +124,10 @@ class Structure:
                 self._matches[pattern, unique] = found
         return [self._matches[s, unique] for s in smarts]
 
+    def release(self) -> None:
+        """Let go of the remembered matches, most of what it holds; asked for again, they are found anew."""
+        self._matches.clear()
+
     def distances_from(self, atom: int) -> tuple[int, ...]:
         """Number of bonds from ``atom`` to every atom (-1: not connected)."""
         found = [-1] * len(self.atoms)
@@ -137,8 +141,13 @@ class Structure:
         return tuple(found)
 
 
+#: Structures just read: a search, the tests it makes and the prediction ask for the same one in turn.
+_KEPT = 64
+
+
+@lru_cache(maxsize=_KEPT)
 def read_structure(source: str) -> Structure:
-    """Read a SMILES, a CTfile or an RDKit JSON graph.
+    """Read a SMILES, a CTfile or an RDKit JSON graph; what was read just now is at hand still.
 
     Raises: StructureError when the text is empty, larger than the kernels survive, no molecule, or holds an
     atom without a mass.
