@@ -209,3 +209,12 @@ def test_formula_mass_and_combustion_charge_a_wrong_composition_once():
     negative = [f for f in wrong["findings"] if f["weight_db"] < 0]
     assert len(negative) == 1
     assert wrong["verdict"] == "clashes"
+
+
+def test_a_carbamate_may_give_two_lines_for_one_carbon():
+    # N-Boc-pyrrolidine shows NCH2 and NCCH2 twice, slow rotation at room temperature: from memory.
+    lines = [154.6, 79.0, 46.0, 45.6, 28.5, 25.7, 24.9]
+    found = check_case({"c13": lines, "candidates": ["CC(C)(C)OC(=O)N1CCCC1", "CC(C)(C)C(=O)OC1CCCN1"]})
+    boc = next(c for c in found["candidates"] if c["smiles"].startswith("CC(C)(C)OC(=O)N"))
+    assert sum("second rotamer" in f["text"] for f in boc["findings"]) == 2
+    assert boc["verdict"] != "clashes"

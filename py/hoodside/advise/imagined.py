@@ -71,7 +71,7 @@ def by_protons(expected: Expectations, readings: Readings) -> Weighed:
 
 def by_carbons(expected: Expectations, readings: Readings) -> Weighed:
     """Weigh 13C lines."""
-    return weigh_carbons(expected.c13, readings, expected.formula.count("F"))
+    return weigh_carbons(expected.c13, readings, expected.doubled)
 
 
 def by_bands(expected: Expectations, readings: Readings) -> Weighed:

@@ -34,8 +34,9 @@ _MISSING_WITH_H, _MISSING_QUATERNARY = -14.0, -11.0
 #: Share of kinds of carbon (DEPT) that are misread.
 _KIND_WRONG = 0.03
 _KINDS = 4
-#: A line too many where fluorine may split lines in two, decibans.
-_SPLIT_BY_F = -6.0
+#: A line too many where fluorine, or slow rotation, may give two lines for one carbon, decibans.
+_DOUBLED = -6.0
+SPLIT_BY_FLUORINE, SECOND_ROTAMER = "a line split by fluorine", "a line of a second rotamer"
 #: Chance of a gap in a list that seems complete, and the share of lines that may lack before it does not.
 _SURELY_LISTED, _FORGIVEN = 0.002, 0.25
 _FEW_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
@@ -48,11 +49,14 @@ class _Line:
     stray: Stray
 
 
-def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, fluorines: int = 0) -> Weighed:
-    """All 13C lines of the readings against the predicted groups of a structure with so many F."""
+def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, doubled: str = "") -> Weighed:
+    """All 13C lines of the readings against the predicted groups of a structure.
+
+    ``doubled``: what a line too many would be in this structure, "" where every line counts.
+    """
     if not readings.c13:
         return Weighed()
-    lines = _all_prepared(readings.c13, readings.solvent, fluorines > 0)
+    lines = _all_prepared(readings.c13, readings.solvent, doubled)
     given = pair_lines(groups, lines)
     listed = share_listed(groups, lines)
     findings = [*_line_findings(groups, lines, given), *_missing_findings(groups, given, listed)]
@@ -73,15 +77,15 @@ def weigh_carbons(groups: Sequence[CarbonGroup], readings: Readings, fluorines: 
 
 
 @lru_cache(maxsize=8)
-def _all_prepared(lines: tuple[CarbonLine, ...], solvent: str, fluorine: bool) -> list[_Line]:
-    return [_prepared(line, solvent, fluorine) for line in lines]
+def _all_prepared(lines: tuple[CarbonLine, ...], solvent: str, doubled: str) -> list[_Line]:
+    return [_prepared(line, solvent, doubled) for line in lines]
 
 
-def _prepared(line: CarbonLine, solvent: str, fluorine: bool) -> _Line:
+def _prepared(line: CarbonLine, solvent: str, doubled: str) -> _Line:
     share = spread("c13_background").between(line.ppm - _HALF, line.ppm + _HALF)
     stray = carbon_stray(line, solvent)
-    if fluorine and stray.weight_db < _SPLIT_BY_F:
-        stray = Stray(_SPLIT_BY_F, "a line split by fluorine")
+    if doubled and stray.weight_db < _DOUBLED:
+        stray = Stray(_DOUBLED, doubled)
     return _Line(line, decibans(share), stray)
 
 
@@ -183,7 +187,7 @@ def _line_findings(groups: Sequence[CarbonGroup], lines: list[_Line], given: lis
         held = [g for g, place in enumerate(given) if place == k]
         ref = (f"c13:{k}",)
         if not held:
-            text, source = _stray_text(line), _FEW_SOURCE if line.stray.name else ""
+            text, source = _stray_text(line), _stray_source(line.stray)
             yield Finding("c13.stray", trust("c13.stray") * line.stray.weight_db, text, ref, (), source)
             continue
         weight = line.anyhow_db * (len(held) - 1) + decibans(_COINCIDE / _HALF) * (len(held) - 1)
@@ -230,6 +234,12 @@ def _line_text(line: _Line, held: list[CarbonGroup]) -> str:
 
 def _kind_text(line: _Line, group: CarbonGroup) -> str:
     return f"Seen as {line.given.kind}; the structure has {group.kind} there."
+
+
+def _stray_source(stray: Stray) -> str:
+    if stray.name in (SPLIT_BY_FLUORINE, SECOND_ROTAMER):
+        return "common practice"
+    return _FEW_SOURCE if stray.name else ""
 
 
 def _stray_text(line: _Line) -> str:

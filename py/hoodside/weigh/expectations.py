@@ -14,8 +14,11 @@ from hoodside.predict.model import CarbonGroup, IrExpectation, MassExpectation, 
 from hoodside.predict.multiplet import apply_multiplets
 from hoodside.predict.proton import predict_protons
 from hoodside.readings import Readings
+from hoodside.weigh.carbons import SECOND_ROTAMER, SPLIT_BY_FLUORINE
 from hoodside.weigh.protons.pattern import Patterns
 
+#: Amides, thioamides and carbamates of secondary amines: their C-N bond turns slowly at room temperature.
+_SLOW_ROTOR = "[CX3](=[O,S])[NX3;H0;+0;!$(N(C=[O,S])C=[O,S])]([#6;!$(C=[O,S])])[CX4]"
 USUAL_SOLVENT, USUAL_MHZ = "CDCl3", 400.0
 #: Structures kept between checks: a case with its rivals is weighed again after every reading typed.
 _KEPT = 256
@@ -55,6 +58,13 @@ class Expectations:
     def c13(self) -> tuple[CarbonGroup, ...]:
         """13C groups."""
         return predict_carbons(self.structure)
+
+    @cached_property
+    def doubled(self) -> str:
+        """Why one carbon of the structure may give more than one 13C line; "" where nothing makes it so."""
+        if self.formula.count("F"):
+            return SPLIT_BY_FLUORINE
+        return SECOND_ROTAMER if self.structure.matches(_SLOW_ROTOR) else ""
 
     @cached_property
     def ir(self) -> tuple[IrExpectation, ...]:

@@ -57,7 +57,7 @@ def weigh_structure(expected: Expectations, readings: Readings) -> Tally:
     parts = [
         weigh_formula(formula, readings),
         weigh_protons(expected.h1, expected.patterns, readings) if readings.h1 else Weighed(),
-        weigh_carbons(expected.c13, readings, formula.count("F")) if readings.c13 else Weighed(),
+        weigh_carbons(expected.c13, readings, expected.doubled) if readings.c13 else Weighed(),
         weigh_infrared(expected.ir, readings) if readings.ir or readings.ir_clear else Weighed(),
         weigh_masses(formula, expected.ms, readings) if readings.ms else Weighed(),
         weigh_tests(expected.structure, readings),
