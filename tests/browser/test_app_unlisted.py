@@ -32,6 +32,11 @@ def test_the_right_one_is_put_up_where_only_a_wrong_one_was(page: Page) -> None:
     expect(page.locator(".verdict")).not_to_contain_text("Fits.")
     note.get_by_role("link", name="What else would fit?").click()
     page.locator(".rivals-found[aria-busy=false] .rival").first.wait_for(timeout=60_000)
+    page.get_by_role("button", name="Dismiss").first.click()
+    hand.back()
+    hand.station("Tally")
+    expect(page.locator(".rung")).to_have_count(1, timeout=60_000)
+    expect(note).to_contain_text("The one put up clashes with the readings.")
     assert hand.complaints == []
 
 
