@@ -11,9 +11,12 @@ from hoodside.molecule import Structure
 Score = Callable[[Structure, dict[int, int]], float]  # structure, map number in the pattern -> atom
 
 _PULLING = "[CX3]=[OX1],[CX2]#[NX1],[N+](=O)[O-],S(=O)=O,C(F)(F)F"
+_SNAR_ORDER = {"F": 3.0, "Cl": 2.0, "N": 1.0}
 _BEST_RING, _FIVE = 6, 5
 #: What benzo-fusion takes from the place next to N or S of a five-ring.
 _BENZO_ALPHA = 2.0
+#: What a place next to the fusion of two benzene rings gains (Clayden, Greeves and Warren).
+_NAPHTHALENE_ALPHA = 1.5
 _HALIDE_ORDER = {"I": 3.0, "Br": 2.0, "Cl": 1.0, "F": 0.0}
 
 
@@ -102,6 +105,7 @@ def _ring_score(structure: Structure, ring: tuple[int, ...], place: int) -> floa
     if not all(structure.atoms[a].aromatic for a in ring):
         return 0.0
     score = -_BENZO_ALPHA if _beside_benzo_hetero(structure, ring, place) else 0.0
+    score += _NAPHTHALENE_ALPHA if _beside_fusion(structure, ring, place) else 0.0
     for member in ring:
         steps = abs(ring.index(member) - ring.index(place))
         steps = min(steps, len(ring) - steps)
@@ -132,6 +136,13 @@ def _beside_benzo_hetero(structure: Structure, ring: tuple[int, ...], place: int
         and len(ring) == _FIVE
         and any(structure.atoms[n].symbol in "NS" for n in structure.neighbours[place] if n in ring)
     )
+
+
+def _beside_fusion(structure: Structure, ring: tuple[int, ...], place: int) -> bool:
+    """Position 1 of naphthalene and its like."""
+    fused = {atom for other in structure.rings if other != ring for atom in set(other) & set(ring)}
+    carbons = all(structure.atoms[atom].symbol == "C" for atom in ring)
+    return carbons and len(fused) > 1 and any(n in fused for n in structure.neighbours[place])
 
 
 def _directing(structure: Structure, near: int, member: int, steps: int) -> float:
@@ -184,6 +195,12 @@ def diol_six(structure: Structure, site: dict[int, int]) -> float:
     return float(gap) if 0 < gap <= 2 else -10.0
 
 
+def snar(structure: Structure, site: dict[int, int]) -> float:
+    """Fluoride leaves before chloride, nitro last (addition is slow, leaving is fast)."""
+    leaving = [n for n in structure.neighbours[site[1]] if not structure.atoms[n].aromatic]
+    return max((_SNAR_ORDER.get(structure.atoms[n].symbol, 0.0) for n in leaving), default=0.0)
+
+
 def ring(structure: Structure, site: dict[int, int]) -> float:
     """Rings near six close best; ``site`` holds the atoms that become bonded as 1 and 2."""
     return -abs(structure.distances_from(site[1])[site[2]] + 1 - _BEST_RING)
@@ -195,6 +212,7 @@ def less_hindered(structure: Structure, site: dict[int, int]) -> float:
 
 
 SCORES: dict[str, Score] = {
+    "snar": snar,
     "less": less_hindered,
     "ring": ring,
     "cation": cation,
