@@ -76,7 +76,7 @@ def on_page(large: str) -> list[Figure]:
 
 
 def _systems(page: Page, profile: Path) -> list[Figure]:
-    sizes = [(kind, n, RUNS) for kind in ("chain", "full") for n in ALLOWED]
+    sizes = [(kind, n, RUNS) for kind in ("chain", "full", "pairs") for n in ALLOWED]
     return [_system(page, profile, *size) for size in [*sizes, *(("chain", n, 2) for n in CURVE)]]
 
 

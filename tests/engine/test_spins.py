@@ -32,6 +32,8 @@ from hoodside.predict.spins.cluster_choice import choose_clusters
 from hoodside.predict.spins.comparing import displacement
 from hoodside.predict.spins.exact import add_cluster
 from hoodside.predict.spins.model import Heap
+from hoodside.predict.spins.surroundings import surrounded
+from hoodside.predict.spins.symmetry import exchange_of, fold
 
 Pairs = Sequence[tuple[int, int, float]]
 
@@ -111,6 +113,39 @@ def test_chemical_equivalence_is_not_magnetic_equivalence() -> None:
     )
     assert len(a2x2) == 6
     assert len(aaxx) == 20
+
+
+# -- exchange symmetry -------------------------------------------------------------------------------------
+
+#: A chain of four CH2, chemically but not magnetically equivalent: AA'BB'CC'DD'.
+PAIRS = (
+    [100.0, 100.0, 112.0, 112.0, 60.0, 60.0, 48.0, 48.0],
+    [(k, k + 1, -13.0) for k in (0, 2, 4, 6)]
+    + [(k + a, k + 2 + b, 6.1 if a == b else 8.3) for k in (0, 2, 4) for a in (0, 1) for b in (0, 1)],
+)
+
+
+def test_states_of_an_exchange_symmetric_system_are_found_in_halves() -> None:
+    """Even and odd states together give the lines of the dense Hamiltonian, which knows no symmetry."""
+    shifts, couplings = PAIRS
+    around = next(surrounded(system(shifts, couplings), system(shifts, couplings).matrix(), range(8)))
+    assert exchange_of(around, (1,) * 8) == (1, 0, 3, 2, 5, 4, 7, 6)
+    assert_like_dense([1] * 8, shifts, couplings)
+
+
+@pytest.mark.parametrize("level", range(9))
+def test_even_and_odd_states_make_up_the_block(level: int) -> None:
+    exchange = (1, 0, 3, 2, 5, 4, 7, 6)
+    sizes = [fold((1,) * 8, level, exchange, sign).size for sign in (1, -1)]
+    assert sum(sizes) == math.comb(8, level)
+
+
+def test_no_symmetry_is_seen_where_a_coupling_breaks_it() -> None:
+    shifts, couplings = PAIRS
+    broken = [(a, b, j + (0.2 if (a, b) == (0, 2) else 0.0)) for a, b, j in couplings]
+    around = next(surrounded(system(shifts, broken), system(shifts, broken).matrix(), range(8)))
+    assert exchange_of(around, (1,) * 8) is None
+    assert_like_dense([1] * 8, shifts, broken)
 
 
 def test_heteronuclei_split_but_are_not_seen() -> None:

@@ -17,7 +17,7 @@ from math import comb, sqrt
 from hoodside.numerics import zeros
 
 #: Blocks whose structure is kept for the next system of the same kind.
-_KEPT = 1024
+KEPT = 1024
 
 
 @cache
@@ -67,7 +67,7 @@ class Blocks:
     places: dict[int, int]
 
 
-@lru_cache(maxsize=_KEPT)
+@lru_cache(maxsize=KEPT)
 def blocks(twice: tuple[int, ...]) -> Blocks:
     """All states of composite spins of the given 2 F."""
     strides, width = [], 1
@@ -98,8 +98,8 @@ def largest_block(counts: Sequence[int]) -> int:
     return max(ways)
 
 
-@lru_cache(maxsize=_KEPT)
-def _lowerings(twice: tuple[int, ...], level: int) -> tuple[tuple[tuple[int, float], ...], ...]:
+@lru_cache(maxsize=KEPT)
+def lowerings(twice: tuple[int, ...], level: int) -> tuple[tuple[tuple[int, float], ...], ...]:
     """F- of every group from block ``level`` to the one below: (element, coefficient) of those it fills."""
     basis = blocks(twice)
     here, places = basis.codes[level], basis.places
@@ -122,7 +122,7 @@ def lowering_matrix(
     """Weighted sum of F- over groups, from block ``level`` to the one below: rows below, columns here."""
     basis = blocks(twice)
     matrix = zeros(len(basis.codes[level]) * len(basis.codes[level - 1]))
-    terms = _lowerings(twice, level)
+    terms = lowerings(twice, level)
     for g in groups:
         weight = weights[g]
         for element, coefficient in terms[g]:
@@ -134,7 +134,7 @@ def lowering_matrix(
 Flip = tuple[int, int, float]
 
 
-@lru_cache(maxsize=_KEPT)
+@lru_cache(maxsize=KEPT)
 def flip_flops(twice: tuple[int, ...], level: int) -> dict[tuple[int, int], tuple[Flip, ...]]:
     """(Fa- Fb+ + Fa+ Fb-)/2 for every pair a < b within one block, as the elements it fills."""
     basis = blocks(twice)

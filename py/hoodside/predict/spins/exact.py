@@ -9,17 +9,21 @@ from __future__ import annotations
 
 from array import array
 from collections.abc import Sequence
+from dataclasses import dataclass
 from math import sqrt
 
 from hoodside.numerics import eigh, product, transitions, zeros
 from hoodside.predict.spins.basis import Blocks, blocks, combinations, flip_flops, lowering_matrix
 from hoodside.predict.spins.model import Heap, LineList, SpinSystem
 from hoodside.predict.spins.surroundings import Hamiltonian, second_order, surrounded
+from hoodside.predict.spins.symmetry import Exchange, exchange_of, fold, folded_block, folded_lowering
 
 #: Hz within which lines are one.
 COINCIDENT = 1e-7
 #: Share of the strongest line below which a line is left out.
 NEGLIGIBLE = 1e-7
+#: States of composite spins from which it pays to look for a symmetry (eight spins of 1/2).
+_WORTH_FOLDING = 200
 #: Intensity below which a transition is not looked at.
 _NO_INTENSITY = 1e-9
 
@@ -90,32 +94,57 @@ def _add_composite(
     """Add the lines of composite spins of the given 2 F, intensities times ``scale``."""
     basis = blocks(twice)
     diagonal = _diagonal(basis, around)
+    exchange = exchange_of(around, twice) if len(diagonal) >= _WORTH_FOLDING else None
+    for sector in [None] if exchange is None else [(exchange, 1), (exchange, -1)]:
+        _add_sector(heap, _Levels(basis, around, diagonal, sector), scale, detected)
+
+
+def _add_sector(heap: Heap, levels: _Levels, scale: float, detected: Sequence[int] | None) -> None:
+    """Add the lines between the states of one symmetry."""
     least = sqrt(_NO_INTENSITY / scale)
-    every = range(len(twice))
+    every = range(len(levels.basis.twice))
     below: tuple[array[float], array[float]] | None = None
-    for level, codes in enumerate(basis.codes):
-        here = eigh(len(codes), _block(basis, level, diagonal, around.flips))
-        if below is not None:
-            total = _transition(basis, level, below[1], here[1], every, around.weights)
-            own = total
-            if detected is not None:
-                own = _transition(basis, level, below[1], here[1], detected, around.weights)
+    for level in range(len(levels.basis.codes)):
+        size = levels.size(level)
+        here = eigh(size, levels.block(level)) if size else None
+        if below is not None and here is not None:
+            total = levels.amplitudes(level, below[1], here[1], every)
+            own = total if detected is None else levels.amplitudes(level, below[1], here[1], detected)
             heap.add(transitions((below[0], here[0]), (total, own), scale, least))
         below = here
 
 
-def _transition(
-    basis: Blocks,
-    level: int,
-    below: array[float],
-    here: array[float],
-    groups: Sequence[int],
-    weights: Sequence[float],
-) -> array[float]:
-    """Amplitudes between eigenstates of two neighbouring blocks: rows below, columns here."""
-    n, m = len(basis.codes[level - 1]), len(basis.codes[level])
-    lowered = product(n, m, m, lowering_matrix(basis.twice, level, groups, weights), here)
-    return product(n, n, m, below, lowered, turned=True)
+@dataclass(frozen=True, slots=True)
+class _Levels:
+    """The states of some composite spins, or those of one symmetry: an exchange and the sign under it."""
+
+    basis: Blocks
+    around: Hamiltonian
+    diagonal: list[float]
+    sector: tuple[Exchange, int] | None
+
+    def size(self, level: int) -> int:
+        """Number of states of a level."""
+        if self.sector is None:
+            return len(self.basis.codes[level])
+        return fold(self.basis.twice, level, *self.sector).size
+
+    def block(self, level: int) -> array[float]:
+        """The Hamiltonian of one level, row-major."""
+        if self.sector is None:
+            return _block(self.basis, level, self.diagonal, self.around.flips)
+        return folded_block(self.basis.twice, level, *self.sector, self.diagonal, self.around.flips)
+
+    def amplitudes(
+        self, level: int, below: array[float], here: array[float], groups: Sequence[int]
+    ) -> array[float]:
+        """F- of some groups between eigenstates of two neighbouring levels: rows below, columns here."""
+        n, m = self.size(level - 1), self.size(level)
+        if self.sector is None:
+            lowering = lowering_matrix(self.basis.twice, level, groups, self.around.weights)
+        else:
+            lowering = folded_lowering(self.basis.twice, level, *self.sector, groups, self.around.weights)
+        return product(n, n, m, below, product(n, m, m, lowering, here), turned=True)
 
 
 def _diagonal(basis: Blocks, around: Hamiltonian) -> list[float]:
