@@ -10,6 +10,7 @@ from typing import TYPE_CHECKING, Any
 
 from hoodside.advise.next import Standing, advise
 from hoodside.errors import FormulaError, StructureError
+from hoodside.molecule.structure import read_structure
 from hoodside.predict.formula import parse_formula, unsaturation
 from hoodside.predict.model import ProtonGroup
 from hoodside.put_up import POOL, candidates_of, expected_of, put_up_of, rivals_of, stated_of
@@ -80,6 +81,8 @@ def rank(
     """
     tallies = [_tally(source, readings, f"candidates[{i}]") for i, source in enumerate(candidates)]
     mine = {t.expected.structure.inchikey for t in tallies}
+    if rivals or stated:
+        mine |= _as_rivals(tallies)
     left = _once(_others([rival for _, rival in stated], readings, mine))
     mine |= {tally.expected.structure.inchikey for _, tally in left}
     found = sorted(_others(rivals, readings, mine), key=lambda entry: -entry[1].weight_db)
@@ -104,6 +107,13 @@ def _others(rivals: Sequence[Rival], readings: Readings, known: set[str]) -> lis
         with suppress(StructureError):
             found.append((rival, _tally(rival.smiles, readings, "rivals")))
     return [(rival, tally) for rival, tally in found if tally.expected.structure.inchikey not in known]
+
+
+def _as_rivals(tallies: Sequence[Tally]) -> set[str]:
+    """InChIKeys of candidates in the form of a rival: mirror images as one, a lone centre unmarked."""
+    from hoodside.rivals.names import name_of
+
+    return {read_structure(name_of(t.expected.structure.smiles)).inchikey for t in tallies}
 
 
 def _once(weighed: Sequence[tuple[Rival, Tally]]) -> list[tuple[Rival, Tally]]:

@@ -103,6 +103,7 @@ GOOD: list[tuple[str, dict[str, Any]]] = [
             "allowed": True,
             "step": {"start": "CC=O", "reagents": "NaBH4", "partner": "C"},
             "slice_ms": 50,
+            "besides": ["CCO", "COC"],
         },
     ),
     ("rivals", {"structure": "CCO", "readings": {"formula": "C2H6O"}, "limit": 2, "formula_known": True}),

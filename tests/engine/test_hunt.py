@@ -217,3 +217,15 @@ def test_a_step_of_organometallics_does_not_stop_the_check() -> None:
         "check", {"h1": [{"ppm": 4.9, "mult": "q", "n": 1}], "candidates": ["CC(O)c1ccccc1"], "step": step}
     )
     assert answer["candidates"][0]["index"] == 0
+
+
+def test_a_candidate_with_its_configuration_is_no_rival_to_itself() -> None:
+    """One centre: NMR cannot tell its mirror images, so that rivals leave it unmarked."""
+    lone = "C[C@H](O)c1ccccc1"
+    put_up = [{"smiles": "CC(O)c1ccccc1"}, {"smiles": "OCCc1ccccc1"}]
+    answer = call("check", {"formula": "C8H10O", "candidates": ["CCOc1ccccc1", lone], "put_up": put_up})
+    assert [c["smiles"] for c in answer["candidates"] if c["index"] is None] == ["OCCc1ccccc1"]
+    question: dict[str, Any] = {"readings": {"formula": "C8H10O"}, "slice_ms": 5_000, "limit": 60}
+    with_it = {r["smiles"] for r in hunt("OCCc1ccccc1", **question)["rivals"]}
+    without = {r["smiles"] for r in hunt("OCCc1ccccc1", besides=[lone], **question)["rivals"]}
+    assert with_it - without == {"CC(O)c1ccccc1"}

@@ -9,8 +9,9 @@ from typing import Any
 from hoodside.hunt import Hunt
 from hoodside.methods.arguments import integer, short_text
 from hoodside.methods.structures import structure_of
-from hoodside.readings.fields import flag, refusal
+from hoodside.readings.fields import flag, refusal, rows
 from hoodside.readings.from_json import readings_from_json
+from hoodside.rivals.names import name_of
 from hoodside.rivals.stated import step_from_json
 
 USUAL_LIMIT = 40
@@ -32,11 +33,13 @@ def hunt(
     allowed: bool = True,
     step: dict[str, Any] | None = None,
     slice_ms: int = USUAL_MS,
+    besides: list[str] | None = None,
 ) -> dict[str, Any]:
     """Go on with a hunt for about ``slice_ms`` and say how it stands.
 
     The question itself names the hunt: asked again, it goes on where the last slice ended, until ``done``; a
-    higher ``limit`` takes it further. An engine that no longer holds the hunt begins it anew.
+    higher ``limit`` takes it further. An engine that no longer holds the hunt begins it anew. Of the structures
+    ``besides`` none is told.
     """
     wanted = integer(limit, "limit", 1, MOST)
     key = json.dumps([structure, readings, formula_known, allowed, step], sort_keys=True)
@@ -46,7 +49,14 @@ def hunt(
     _hunts[key] = going
     if len(_hunts) > _KEPT:
         _hunts.popitem(last=False)
-    return going.answer()
+    known = frozenset(rows(besides, "besides", _name))
+    answer = going.answer()
+    return {**answer, "rivals": [rival for rival in answer["rivals"] if rival["smiles"] not in known]}
+
+
+def _name(value: object, field: str) -> str:
+    """A structure's name among rivals."""
+    return name_of(structure_of(value, field).smiles)
 
 
 def _begin(

@@ -1,4 +1,5 @@
 import { signal } from '@preact/signals';
+import { caseById } from './cases.js';
 import { asFault, call } from './engine.js';
 import { checkInput, stepInput } from './input.js';
 
@@ -35,6 +36,9 @@ export function huntQuestion(doc, smiles, allowed) {
 
 /** @typedef {ReturnType<typeof huntQuestion>} Question */
 
+/** The structures of a case, none of which is a look-alike to it. @param {string} id */
+export const besides = (id) => ({ besides: caseById(id)?.structures.map(({ smiles }) => smiles).filter(Boolean) ?? [] });
+
 /** @param {Question} question @returns {Hunt} */
 const fresh = (question) => ({ key: JSON.stringify(question), limit: question.limit, since: 0, stopped: false, fault: null,
   done: false, looked_at: 0, weighed: 0, structure: null, rivals: [], complete: false, note: '' });
@@ -48,7 +52,7 @@ export async function hunt(id, question) {
   note(id, { since: Date.now(), stopped: false, fault: null });
   try {
     while (running === mine && !hunts.value[id]?.done) {
-      const told = await call('hunt', { ...question, limit: hunts.value[id]?.limit });
+      const told = await call('hunt', { ...question, ...besides(id), limit: hunts.value[id]?.limit });
       if (hunts.value[id]?.key === key) note(id, told);
     }
   } catch (error) {
@@ -60,8 +64,8 @@ export async function hunt(id, question) {
 }
 
 /** The next wider search, 0 when there is none: all are found, or it is wide enough. @param {Hunt} now */
-export const wider = ({ done, complete, rivals, limit }) =>
-  (done && !complete && rivals.length >= limit ? LIMITS.find((next) => next > limit) ?? 0 : 0);
+export const wider = ({ done, complete, rivals, weighed, limit }) =>
+  (done && !complete && Math.max(weighed, rivals.length) >= limit ? LIMITS.find((next) => next > limit) ?? 0 : 0);
 
 /** Go on to more look-alikes. @param {string} id of the case @param {Question} question @param {number} limit */
 export function huntFurther(id, question, limit) {

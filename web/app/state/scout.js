@@ -4,7 +4,7 @@ import { leadAt } from '../words/verdict.js';
 import { checkingSince, current, currentCheck } from './check.js';
 import { call, engineState } from './engine.js';
 import { scouted } from './put-up.js';
-import { huntQuestion } from './rivals.js';
+import { besides, huntQuestion } from './rivals.js';
 import { path } from './route.js';
 import { wide } from './screen.js';
 
@@ -51,7 +51,7 @@ async function scout(id, question, key) {
   try {
     /** @type {Told | null} */
     let told = null;
-    while (scouting.value === key && !told?.done) told = await call('hunt', question);
+    while (scouting.value === key && !told?.done) told = await call('hunt', { ...question, ...besides(id) });
     if (told?.done) scouted.value = { ...scouted.value, [id]: { key, near: nearOf(told), weighed: told.weighed } };
   } catch {
     // Nobody has asked for it: what the chemist does next tells of any trouble.
