@@ -38,8 +38,8 @@ def hunt(
     """Go on with a hunt for about ``slice_ms`` and say how it stands.
 
     The question itself names the hunt: asked again, it goes on where the last slice ended, until ``done``; a
-    higher ``limit`` takes it further. An engine that no longer holds the hunt begins it anew. Of the structures
-    ``besides`` none is told.
+    higher ``limit`` takes it further. An engine that no longer holds the hunt begins it anew. None of the
+    structures ``besides`` is told.
     """
     wanted = integer(limit, "limit", 1, MOST)
     key = json.dumps([structure, readings, formula_known, allowed, step], sort_keys=True)
