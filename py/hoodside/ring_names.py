@@ -94,4 +94,5 @@ def _substituents() -> dict[str, str]:
 def _parents() -> tuple[tuple[str, str, str], ...]:
     """(what stands before the substituents, after them, SMILES of the group), longest first."""
     rows = sorted(load_table("ring_parents"), key=lambda row: -len(row["name"]))
-    return tuple((*row["name"].split("*"), row["group"]) for row in rows)  # type: ignore[misc]
+    halves = [(row["name"].partition("*"), row["group"]) for row in rows]
+    return tuple((before, after, group) for (before, _, after), group in halves)
