@@ -16,6 +16,8 @@ from hoodside.predict.spins.model import SpinSystem
 
 #: States in the largest block of a cluster (eight different spins), and for one that has to grow further.
 CLUSTER_STATES, MOST_STATES = 72, 260
+#: States up to which a cluster grows for the last bit of precision.
+_FINE_STATES = 130
 #: Estimated loss in Hz that a cluster should have at most, that below which it grows no further, and that
 #: which is put up with where larger clusters lose more.
 _WANTED, _ENOUGH, TOLERANCE = 5e-4, 5e-5, 5e-3
@@ -164,10 +166,10 @@ def _surrounded(
 def _best(growth: list[Cluster], states: int) -> Cluster:
     """The largest cluster of ``states`` when that will do, else the first that does, else that."""
     usual = [c for c in growth if c.states <= states] or growth[:1]
-    for most in (_WANTED, TOLERANCE):
+    for most, largest in ((_WANTED, _FINE_STATES), (TOLERANCE, MOST_STATES)):
         if usual[-1].loss <= most:
             return usual[-1]
         for cluster in growth:
-            if cluster.loss <= most:
+            if cluster.loss <= most and cluster.states <= largest:
                 return cluster
     return usual[-1]
