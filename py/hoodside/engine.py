@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import inspect
 import json
 from collections.abc import Callable
 from functools import cache
@@ -10,6 +9,7 @@ from importlib import import_module
 from typing import Any
 
 from hoodside.errors import HoodsideError, InvalidInputError
+from hoodside.methods.signature import check_arguments
 
 #: Method -> "module:function". Modules are loaded at the first call, so that the engine starts fast.
 METHODS: dict[str, str] = {
@@ -69,7 +69,7 @@ def handle(method: str, params: str) -> str:
 def call(method: str, arguments: dict[str, Any]) -> Any:
     """The result of a method, JSON-ready. Raises: what the method raises."""
     run = _method(method)
-    _check_arguments(method, run, arguments)
+    check_arguments(method, run, arguments)
     return run(**arguments)
 
 
@@ -127,29 +127,3 @@ def _method(name: str) -> Callable[..., Any]:
     module, function = METHODS[name].split(":")
     found: Callable[..., Any] = getattr(import_module(_HOME + module), function)
     return found
-
-
-@cache
-def _parameters(run: Callable[..., Any]) -> tuple[frozenset[str], frozenset[str], bool]:
-    """Names needed, names known, and whether any name will do."""
-    declared = inspect.signature(run).parameters.values()
-    free = any(p.kind is p.VAR_KEYWORD for p in declared)
-    named = [p for p in declared if p.kind is not p.VAR_KEYWORD]
-    return (
-        frozenset(p.name for p in named if p.default is p.empty),
-        frozenset(p.name for p in named),
-        free,
-    )
-
-
-def _check_arguments(method: str, run: Callable[..., Any], arguments: dict[str, Any]) -> None:
-    needed, known, free = _parameters(run)
-    for name in sorted(needed - arguments.keys()):
-        raise InvalidInputError(f"{method} needs {name!r}.", hint=f"Give {name!r}.", field=name)
-    unknown = sorted(arguments.keys() - known)
-    if unknown and not free:
-        raise InvalidInputError(
-            f"{method} takes no {unknown[0]!r}.",
-            hint=f"It takes {', '.join(sorted(known)) or 'nothing'}.",
-            field=unknown[0],
-        )

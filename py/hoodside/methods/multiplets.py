@@ -7,6 +7,7 @@ from typing import Any
 
 from hoodside.errors import InvalidInputError
 from hoodside.methods.arguments import integer
+from hoodside.methods.signature import check_arguments
 from hoodside.methods.structures import structure_of
 from hoodside.predict.spins import Trace, envelope
 from hoodside.predict.spins.contract import fit_from_json, lines_to_json, observed_line, spins_from_json
@@ -42,7 +43,10 @@ def fit(**observed: Any) -> dict[str, Any]:
 
     See ``predict.spins.contract`` for systems.
     """
-    return _structure_fit(**observed) if "smiles" in observed else fit_from_json(observed)
+    if "smiles" not in observed:
+        return fit_from_json(observed)
+    check_arguments("a fit of a structure", _structure_fit, observed)
+    return _structure_fit(**observed)
 
 
 def _structure_fit(

@@ -38,7 +38,7 @@ _PAIR = -1.0
 #: A group without signal: exchangeable H are often not listed; any other H is a gap, more so the larger.
 _MISSING_EXCHANGEABLE, _MISSING, _MISSING_PER_H = -3.0, -11.0, -1.5
 #: A list that holds this share of the H seems complete; the chance of a gap in it then.
-_SEEMS_COMPLETE, _SURELY_LISTED = 0.75, 0.002
+SEEMS_COMPLETE, _SURELY_LISTED = 0.75, 0.002
 
 
 @dataclass(frozen=True, slots=True)
@@ -129,7 +129,7 @@ def share_listed(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: 
         return 1.0
     usual = due / len(groups)
     found = fsum(usual if s.n is None else s.n for s in signals if not s.stray.name)
-    return min(found / due / _SEEMS_COMPLETE, 1.0)
+    return min(found / due / SEEMS_COMPLETE, 1.0)
 
 
 def count_weight(expected: int, printed: float | None, raw: bool) -> float:

@@ -9,7 +9,7 @@ from hoodside.readings import Readings
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.protons.assign import NOWHERE
 from hoodside.weigh.protons.pattern import Patterns, is_pair
-from hoodside.weigh.protons.score import Terms
+from hoodside.weigh.protons.score import SEEMS_COMPLETE, Terms
 from hoodside.weigh.protons.signals import prepare
 from hoodside.weigh.protons.solve import Solution, solve
 from hoodside.weigh.trust import trust
@@ -17,6 +17,9 @@ from hoodside.weigh.words import amount, atoms_of, capital, group_name, listed, 
 
 _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
 _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
+_COMMON = "common practice"
+#: Few lists of signals that are weighed lack a quarter of the H or more, decibans.
+UNFINISHED = -12.0
 #: Sets of H named one by one in a sentence.
 _NAMED = 3
 #: Further than this many deviations from a signal its sets of H are off it rather than in it.
@@ -150,6 +153,8 @@ def _stray_text(solution: Solution, k: int) -> str:
 
 
 def _missing_findings(solution: Solution) -> Iterator[Finding]:
+    if solution.scorer.listed < 1:
+        yield from _unfinished(solution)
     for g, (group, s) in enumerate(zip(solution.groups, solution.given, strict=True)):
         if s == NOWHERE:
             text = _missing_text(group)
@@ -161,6 +166,16 @@ def _missing_findings(solution: Solution) -> Iterator[Finding]:
                 group.atoms,
                 _source([group]),
             )
+
+
+def _unfinished(solution: Solution) -> Iterator[Finding]:
+    """What it costs a structure to take the list for unfinished: most lists that are weighed are whole."""
+    due = sum(g.n for g in solution.groups if not g.exchangeable)
+    placed = {s for s in solution.given if s != NOWHERE}
+    found = sum(solution.signals[s].n or 0.0 for s in placed)
+    if 0 < found < SEEMS_COMPLETE * due:
+        text = f"Only {amount(found)} of the {due} H on carbon have a signal: the list would be unfinished."
+        yield Finding("h1.missing", trust("h1.missing") * UNFINISHED, text, (), (), _COMMON)
 
 
 def _missing_text(group: ProtonGroup) -> str:
