@@ -37,6 +37,8 @@ _COUNT_FLOOR = -30.0
 _PAIR = -1.0
 #: A group without signal: exchangeable H are often not listed; any other H is a gap, more so the larger.
 _MISSING_EXCHANGEABLE, _MISSING, _MISSING_PER_H = -3.0, -11.0, -1.5
+#: From this many H on a signal is no trace of a solvent.
+MUCH = 0.75
 #: A list that holds this share of the H seems complete; the chance of a gap in it then.
 SEEMS_COMPLETE, _SURELY_LISTED = 0.75, 0.002
 
@@ -128,8 +130,13 @@ def share_listed(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: 
     if raw or not due:
         return 1.0
     usual = due / len(groups)
-    found = fsum(usual if s.n is None else s.n for s in signals if not s.stray.name)
+    found = fsum(usual if s.n is None else s.n for s in signals if not is_trace(s))
     return min(found / due / SEEMS_COMPLETE, 1.0)
+
+
+def is_trace(signal: Signal) -> bool:
+    """Whether a signal is as good as certainly a trace of something known: it has a name, and is small."""
+    return bool(signal.stray.name) and (signal.n or 0.0) < MUCH
 
 
 def count_weight(expected: int, printed: float | None, raw: bool) -> float:

@@ -9,7 +9,7 @@ from hoodside.readings import Readings
 from hoodside.weigh.finding import Finding, Leftover, Link, Weighed
 from hoodside.weigh.protons.assign import NOWHERE
 from hoodside.weigh.protons.pattern import Patterns, is_pair
-from hoodside.weigh.protons.score import SEEMS_COMPLETE, Terms
+from hoodside.weigh.protons.score import SEEMS_COMPLETE, Terms, is_trace
 from hoodside.weigh.protons.signals import prepare
 from hoodside.weigh.protons.solve import Solution, solve
 from hoodside.weigh.trust import trust
@@ -24,8 +24,6 @@ UNFINISHED = -12.0
 _NAMED = 3
 #: Further than this many deviations from a signal its sets of H are off it rather than in it.
 _OFF = 1.5
-#: From this many H on a signal is no trace of a solvent.
-_MUCH = 0.75
 
 
 def weigh_protons(groups: Sequence[ProtonGroup], patterns: Patterns, readings: Readings) -> Weighed:
@@ -146,7 +144,7 @@ def _stray_finding(solution: Solution, readings: Readings, k: int) -> Finding:
 def _stray_text(solution: Solution, k: int) -> str:
     signal = solution.signals[k]
     stray, size = signal.stray, f", {amount(signal.n)} H" if signal.n else ""
-    if stray.name and (signal.n or 0.0) < _MUCH:
+    if is_trace(signal):
         return f"δ {printed(signal)}: {stray.likely}."
     tail = f"; {stray.name} would come here, but hardly so much of it" if stray.usual else ""
     return f"δ {printed(signal)}{size}: nothing in the structure explains it{tail}."
