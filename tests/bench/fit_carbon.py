@@ -35,9 +35,10 @@ from hoodside.predict.features import atom_features  # noqa: E402
 from hoodside.predict.learned import LearnedTable  # noqa: E402
 
 ROOT = HERE.parents[2]
+#: Prior variances by family (ppm squared), chosen by cross-validation.
 PRIORS = {
-    "e0": 10.0, "e1": 60.0, "e2": 15.0, "e3": 4.0, "e4": 1.0, "e5": 0.3,
-    "s1": 1.0, "s2": 0.6, "s3": 0.25, "s4": 0.05, "p": 0.8, "q": 0.4, "o": 0.4, "n": 10.0, "u": 4.0,
+    "e0": 1.9, "e1": 33.0, "e2": 45.0, "e3": 12.0, "e4": 3.0, "e5": 0.9,
+    "s1": 1.0, "s2": 0.2, "s3": 1.4, "s4": 0.27, "p": 0.8, "q": 2.2, "o": 1.2, "n": 1.9, "u": 4.0,
 }  # fmt: skip
 NOISE = 2.0
 ROUNDS = 3

@@ -26,7 +26,11 @@ from bench.proton_cases import Compound, Row, assigned_rows, load_compounds  # n
 from bench.proton_matching import match  # noqa: E402
 from bench.ridge import fit, trust_of  # noqa: E402
 from hoodside.predict.learned import LearnedTable, in_place_of  # noqa: E402
-from hoodside.predict.proton.correction import DEGREES_OF_FREEDOM, USUAL_HALF_SPLIT  # noqa: E402
+from hoodside.predict.proton.correction import (  # noqa: E402
+    DEGREES_OF_FREEDOM,
+    USUAL_HALF_SPLIT,
+    stated_deviation,
+)
 from hoodside.predict.proton.predict import pairs_of, refinements  # noqa: E402
 
 FACTS = HERE.parents[2] / "py" / "hoodside" / "facts"
@@ -45,10 +49,10 @@ FOLDS, ROUNDS = 5, 3
 NOISE = 0.0075
 #: Prior variances by family (ppm squared), chosen by cross-validation.
 PRIORS = {
-    "e0": 0.0002, "e1": 0.0033, "e2": 0.0070, "e3": 0.0043, "e4": 0.0014, "s1": 0.0012, "s2": 0.0006,
-    "s3": 0.00003, "s4": 0.0003, "s5": 0.0003, "t": 0.0010, "a": 0.0012, "b": 0.0025,
-    "p": 0.0013, "q": 0.0004, "o": 0.0004, "c": 0.0011, "u": 0.0027, "w": 0.0010, "x": 0.0001,
-    "g": 0.0040, "y": 0.0003, "z": 0.0012, "k": 0.0010, "v": 0.0015,
+    "e0": 0.0002, "e1": 0.0033, "e2": 0.0070, "e3": 0.0077, "e4": 0.0025, "s1": 0.0065, "s2": 0.0006,
+    "s3": 0.00016, "s4": 0.0005, "s5": 0.0009, "t": 0.0006, "a": 0.0022, "b": 0.0045, "p": 0.0039,
+    "q": 0.0004, "o": 0.0004, "c": 0.0033, "u": 0.0080, "w": 0.0030, "x": 0.0001, "g": 0.0120,
+    "y": 0.0016, "z": 0.0036, "k": 0.0010, "v": 0.0027, "r": 0.0200,
 }  # fmt: skip
 SPLIT_PRIORS = {
     "e0": 0.001, "e1": 0.004, "e2": 0.004, "e3": 0.004, "a": 0.003, "b": 0.001, "k": 0.002, "s2": 0.0005,
@@ -193,7 +197,7 @@ def scale_table(errors: Sequence[Error]) -> dict[str, tuple[float, int]]:
     """Observed over stated error by class of hydrogen and "any", drawn towards "any" where cases are few."""
     ratios: dict[str, list[float]] = {}
     for e in errors:
-        ratios.setdefault(e.environment, []).append(abs(e.error) / e.variance**0.5)
+        ratios.setdefault(e.environment, []).append(abs(e.error) / stated_deviation(e.variance))
     every = scale_of([r for members in ratios.values() for r in members])
     found = {"any": (every, len(errors))}
     for name, members in sorted(ratios.items()):
@@ -204,7 +208,7 @@ def scale_table(errors: Sequence[Error]) -> dict[str, tuple[float, int]]:
 
 def stated_sd(error: Error, scales: dict[str, tuple[float, int]]) -> float:
     """The deviation that goes with a prediction, ppm."""
-    return float(scales.get(error.environment, scales["any"])[0] * error.variance**0.5)
+    return scales.get(error.environment, scales["any"])[0] * stated_deviation(error.variance)
 
 
 def write_scales(errors: Sequence[Error], path: Path) -> None:

@@ -19,6 +19,9 @@ from hoodside.predict.model import Term
 DEGREES_OF_FREEDOM = 3.0
 #: ppm: half the distance between diastereotopic H where nothing more is known.
 USUAL_HALF_SPLIT = 0.05
+#: The variance of the fit takes features as independent, which blurs the difference between the familiar and
+#: the unfamiliar: observed errors go with this power of it (cross-validation), equal at so many ppm.
+_CONTRAST, _USUAL_SD = 1.7, 0.12
 _SOURCE = "ridge fit to published spectra (facts/proton_learned.csv)"
 _SPLIT_SOURCE = "ridge fit to published spectra (facts/proton_splits.csv)"
 
@@ -41,7 +44,12 @@ def refine(features: Mapping[str, float], environment: str) -> Refinement:
     found = learned_table("proton_learned").correct(features)
     scale = _scales().get(environment, _scales()["any"])
     term = Term(_evidence(found.cases, found.radius), found.delta, _SOURCE)
-    return Refinement((term,), scale * float(found.variance**0.5))
+    return Refinement((term,), scale * stated_deviation(found.variance))
+
+
+def stated_deviation(variance: float) -> float:
+    """Deviation that goes with a variance of the fit (ppm squared), before calibration by class, ppm."""
+    return float(_USUAL_SD * (variance / _USUAL_SD**2) ** (_CONTRAST / 2))
 
 
 def set_apart(first: float, second: float, features: Mapping[str, float]) -> tuple[Term, Term]:

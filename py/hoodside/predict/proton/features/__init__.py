@@ -6,7 +6,7 @@ pair of a group on the carbon and one beside it, ``p`` group at a position of an
 same by kind of group, ``o`` pair of positions, ``c`` group with neighbours that crowd it, ``u`` what crowds
 a group on its own side, ``y`` position across a double bond next to the carbon, ``z`` position on an
 aromatic ring next to the carbon, ``x`` the same one atom further on, ``w`` groups cis or trans on a ring,
-``k`` ring, ``v`` solvent.
+``k`` ring, ``v`` solvent, ``r`` group on the next ring that faces the H (peri).
 """
 
 from __future__ import annotations

@@ -107,8 +107,13 @@ def _other_rings(view: View, atom: int) -> Iterator[str]:
         if atom in ring or not own & set(ring) or not all(structure.atoms[a].aromatic for a in ring):
             continue
         distances = structure.distances_from(atom)
+        joints = [a for a in structure.neighbours[atom] if a in ring]
         for member in ring:
+            faces = any(joint in structure.neighbours[member] for joint in joints)
             for near in structure.neighbours[member]:
                 if near not in ring and near not in own and not structure.atoms[near].aromatic:
                     yield f"z{distances[near]} fused {view.substituent(member, near).kind}"
                     yield f"z{distances[near]} fused {view.substituent(member, near).key}"
+                    if faces:  # across the bay: the group and the H stand on one side, as at C1 and C8
+                        yield f"r{len(ring)} {view.substituent(member, near).kind}"
+                        yield f"r{len(ring)} {view.substituent(member, near).key}"
