@@ -22,8 +22,8 @@ USUAL_HALF_SPLIT = 0.05
 #: The variance of the fit takes features as independent, which blurs the difference between the familiar and
 #: the unfamiliar: observed errors go with this power of it (cross-validation), equal at so many ppm.
 _CONTRAST, _USUAL_SD = 1.7, 0.12
-_SOURCE = "ridge fit to published spectra (facts/proton_learned.csv)"
-_SPLIT_SOURCE = "ridge fit to published spectra (facts/proton_splits.csv)"
+_SOURCE = "ridge fit to published and recalled spectra (facts/proton_learned.csv)"
+_SPLIT_SOURCE = "ridge fit to published and recalled spectra (facts/proton_splits.csv)"
 
 
 @dataclass(frozen=True, slots=True)
