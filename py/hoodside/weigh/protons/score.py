@@ -35,6 +35,9 @@ _MISCOUNTED = 0.05
 _COUNT_FLOOR = -30.0
 #: The two H of one CH2 in one signal, decibans beside the place of one of them.
 _PAIR = -1.0
+#: Groups of one environment expected this near each other (ppm) are off together: all but the best placed
+#: cost at most this much each, decibans. A long chain off by a little would sink a right structure else.
+_CLOSE, _OF_ONE_KIN = 0.06, -4.0
 #: A group without signal: exchangeable H are often not listed; any other H is a gap, more so the larger.
 _MISSING_EXCHANGEABLE, _MISSING, _MISSING_PER_H = -3.0, -11.0, -1.5
 #: From this many H on a signal is no trace of a solvent.
@@ -67,6 +70,7 @@ class Scorer:
     raw: bool
     listed: float  # how complete the list of signals seems, 0 to 1
     places: Sequence[Sequence[float]]
+    kin: Sequence[int]  # groups of one kind expected at one place have one number
 
     @classmethod
     def of(
@@ -74,7 +78,7 @@ class Scorer:
     ) -> Scorer:
         """Prepare the places of every group in every signal."""
         places = [[_place(g, s) for s in signals] for g in groups]
-        return cls(groups, patterns, signals, raw, share_listed(groups, signals, raw), places)
+        return cls(groups, patterns, signals, raw, share_listed(groups, signals, raw), places, _kin(groups))
 
     def missing(self, group: int) -> float:
         """Weight of a group that no signal shows."""
@@ -96,21 +100,42 @@ class Scorer:
         )
 
     def _place(self, signal: int, members: tuple[int, ...]) -> float:
-        total, pairs = 0.0, set()
+        if len(members) == 1:
+            return self.places[members[0]][signal]
+        best: dict[int, float] = {}  # by kin: those share their errors
+        price, pairs = 0.0, set()
         for m in members:
-            twin = self._twin(m, members)
-            if twin is None:
-                total += self.places[m][signal]
-            elif twin not in pairs:
+            place, twin = self.places[m][signal], self._twin(m, members)
+            if twin in pairs:
+                continue
+            if twin is not None:
                 pairs.add(m)
-                total += max(self.places[m][signal], self.places[twin][signal]) + _PAIR
-        return total
+                place = max(place, self.places[twin][signal])
+                price += _PAIR
+            kin = self.kin[m]
+            if kin in best:
+                price += max(min(place, best[kin]), _OF_ONE_KIN)
+                place = max(place, best[kin])
+            best[kin] = place
+        return fsum(best.values()) + price
 
     def _twin(self, m: int, members: tuple[int, ...]) -> int | None:
         group = self.groups[m]
         if group.equivalence != "diastereotopic":
             return None
         return next((k for k in members if k != m and self.groups[k].atoms == group.atoms), None)
+
+
+def _kin(groups: Sequence[ProtonGroup]) -> tuple[int, ...]:
+    """A number per group, the same for groups of one environment whose places follow each other closely."""
+    kin = list(range(len(groups)))
+    last: dict[str, int] = {}
+    for g in sorted(range(len(groups)), key=lambda g: groups[g].ppm):
+        before = last.get(groups[g].environment)
+        if before is not None and groups[g].ppm - groups[before].ppm <= _CLOSE:
+            kin[g] = kin[before]
+        last[groups[g].environment] = g
+    return tuple(kin)
 
 
 def missing_weight(group: ProtonGroup, listed: float) -> float:
