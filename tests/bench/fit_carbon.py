@@ -37,8 +37,8 @@ from hoodside.predict.learned import LearnedTable  # noqa: E402
 ROOT = HERE.parents[2]
 #: Prior variances by family (ppm squared), chosen by cross-validation.
 PRIORS = {
-    "e0": 1.9, "e1": 33.0, "e2": 45.0, "e3": 12.0, "e4": 3.0, "e5": 0.9,
-    "s1": 1.0, "s2": 0.2, "s3": 1.4, "s4": 0.27, "p": 0.8, "q": 2.2, "o": 1.2, "n": 1.9, "u": 4.0,
+    "e0": 0.5, "e1": 60.0, "e2": 30.0, "e3": 8.0, "e4": 2.0, "e5": 0.6,
+    "s1": 1.0, "s2": 0.6, "s3": 0.5, "s4": 0.1, "p": 0.8, "q": 0.8, "o": 0.8, "n": 10.0, "u": 4.0,
 }  # fmt: skip
 NOISE = 2.0
 ROUNDS = 3
