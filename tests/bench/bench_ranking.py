@@ -84,18 +84,33 @@ def share_table(found: Sequence[Outcome]) -> None:
 
 
 def lost_table(found: Sequence[Outcome], most: int = 60) -> None:
-    """Truths that did not come first."""
+    """Truths that did not come first, with the reading that should have decided and the one that misled."""
     rows = []
     for o in found:
         if not o.first():
             best = max(range(1, len(o.weights)), key=o.weights.__getitem__)
             kind = "in space" if best in o.case.stereo else "constitution"
-            rows.append(
-                (o.weights[0] - o.weights[best], o.case.id, kind, o.case.structures[best].structure.source)
-            )
+            source = o.case.structures[best].structure.source
+            rows.append((o.weights[0] - o.weights[best], o.case.id, kind, source, telling(o, best)))
     print(f"  not first: {len(rows)}")
-    for gap, name, kind, smiles in sorted(rows)[:most]:
+    for gap, name, kind, smiles, (decides, misleads) in sorted(rows)[:most]:
         print(f"  {gap:6.1f} dB  {kind:12} {name}: {smiles}")
+        print(f"             should have decided: {decides}; misled: {misleads}")
+
+
+def telling(outcome: Outcome, rival: int) -> tuple[str, str]:
+    """The readings that speak most for the truth and most for a rival, with the decibans between the two."""
+    gaps: dict[str, float] = {}
+    for sign, tally in ((1.0, outcome.tallies[0]), (-1.0, outcome.tallies[rival])):
+        for finding in tally.findings:
+            where = " ".join(finding.readings) or f"{finding.kind} (not seen)"
+            gaps[where] = gaps.get(where, 0.0) + sign * finding.weight_db
+    named = sorted((gap, where) for where, gap in gaps.items() if abs(gap) >= 0.1)
+    best, worst = (named[-1], named[0]) if named else ((0.0, "nothing"), (0.0, "nothing"))
+    return (
+        f"{best[1]} ({best[0]:+.1f})" if best[0] > 0 else "no reading taken",
+        f"{worst[1]} ({worst[0]:+.1f})" if worst[0] < 0 else "none",
+    )
 
 
 def fewer_readings_table(cases: Sequence[Case]) -> None:
