@@ -75,9 +75,7 @@ def _peaks(pair: Pair, readings: Readings) -> Gain:
         best = max(own, key=lambda e: e.weight, default=None)
         if best is not None and best.weight > 0.4:
             told.append(f"m/z {best.mz:.0f}: {name} ({best.label}).")
-    return Gain(
-        weight, "They should break up differently." if told else "Fragments differ little.", tuple(told)
-    )
+    return Gain(weight, _DIFFER if told else "Fragments differ little.", tuple(told))
 
 
 def _isotopes(pair: Pair) -> Gain:

@@ -29,8 +29,6 @@ _NOE_SEEN, _NOE_FALSE = 0.85, 0.1
 _SELECTIVE, _NOE_CROWDED = 0.15, 0.5
 _DMSO, _HIGH_FIELD = "DMSO-d6", 600.0
 _LOW_FIELD = 450.0
-#: Differences in shift named in words, ppm.
-_NAMED_GAP = 4.0
 
 
 def nmr_measurements(readings: Readings) -> list[Measurement]:

@@ -3,9 +3,8 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
-from math import atan, fsum, log, log10, pi, sqrt
+from math import atan, fsum, log10, pi, sqrt
 
-_PER_NAT = 10 / log(10)
 _ROOT_3 = sqrt(3)
 
 
@@ -24,11 +23,6 @@ def joined(weights: Iterable[float]) -> float:
     listed = list(weights)
     top = max(listed)
     return top + decibans(fsum(odds(w - top) for w in listed))
-
-
-def from_nats(nats: float) -> float:
-    """Natural logarithm of a ratio to decibans."""
-    return nats * _PER_NAT
 
 
 def t_density(x: float) -> float:

@@ -46,11 +46,6 @@ def amount(n: float | None) -> str:
     return "?" if n is None else f"{n:.1f}".removesuffix(".0")
 
 
-def joules(j: Sequence[float]) -> str:
-    """ ", J = 8.2, 1.4 Hz", or nothing."""
-    return f", J = {', '.join(f'{hz:g}' for hz in j)} Hz" if j else ""
-
-
 def group_name(group: ProtonGroup) -> str:
     """What the H are, such as "CH on aryl"."""
     return group.environment or "H"

@@ -26,10 +26,8 @@ _QUATERNARY = re.compile(r"C\s?q|C[IV]{1,2}|quat(?:ernary)?\.?|C=O|CO2?H?|COO[HR
 #: Off-resonance or DEPT letters: the multiplicity of a carbon by its hydrogens.
 _LETTERS = {"s": "C", "d": "CH", "t": "CH2", "q": "CH3"}
 _BARE_KIND = re.compile(r"\s?(?P<kind>CH3|CH2|CH|Cq|C)(?![A-Za-z0-9=(\-])")
-_CF = re.compile(r"(?P<mult>d|dd|t|q|qd|dt|m|td|quint|sept|ddd)?")
 _WORD = re.compile(r"[^\s,;()\[\]]+")
 _MOST_PROSE = 3
-_INTEGER_ONLY = re.compile(r"-?\d{1,3}")
 
 
 def read_carbons(plain: str, start: int, end: int, into: Gathered) -> None:

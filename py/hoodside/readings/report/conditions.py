@@ -36,7 +36,6 @@ _MEDIA = (
 )
 # A bracket that holds one of these is the content of a list, not a condition.
 _CONTENT = re.compile(r"\bJ\b|\d\s?H\b|^\(\s?(?:br\.?\s|app\.?\s)?[sdtqm]{1,4}\s?[,;)]", re.MULTILINE)
-_LOOK_AHEAD = 400
 
 
 @dataclass(frozen=True, slots=True)

@@ -41,7 +41,7 @@ _CLOSE, _OF_ONE_KIN = 0.06, -4.0
 #: A group without signal: exchangeable H are often not listed; any other H is a gap, more so the larger.
 _MISSING_EXCHANGEABLE, _MISSING, _MISSING_PER_H = -3.0, -11.0, -1.5
 #: From this many H on a signal is no trace of a solvent.
-MUCH = 0.75
+_MUCH = 0.75
 #: A list that holds this share of the H seems complete; the chance of a gap in it then.
 SEEMS_COMPLETE, _SURELY_LISTED = 0.75, 0.002
 
@@ -161,7 +161,7 @@ def share_listed(groups: Sequence[ProtonGroup], signals: Sequence[Signal], raw: 
 
 def is_trace(signal: Signal) -> bool:
     """Whether a signal is as good as certainly a trace of something known: it has a name, and is small."""
-    return bool(signal.stray.name) and (signal.n or 0.0) < MUCH
+    return bool(signal.stray.name) and (signal.n or 0.0) < _MUCH
 
 
 def count_weight(expected: int, printed: float | None, raw: bool) -> float:

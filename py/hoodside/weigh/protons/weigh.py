@@ -19,7 +19,7 @@ _COUNTED = "counted over published spectra (facts/multiplicity_confusion.csv)"
 _STRAY_SOURCE = "Gottlieb et al. 1997; Fulmer et al. 2010 (facts/impurities.csv)"
 _COMMON = "common practice"
 #: Few lists of signals that are weighed lack a quarter of the H or more, decibans.
-UNFINISHED = -12.0
+_UNFINISHED = -12.0
 #: Sets of H named one by one in a sentence.
 _NAMED = 3
 #: Further than this many deviations from a signal its sets of H are off it rather than in it.
@@ -87,7 +87,7 @@ def _place_text(solution: Solution, k: int, held: list[ProtonGroup]) -> str:
         )
     named = listed([f"{group_name(g)} at {g.ppm:.2f} ± {g.sd:.2f}" for g in held[:_NAMED]])
     more = f", {len(held) - _NAMED} more sets of H" if len(held) > _NAMED else ""
-    if all(min(abs(signal.lo - g.ppm), abs(signal.hi - g.ppm)) > _OFF * g.sd for g in held):
+    if all(max(signal.lo - g.ppm, g.ppm - signal.hi) > _OFF * g.sd for g in held):
         return f"δ {printed(signal)}: no H is expected just here; nearest are {named}{more}."
     return f"δ {printed(signal)}: {len(held)} sets of H would overlap here: {named}{more}."
 
@@ -168,12 +168,11 @@ def _missing_findings(solution: Solution) -> Iterator[Finding]:
 
 def _unfinished(solution: Solution) -> Iterator[Finding]:
     """What it costs a structure to take the list for unfinished: most lists that are weighed are whole."""
-    due = sum(g.n for g in solution.groups if not g.exchangeable)
-    placed = {s for s in solution.given if s != NOWHERE}
-    found = sum(solution.signals[s].n or 0.0 for s in placed)
+    fixed = [(g.n, s) for g, s in zip(solution.groups, solution.given, strict=True) if not g.exchangeable]
+    due, found = sum(n for n, _ in fixed), sum(n for n, s in fixed if s != NOWHERE)
     if 0 < found < SEEMS_COMPLETE * due:
-        text = f"Only {amount(found)} of the {due} H on carbon have a signal: the list would be unfinished."
-        yield Finding("h1.missing", trust("h1.missing") * UNFINISHED, text, (), (), _COMMON)
+        text = f"Only {found} of the {due} H on carbon have a signal: the list would be unfinished."
+        yield Finding("h1.missing", trust("h1.missing") * _UNFINISHED, text, (), (), _COMMON)
 
 
 def _missing_text(group: ProtonGroup) -> str:
