@@ -128,8 +128,8 @@ def run() -> None:
     alike = sum(c.right_at(USUAL) or c.printed in c.readable for c in every)
     errors = [e for c in every for e in c.j_errors()]
     print(f"1H patterns: {len(every)} definite ones in {len(found)} reports")
-    print(f"  as predict names them                            {usual / len(every):.1%}")
-    print(f"  at the resolution of the report's other signals  {at_print / len(every):.1%}   (at least 88 %)")
+    print(f"  as predict names them                            {usual / len(every):.1%}   (88 % asked)")
+    print(f"  at the resolution of the report's other signals  {at_print / len(every):.1%}")
     print(f"  at some resolution                               {alike / len(every):.1%}")
     print(f"  J mean absolute error {sum(errors) / len(errors):.2f} Hz over {len(errors)}   (at most 0.9)")
     confused = Counter((c.printed, c.patterns[USUAL][-1][0]) for c in every if not c.right_at(USUAL))
